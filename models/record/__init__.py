@@ -1,0 +1,1 @@
+"""What happened, kept for good; SQLAlchemy lives here and nowhere else."""

@@ -1,0 +1,1 @@
+"""Judgements on plain facts."""

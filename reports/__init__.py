@@ -1,0 +1,1 @@
+"""Paper, drawings and exports."""
