@@ -1,0 +1,1 @@
+"""The house keeps itself: floors, docstrings, documents."""

@@ -1,0 +1,1 @@
+"""Numbers from outside the code, as printed, each with its source."""
