@@ -1,0 +1,10 @@
+"""The frozen job: its plan, its entries, and nothing that computes.
+
+Everything that judges, draws or prints a job starts from these types. They hold numbers as typed
+(`models.units`), never bare floats, except where a setting has no unit.
+"""
+
+from models.job.base import *  # noqa: F403
+from models.job.entries import *  # noqa: F403
+from models.job.job import *  # noqa: F403
+from models.job.plan import *  # noqa: F403
