@@ -127,8 +127,8 @@ def target_temperature(
     Notes
     -----
     Solved step by step because the coefficient rises with temperature. The search limit is no
-    permission: `heat_limits.highest_temperature` says how hot the part may be. Published coefficients of one
-    steel differ by ± 8 %, hence the spread.
+    permission: `heat_limits.highest_temperature` says how hot the part may be. Published
+    coefficients of one steel differ by ± 8 %, hence the spread.
 
     Examples
     --------
