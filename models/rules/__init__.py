@@ -1,1 +1,20 @@
-"""Judgements on plain facts."""
+"""Judgements on plain facts: every rule, in the order people read them."""
+
+from models.rules import fit, heat, mount, people, runout, sizes
+from models.rules.rule import Rule
+
+__all__ = ["ALL_RULES", "rule"]
+
+ALL_RULES: tuple[Rule, ...] = (
+    *sizes.RULES,
+    *fit.RULES,
+    *heat.RULES,
+    *mount.RULES,
+    *runout.RULES,
+    *people.RULES,
+)
+
+
+def rule(rule_id: str) -> Rule:
+    """Find a rule by its id."""
+    return next(one for one in ALL_RULES if one.id == rule_id)

@@ -1,0 +1,69 @@
+"""Judgements on who did what, and in which order."""
+
+from models.rules.facts import OrderFacts, PeopleFacts
+from models.rules.rule import Judgement, Rule, Verdict
+
+__all__ = ["RULES"]
+
+
+def performer_is_not_inspector(
+    *, performers: tuple[str, ...], inspectors: tuple[str, ...]
+) -> Judgement:
+    """Refuse an inspection by whoever performed the step."""
+    both = [name for name in inspectors if name in performers]
+    if both:
+        return Judgement(
+            Verdict.OUTSIDE,
+            f"{', '.join(both)} performed this step and cannot inspect it. Somebody else inspects.",
+        )
+    return Judgement(
+        Verdict.WITHIN, f"Performed by {', '.join(performers)}, inspected by {_or(inspectors)}."
+    )
+
+
+def points_are_signed(*, points_due: tuple[str, ...], points_open: tuple[str, ...]) -> Judgement:
+    """Ask for the signatures that the plan calls for before work goes past a step."""
+    if points_open:
+        return Judgement(Verdict.NOT_JUDGED, f"Waits for {'; '.join(points_open)}.")
+    return Judgement(
+        Verdict.WITHIN, f"Signed: {'; '.join(points_due)}." if points_due else "No point here."
+    )
+
+
+def entry_is_in_order(*, entry: str, out_of_order: str) -> Judgement:
+    """Hold every entry that was taken out of order for an inspector to look at."""
+    if not out_of_order:
+        return Judgement(Verdict.WITHIN, f"{entry} taken in its order.")
+    return Judgement(
+        Verdict.CANNOT_TELL,
+        f"{entry} taken out of order: “{out_of_order}”. An inspector looks at it.",
+    )
+
+
+def _or(names: tuple[str, ...]) -> str:
+    return ", ".join(names) if names else "nobody yet"
+
+
+RULES = (
+    Rule(
+        id="performer-not-inspector",
+        statement="Whoever performed a step does not inspect it.",
+        source="common practice: separation of doing and checking",
+        facts=PeopleFacts,
+        judge=performer_is_not_inspector,
+    ),
+    Rule(
+        id="points-signed",
+        statement="Whoever the plan wants present has signed before work goes past the step.",
+        source="the plan's points",
+        facts=PeopleFacts,
+        judge=points_are_signed,
+    ),
+    Rule(
+        id="in-order",
+        statement="Entries are taken in the order of the work.",
+        source="common practice",
+        facts=OrderFacts,
+        judge=entry_is_in_order,
+    ),
+)
