@@ -194,7 +194,7 @@ class WarmSide(NamedTuple):
 
 # Expansion 11.5e-6 per kelvin.
 WARM_SIDES = [
-    WarmSide("by hand: αΔT·L²/(8D)", 2.000, 0.200, 1.0, "28.8", "57.5"),
+    WarmSide("by hand: αΔT·L²/(8D)", 2.000, 0.200, 1.0, "28.75", "57.5"),
     WarmSide("by hand: αΔT·L²/(8D)", 1.500, 0.150, 1.0, "21.6", "43"),
     WarmSide("by hand: αΔT·L²/(8D)", 2.500, 0.250, 2.0, "71.9", "144"),
 ]
