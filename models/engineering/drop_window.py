@@ -1,5 +1,6 @@
 """How long a hot part stays open: carried through the room, and over its seat."""
 
+import math
 from dataclasses import dataclass
 
 from models.engineering.cooling import HotPart, TimeRange, heat_loss_in_air, time_in_air
@@ -107,18 +108,24 @@ def drop_window(
     ----------
     Y. A. Çengel, Heat and Mass Transfer, lumped body below a Biot number of 0.1.
     """
-    clearance_now = opening(
-        bore_diameter=part.bore_diameter,
-        seat_diameter=seat.diameter,
-        mean_bore_temperature=bore_temperature,
-        shaft_temperature=seat.temperature,
-        part_expansion=part_expansion,
-        shaft_expansion=seat.expansion,
-    )
     if not least_clearance >= 0.0:
         raise OutOfRangeError("least_clearance", least_clearance, "not be negative")
+
+    def clearance(temperature: float) -> float:
+        return opening(
+            bore_diameter=part.bore_diameter,
+            seat_diameter=seat.diameter,
+            mean_bore_temperature=temperature,
+            shaft_temperature=seat.temperature,
+            part_expansion=part_expansion,
+            shaft_expansion=seat.expansion,
+        )
+
+    clearance_now = clearance(bore_temperature)
     in_air = over_seat = TimeRange(least=0.0, greatest=0.0)
-    if clearance_now > least_clearance:
+    if clearance_now > least_clearance and clearance(air_temperature) >= least_clearance:
+        in_air = TimeRange(least=math.inf, greatest=math.inf)
+    elif clearance_now > least_clearance:
         in_air = time_in_air(
             part=part,
             start_temperature=bore_temperature,

@@ -15,6 +15,7 @@ __all__ = ["Seat", "time_over_seat"]
 _STEPS = 120
 # Conduction has nearly stopped when bore and seat are this close; they will not meet any more.
 _LEVEL = 0.5
+_ROUNDING = 1e-9
 
 
 @dataclass(frozen=True, kw_only=True)
@@ -205,7 +206,8 @@ def _time_to_close(
         if left <= 0.0:
             return time + seconds * gap / (gap - left)
         hot, shaft, time, gap = hot - step, shaft + warmer, time + seconds, left
-    return time
+    # A slip part is still open when it is as cold as sizes are stated; rounding is not open.
+    return math.inf if gap > _ROUNDING else time
 
 
 def _runge_kutta(
