@@ -18,6 +18,7 @@ __all__ = [
     "MountFacts",
     "OrderFacts",
     "PeopleFacts",
+    "ProgressFacts",
     "SizeFacts",
     "StationFacts",
     "SurveyFacts",
@@ -182,3 +183,12 @@ class OrderFacts:
     units: UnitSet = metric_set
     entry: str | None = known("the entry")
     out_of_order: str | None = known("why it was taken out of order")
+
+
+@dataclass(frozen=True, kw_only=True)
+class ProgressFacts:
+    """How far the build is."""
+
+    units: UnitSet = metric_set
+    steps_due: int | None = known("the steps of the plan")
+    steps_waiting: tuple[str, ...] | None = known("the steps that wait")

@@ -1,6 +1,6 @@
 """Judgements on who did what, and in which order."""
 
-from models.rules.facts import OrderFacts, PeopleFacts
+from models.rules.facts import OrderFacts, PeopleFacts, ProgressFacts
 from models.rules.rule import Judgement, Rule, Verdict
 
 __all__ = ["RULES"]
@@ -40,6 +40,17 @@ def entry_is_in_order(*, entry: str, out_of_order: str) -> Judgement:
     )
 
 
+def every_step_is_settled(*, steps_due: int, steps_waiting: tuple[str, ...]) -> Judgement:
+    """Say whether the build is done."""
+    if steps_waiting:
+        return Judgement(
+            Verdict.NOT_JUDGED,
+            f"Not judged yet: {len(steps_waiting)} of {steps_due} steps are not settled, "
+            f"{steps_waiting[0]} is next.",
+        )
+    return Judgement(Verdict.WITHIN, f"All {steps_due} steps are settled.")
+
+
 def _or(names: tuple[str, ...]) -> str:
     return ", ".join(names) if names else "nobody yet"
 
@@ -65,5 +76,12 @@ RULES = (
         source="common practice",
         facts=OrderFacts,
         judge=entry_is_in_order,
+    ),
+    Rule(
+        id="every-step-settled",
+        statement="Every step of the plan is settled.",
+        source="the plan",
+        facts=ProgressFacts,
+        judge=every_step_is_settled,
     ),
 )

@@ -1,0 +1,24 @@
+"""Where jobs and rules meet: one frozen Job, from the record or a file, to facts to findings."""
+
+from models.assess.attempts import Attempt, ItemView, finding_key
+from models.assess.build import Assessment, Standing, assess, live_entries
+from models.assess.heat import Heat, land_gauge
+from models.assess.runout import StationChange, StationRunout, SurveyRunout
+from models.assess.sizes import LandFit, Sizes
+
+__all__ = [
+    "Assessment",
+    "Attempt",
+    "Heat",
+    "ItemView",
+    "LandFit",
+    "Sizes",
+    "Standing",
+    "StationChange",
+    "StationRunout",
+    "SurveyRunout",
+    "assess",
+    "finding_key",
+    "land_gauge",
+    "live_entries",
+]

@@ -1,0 +1,282 @@
+"""A whole job, worked out and judged: attempts, findings, and how far the build is."""
+
+from collections.abc import Iterable, Sequence
+from dataclasses import dataclass
+
+from models.assess.attempts import (
+    Attempt,
+    assess_attempt,
+    finding_key,
+    points_open,
+)
+from models.assess.runout import SurveyRunout, read_survey
+from models.job import (
+    AnyEntry,
+    AttemptOpened,
+    Decision,
+    Job,
+    RunoutSurvey,
+    SizeSurvey,
+)
+from models.rules import rule
+from models.rules.facts import FinalFacts, ProgressFacts
+from models.rules.progress import (
+    AttemptProgress,
+    BuildProgress,
+    ItemProgress,
+    NextAct,
+    next_act,
+)
+from models.rules.rule import Finding, Subject, Verdict
+from models.units import unit_set
+
+__all__ = ["Assessment", "Standing", "assess", "live_entries"]
+
+
+@dataclass(frozen=True)
+class Standing:
+    """A finding and, where a removal or a person's decision has answered it, by what."""
+
+    finding: Finding
+    answered_by: str | None = None
+
+
+@dataclass(frozen=True, eq=False)
+class Assessment:
+    """Everything that is worked out from a job."""
+
+    job: Job
+    bare_shaft: SurveyRunout | None
+    surveys: dict[str, SurveyRunout]
+    attempts: tuple[Attempt, ...]
+    findings: tuple[Standing, ...]
+    progress: BuildProgress
+    next: NextAct
+
+    def attempts_at(self, step: str) -> tuple[Attempt, ...]:
+        """Select the attempts at a step."""
+        return tuple(one for one in self.attempts if one.step.key == step)
+
+    def attempt(self, step: str, number: int) -> Attempt | None:
+        """Find one attempt."""
+        return next((one for one in self.attempts_at(step) if one.number == number), None)
+
+    @property
+    def verdict(self) -> Verdict:
+        """The worst verdict that nothing has answered."""
+        return Verdict.worst(
+            [one.finding.verdict for one in self.findings if one.answered_by is None]
+        )
+
+    @property
+    def last_accepted_survey(self) -> SurveyRunout | None:
+        """The survey the next attempt is judged against."""
+        for attempt in reversed(self.attempts):
+            stands = attempt.settled is not None and attempt.settled.outcome != "removed"
+            if stands and attempt.judged is not None:
+                return attempt.judged
+        return self.bare_shaft
+
+
+def live_entries(job: Job) -> tuple[AnyEntry, ...]:
+    """List the entries that no later entry replaces."""
+    replaced = {one.supersedes for one in job.entries if one.supersedes is not None}
+    return tuple(one for one in job.entries if one.id not in replaced)
+
+
+def assess(job: Job) -> Assessment:
+    """Work out and judge a whole job."""
+    entries = live_entries(job)
+    surveys = {one.id: read_survey(job, one) for one in entries if isinstance(one, RunoutSurvey)}
+    bare = [
+        surveys[one.id]
+        for one in entries
+        if isinstance(one, RunoutSurvey) and one.purpose == "bare shaft" and one.is_closed
+    ]
+    bare_shaft = bare[-1] if bare else None
+    attempts = tuple(_attempts(job, entries, surveys, bare_shaft))
+    findings = tuple(_standing(attempts, _final_findings(job, attempts)))
+    progress = _progress(job, entries, attempts, bare_shaft)
+    return Assessment(
+        job=job,
+        bare_shaft=bare_shaft,
+        surveys=surveys,
+        attempts=attempts,
+        findings=findings,
+        progress=progress,
+        next=next_act(progress),
+    )
+
+
+def _attempts(
+    job: Job,
+    entries: Sequence[AnyEntry],
+    surveys: dict[str, SurveyRunout],
+    bare_shaft: SurveyRunout | None,
+) -> Iterable[Attempt]:
+    opened = [one for one in entries if isinstance(one, AttemptOpened)]
+    earlier = [
+        one for one in entries if isinstance(one, SizeSurvey) and one.place.kind != "attempt"
+    ]
+    for one in opened:
+        mine = [entry for entry in entries if entry.place == one.place]
+        yield assess_attempt(job, one, mine, earlier, surveys, bare_shaft)
+
+
+def _standing(attempts: Sequence[Attempt], final: Iterable[Finding]) -> Iterable[Standing]:
+    for attempt in attempts:
+        came_off = attempt.settled is not None and attempt.settled.outcome == "removed"
+        for finding in attempt.findings:
+            yield Standing(finding, _answer(attempt, finding, came_off))
+    for finding in final:
+        yield Standing(finding)
+
+
+def _answer(attempt: Attempt, finding: Finding, came_off: bool) -> str | None:
+    if finding.verdict is Verdict.WITHIN:
+        return None
+    decided: list[Decision] = [
+        one for one in attempt.decisions if one.about == finding_key(finding)
+    ]
+    if decided:
+        return f"{decided[-1].disposition}: {decided[-1].words}"
+    # What the shaft kept is not answered by the part's coming off.
+    if came_off and finding.rule.id != "seat-came-back":
+        return f"attempt {attempt.number} came off"
+    return None
+
+
+def _final_findings(job: Job, attempts: Sequence[Attempt]) -> Iterable[Finding]:
+    settled = {
+        one.step.key
+        for one in attempts
+        if one.settled is not None and one.settled.outcome != "removed"
+    }
+    waiting = tuple(step.title for step in job.plan.steps if step.key not in settled)
+    yield rule("every-step-settled").apply(
+        ProgressFacts(steps_due=len(job.plan.steps), steps_waiting=waiting), Subject()
+    )
+    if waiting:
+        return
+    last = next((one.judged for one in reversed(attempts) if one.judged is not None), None)
+    for station in job.plan.stations_in_reach(job.plan.steps[-1].key):
+        if station.final_limit is None:
+            continue
+        read = last.station(station.key) if last is not None else None
+        vector = last.corrected(station.key) if last is not None else None
+        journal = station.key in (job.plan.first_journal, job.plan.second_journal)
+        tir = None
+        if read is not None and read.is_read and (journal or vector is None):
+            tir = read.fit.out_of_roundness if read.fit is not None else read.total
+        elif vector is not None:
+            tir = 2.0 * abs(vector)
+        uncertain = None
+        if last is not None and last.in_axis_uncertainty is not None and vector is not None:
+            index = [one.key for one in last.stations].index(station.key)
+            uncertain = 4.0 * float(last.in_axis_uncertainty[index])
+        yield rule("final-runout").apply(
+            FinalFacts(
+                units=unit_set(job.plan.rotor.units),
+                station=station.key,
+                tir=tir,
+                expanded_uncertainty=uncertain,
+                limit=station.final_limit.value.si,
+                proved=job.plan.decision_rule == "proved",
+                limit_origin=station.final_limit.origin.words,
+            ),
+            Subject(station=station.key),
+        )
+
+
+def _progress(
+    job: Job,
+    entries: Sequence[AnyEntry],
+    attempts: Sequence[Attempt],
+    bare_shaft: SurveyRunout | None,
+) -> BuildProgress:
+    open_bare = [
+        one.id
+        for one in entries
+        if isinstance(one, RunoutSurvey) and one.purpose == "bare shaft" and not one.is_closed
+    ]
+    engineers = {one.key for one in job.people if one.role == "engineer"}
+    decided = frozenset(
+        (one.step.key, one.number)
+        for one in attempts
+        if any(decision.by in engineers for decision in one.decisions)
+    )
+    return BuildProgress(
+        steps=tuple((step.key, step.title) for step in job.plan.steps),
+        attempts=tuple(_attempt_progress(one) for one in attempts),
+        bare_shaft_surveyed=bare_shaft is not None,
+        bare_shaft_survey_open=open_bare[-1] if open_bare else None,
+        engineer_decided=decided,
+    )
+
+
+def _attempt_progress(attempt: Attempt) -> AttemptProgress:
+    open_surveys = [one.entry for one in attempt.surveys if not one.entry.is_closed]
+    verdict: Verdict | None = None
+    if not attempt.step.survey_due:
+        verdict = attempt.verdict_of("part-seated", "axial-position-right")
+    elif attempt.judged is not None:
+        # A drift is looked at, not remounted: the mount just made did not cause it.
+        verdict = Verdict.worst(
+            [
+                attempt.verdict_of("survey-whole", "set-up-same", "circle-closed")
+                or Verdict.NOT_JUDGED,
+                attempt.verdict_of("runout-changed") or Verdict.NOT_JUDGED,
+                attempt.verdict_of("part-seated") or Verdict.NOT_JUDGED,
+            ]
+        )
+    hot = any(view.item.kind == "hot" for view in attempt.items)
+    return AttemptProgress(
+        step=attempt.step.key,
+        number=attempt.number,
+        items=tuple(_item_progress(attempt, index) for index in range(len(attempt.items))),
+        survey_due=attempt.step.survey_due,
+        cooling=_cooling_now(attempt) if hot and attempt.step.survey_due else None,
+        open_survey=open_surveys[-1].id if open_surveys else None,
+        open_purpose=open_surveys[-1].purpose if open_surveys else None,
+        verdict=verdict,
+        seat_survey_closed=attempt.seat_survey is not None,
+        outcome=attempt.settled.outcome if attempt.settled else None,
+        performed=any(one.meaning == "performed" for one in attempt.signatures),
+        points_open=points_open(attempt.step, attempt.signatures),
+    )
+
+
+def _cooling_now(attempt: Attempt) -> Verdict:
+    return attempt.verdict_of("may-be-read") or Verdict.NOT_JUDGED
+
+
+def _item_progress(attempt: Attempt, index: int) -> ItemProgress:
+    view = attempt.items[index]
+    key = view.item.key
+    due = tuple(
+        (fit.land.key, feature)
+        for fit in view.fits
+        for feature, sizes in (("seat", fit.seat), ("bore", fit.bore))
+        if sizes is None or sizes.entry.closed_at is None
+    )
+    return ItemProgress(
+        key=key,
+        name=view.item.name,
+        is_hot=view.item.kind == "hot",
+        sizes_due=due,
+        fit=attempt.verdict_of(
+            "sizes-plausible",
+            "part-temperature-known",
+            "seat-larger-than-bore",
+            "interference-within",
+            item=key,
+        ),
+        furnace=attempt.verdict_of("confirmed-before-furnace", item=key),
+        target=attempt.verdict_of("target-below-highest", item=key),
+        opening=attempt.verdict_of("bore-open", "heated-through", "not-overheated", item=key),
+        door=attempt.verdict_of("confirmed-before-door", item=key),
+        mounted=view.mount.outcome if view.mount else None,
+        seated=attempt.verdict_of("part-seated", item=key) if view.mount else None,
+        axial_due=view.item.axial is not None and view.axial_cold is None,
+        removed=view.removal is not None,
+    )
