@@ -255,7 +255,7 @@ def _size_findings(job: Job, attempt: Attempt, view: ItemView) -> Iterable[Findi
                 nominal_diameter=fit.land.nominal_diameter.si,
                 part_temperature=entry.part_temperature.si if entry.part_temperature else None,
             )
-            about = replace(subject, entry=entry.id)
+            about = replace(subject, feature=feature, entry=entry.id)
             yield rule("sizes-plausible").apply(facts, about)
             yield rule("part-temperature-known").apply(facts, about)
             yield _instrument_finding(job, entry.instrument, entry.done_at, about)

@@ -58,6 +58,7 @@ class Subject:
     attempt: int | None = None
     item: str | None = None
     land: str | None = None
+    feature: str | None = None
     station: str | None = None
     entry: str | None = None
 
@@ -69,6 +70,7 @@ class Subject:
             f"attempt {self.attempt}" if self.attempt else "",
             self.item or "",
             f"land {self.land}" if self.land else "",
+            self.feature or "",
             f"station {self.station}" if self.station else "",
         )
         return ", ".join(part for part in parts if part)

@@ -1,0 +1,167 @@
+"""What the program does when it is told to on the command line."""
+
+import argparse
+import json
+import os
+import sys
+from collections.abc import Callable, Sequence
+from pathlib import Path
+from typing import Any
+
+import app.findings_text as findings_text
+from models.assess import Assessment, assess
+from models.job import Job
+from models.rules.rule import Verdict
+
+__all__ = ["main"]
+
+_WITHIN, _NOT_WITHIN, _UNUSABLE = 0, 1, 2
+
+_EXAMPLES = """\
+examples:
+  thirdjournal                                open the window on your own shop's record
+  thirdjournal demo --folder demo             make the invented demo shop there, and open it
+  thirdjournal check compressor.json          judge a job file, without any record
+  thirdjournal traveler pump.json -o pump.pdf write a job's traveler
+
+exit status: 0 every rule within, 1 anything outside, in doubt or not judged, 2 unusable input
+"""
+
+
+class _UnusableError(Exception):
+    """Input that nothing can be done with; its message is one sentence with the way out."""
+
+
+def main(arguments: Sequence[str]) -> int:
+    """Run one command and give its exit status; trouble is a sentence, never a traceback."""
+    given = _parser().parse_args(list(arguments))
+    run: Callable[[argparse.Namespace], int] = given.run
+    try:
+        return run(given)
+    except _UnusableError as trouble:
+        print(f"thirdjournal: {trouble}", file=sys.stderr)  # noqa: T201  (a command speaks)
+        return _UNUSABLE
+    except OSError as trouble:
+        where = f" ({trouble.filename})" if trouble.filename else ""
+        print(  # noqa: T201
+            f"thirdjournal: {trouble.strerror or trouble}{where}. Check the path, the free space "
+            "and the permission there, and try again.",
+            file=sys.stderr,
+        )
+        return _UNUSABLE
+
+
+def _parser() -> argparse.ArgumentParser:
+    parser = argparse.ArgumentParser(
+        prog="thirdjournal",
+        description="Build and runout logbook for rotors whose parts are shrunk onto the shaft.",
+        epilog=_EXAMPLES,
+        formatter_class=argparse.RawDescriptionHelpFormatter,
+    )
+    parser.add_argument(
+        "--shop",
+        type=Path,
+        metavar="FOLDER",
+        help="folder of the shop's record (default: the user's data folder)",
+    )
+    parser.set_defaults(run=_window)
+    commands = parser.add_subparsers(title="commands", metavar="")
+
+    demo = commands.add_parser("demo", help="make the invented demo shop, say what was found")
+    demo.add_argument(
+        "--folder", type=Path, metavar="F", help="where to make it (default: a new folder here)"
+    )
+    demo.add_argument("--no-window", action="store_true", help="make it, and open nothing")
+    demo.set_defaults(run=_demo)
+
+    check = commands.add_parser("check", help="judge a job file without a record")
+    check.add_argument("jobfile", type=Path)
+    check.add_argument("--json", action="store_true", help="every finding, with its SI values")
+    check.set_defaults(run=_check)
+
+    traveler = commands.add_parser("traveler", help="write the traveler of a job file")
+    traveler.add_argument("jobfile", type=Path)
+    traveler.add_argument("-o", "--output", type=Path, required=True, metavar="OUT.pdf")
+    traveler.set_defaults(run=_traveler)
+    return parser
+
+
+def _say(text: str) -> None:
+    print(text)  # noqa: T201  (a command speaks on standard output)
+
+
+def _read(path: Path) -> Job:
+    from models import jobfile
+
+    try:
+        return jobfile.read(path)
+    except jobfile.JobFileError as trouble:
+        raise _UnusableError(f"{path}: {trouble}") from None
+
+
+def _status(view: Assessment) -> int:
+    return _WITHIN if view.verdict is Verdict.WITHIN else _NOT_WITHIN
+
+
+def _check(given: argparse.Namespace) -> int:
+    job = _read(given.jobfile)
+    view = assess(job)
+    if given.json:
+        _say(json.dumps(findings_text.as_data(view), indent=1, ensure_ascii=False))
+    else:
+        _say(findings_text.as_text(view))
+    return _status(view)
+
+
+def _traveler(given: argparse.Namespace) -> int:
+    from reports import traveler
+
+    job = _read(given.jobfile)
+    traveler.write(assess(job), given.output)
+    _say(f"Traveler written to {given.output}")
+    return _WITHIN
+
+
+def _demo(given: argparse.Namespace) -> int:
+    from app import demo
+
+    made = _with_record(lambda: demo.make(given.folder))
+    _say(made.words)
+    if given.no_window or not has_screen():
+        return _WITHIN
+    return _open(made.folder, made.sign_in, made.job)
+
+
+def _window(given: argparse.Namespace) -> int:
+    if not has_screen():
+        raise _UnusableError(
+            "there is no screen to open a window on. Set DISPLAY, or use a command: "
+            "thirdjournal --help"
+        )
+    from app.settings import shop_folder
+
+    return _open(given.shop or shop_folder(), None, None)
+
+
+def _open(folder: Path, sign_in: str | None, job: str | None) -> int:
+    from app import start
+
+    return int(_with_record(lambda: start.run(folder, sign_in=sign_in, job=job)))
+
+
+def _with_record(act: Callable[[], Any]) -> Any:  # noqa: ANN401  (whatever the act returns)
+    from models.record.errors import RecordError
+
+    try:
+        return act()
+    except RecordError as trouble:
+        raise _UnusableError(str(trouble)) from None
+
+
+def has_screen() -> bool:
+    """Tell whether a window can be opened: a display, and not the screenless platform of tests."""
+    if os.environ.get("QT_QPA_PLATFORM") in ("offscreen", "minimal"):
+        return False
+    if sys.platform in ("win32", "darwin"):
+        return True
+    return bool(os.environ.get("DISPLAY") or os.environ.get("WAYLAND_DISPLAY"))

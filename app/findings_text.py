@@ -1,0 +1,96 @@
+"""Findings in words and as plain data, for the command line."""
+
+from collections import Counter
+from typing import Any
+
+from models.assess import Assessment, Standing
+from models.rules.rule import Verdict
+
+__all__ = ["as_data", "as_text"]
+
+_ORDER = (Verdict.OUTSIDE, Verdict.CANNOT_TELL, Verdict.NOT_JUDGED, Verdict.WITHIN)
+_COUNTED = {
+    Verdict.OUTSIDE: "outside",
+    Verdict.CANNOT_TELL: "in doubt",
+    Verdict.NOT_JUDGED: "not judged",
+    Verdict.WITHIN: "within limits",
+}
+
+
+def as_data(view: Assessment) -> dict[str, Any]:
+    """Give every finding as plain data: inputs and computed values in SI, temperatures in °C."""
+    job = view.job
+    return {
+        "job": job.number,
+        "rotor": job.plan.rotor.serial,
+        "plan": job.plan.revision,
+        "verdict": view.verdict.value,
+        "next": view.next.words,
+        "findings": [_one(standing) for standing in view.findings],
+    }
+
+
+def _one(standing: Standing) -> dict[str, Any]:
+    finding = standing.finding
+    subject = finding.subject
+    named = {
+        "step": subject.step,
+        "attempt": subject.attempt,
+        "item": subject.item,
+        "land": subject.land,
+        "feature": subject.feature,
+        "station": subject.station,
+        "entry": subject.entry,
+    }
+    return {
+        "rule": finding.rule.id,
+        "edition": finding.rule.edition,
+        **{key: value for key, value in named.items() if value is not None},
+        "verdict": finding.verdict.value,
+        "message": finding.message,
+        "inputs": dict(finding.inputs),
+        "computed": dict(finding.computed),
+        "limit_origin": finding.limit_origin,
+        "answered_by": standing.answered_by,
+    }
+
+
+def as_text(view: Assessment) -> str:
+    """Say what was found: what needs a person first, then a line for every step."""
+    job = view.job
+    invented = " (invented)" if job.plan.rotor.invented else ""
+    counts = Counter(one.finding.verdict for one in view.findings if one.answered_by is None)
+    answered = sum(1 for one in view.findings if one.answered_by is not None)
+    summary = ", ".join(
+        f"{counts[verdict]} {_COUNTED[verdict]}" for verdict in _ORDER if counts[verdict]
+    )
+    lines = [
+        f"Rotor {job.plan.rotor.serial}{invented}, job {job.number}, plan {job.plan.revision}: "
+        f"{view.verdict.phrase.lower()}.",
+        f"{len(view.findings)} findings: {summary}"
+        + (f", {answered} answered by a removal or a decision." if answered else "."),
+        "",
+    ]
+    for number, step in enumerate(job.plan.steps, start=1):
+        attempts = view.attempts_at(step.key)
+        if not attempts:
+            continue
+        lines.append(f"Step {number}, {step.title}")
+        for attempt in attempts:
+            outcome = attempt.settled.outcome if attempt.settled else "open"
+            lines.append(f"  attempt {attempt.number}: {outcome}")
+            lines += [
+                f"    {finding.phrase} [{finding.rule.id}] {finding.message}"
+                for finding in sorted(attempt.findings, key=lambda one: _ORDER.index(one.verdict))
+                if finding.verdict is not Verdict.WITHIN
+            ]
+    rest = [
+        one.finding
+        for one in view.findings
+        if one.finding.subject.step is None and one.finding.verdict is not Verdict.WITHIN
+    ]
+    if rest:
+        lines += ["", "The whole rotor"]
+        lines += [f"    {one.phrase} [{one.rule.id}] {one.message}" for one in rest]
+    lines += ["", f"Next: {view.next.words}"]
+    return "\n".join(lines)
