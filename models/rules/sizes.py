@@ -1,5 +1,6 @@
 """Judgements on sizes and on the instruments that took them."""
 
+from models.rules.compare import LENGTH_STEP, at_most
 from models.rules.facts import InstrumentFacts, SizeFacts
 from models.rules.rule import Judgement, Rule, Verdict
 from models.units import UnitSet
@@ -27,9 +28,14 @@ def sizes_are_plausible(
 ) -> Judgement:
     """Question sizes that lie far from the nominal diameter."""
     for diameter in (least_diameter, greatest_diameter):
-        ratio = diameter / nominal_diameter
-        if abs(ratio - 1.0) <= _PLAUSIBLE_SHARE:
+        stray = at_most(
+            abs(diameter - nominal_diameter),
+            _PLAUSIBLE_SHARE * nominal_diameter,
+            resolution=LENGTH_STEP,
+        )
+        if stray is Verdict.WITHIN:
             continue
+        ratio = diameter / nominal_diameter
         slip = next(
             (words for factor, words in _SLIPS if abs(ratio / factor - 1.0) < _SLIP_TOLERANCE),
             "a digit missing or in the wrong place?",
