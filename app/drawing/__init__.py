@@ -1,0 +1,1 @@
+"""Paints a sheet's display list on the screen and lets its marks explain themselves."""
