@@ -1,0 +1,1 @@
+"""What frames the work on every desk: title block, keys, prompts, verdicts and messages."""
