@@ -217,6 +217,8 @@ def _permission(view: Assessment, entry: AnyEntry) -> Permission:
     role = _role_permission(view, entry)
     if not role.allowed:
         return role
+    if entry.supersedes is not None:
+        return _correction_permission(view, entry)
     act = _act_of(entry)
     step = entry.place.step
     if act is None:
@@ -264,6 +266,20 @@ def _act_of(entry: AnyEntry) -> Act | None:
         Signature: Act.SIGN,
     }
     return acts.get(type(entry))
+
+
+def _correction_permission(view: Assessment, entry: AnyEntry) -> Permission:
+    """A correction records what already happened; it needs what it replaces, and a reason."""
+    old = next((one for one in view.job.entries if one.id == entry.supersedes), None)
+    if old is None or type(old) is not type(entry) or old.place != entry.place:
+        return _refuse("nothing-to-correct", "The entry to be corrected is not in this place.")
+    if any(one.supersedes == old.id for one in view.job.entries):
+        return _refuse(
+            "corrected-already", "That entry has been corrected already; correct the correction."
+        )
+    if not entry.reason:
+        return _refuse("reason-missing", "A correction says why.")
+    return Permission(True)
 
 
 def _before_permission(view: Assessment, step: str) -> Permission:

@@ -49,6 +49,7 @@ class Act(Enum):
     HEAT = "heat"
     CONFIRM_DOOR = "confirm before the door"
     MOUNT = "mount"
+    COMPLETE_MOUNT = "say how it came to rest"
     MEASURE_AXIAL = "measure the axial position"
     COOL = "take temperatures while cooling"
     SURVEY = "survey the runout"
@@ -262,7 +263,7 @@ def _may_on_item(item: ItemProgress, act: Act) -> Permission:
         return _no(
             "not-confirmed-before-door", f"{item.name} has not been confirmed before the door."
         )
-    if act is Act.MEASURE_AXIAL and not item.mounted:
+    if act in (Act.MEASURE_AXIAL, Act.COMPLETE_MOUNT) and not item.mounted:
         return _no("part-not-on", f"{item.name} is not on the shaft.")
     return _YES
 
@@ -353,6 +354,15 @@ def _next_in(attempt: AttemptProgress) -> NextAct:
             return step_in
     if attempt.open_survey is None and attempt.cooling not in (None, Verdict.WITHIN):
         return to(Stage.COOL, Act.COOL, "Take temperatures around and along the rotor.")
+    for item in attempt.items:
+        # Where a part rests counts once it is cold.
+        if item.axial_due:
+            return to(
+                Stage.COOL,
+                Act.MEASURE_AXIAL,
+                f"Measure where {item.name} came to rest, cold.",
+                item=item.key,
+            )
     if attempt.survey_due and attempt.verdict is not Verdict.WITHIN:
         purpose = attempt.open_purpose or ("after" if attempt.verdict is None else "again")
         words = (
@@ -366,11 +376,11 @@ def _next_in(attempt: AttemptProgress) -> NextAct:
 
 def _next_of_item(item: ItemProgress, to: _To) -> NextAct | None:
     if item.mounted:
-        if item.axial_due:
+        if item.seated is Verdict.NOT_JUDGED:
             return to(
                 Stage.MOUNT,
-                Act.MEASURE_AXIAL,
-                f"Measure where {item.name} came to rest.",
+                Act.COMPLETE_MOUNT,
+                f"Say how {item.name} came to rest: feel its shoulder all round.",
                 item=item.key,
             )
         return None
