@@ -2,6 +2,7 @@
 
 import math
 
+import numpy as np
 import pytest
 from hypothesis import given
 from hypothesis import strategies as st
@@ -84,6 +85,17 @@ def test_journal_loads_agree_with_their_source(row: published.LoadRow) -> None:
     )
     assert loads.first == row.first, row.source
     assert loads.second == row.second, row.source
+
+
+@pytest.mark.parametrize("inner", [0.0, 0.04])
+def test_bending_stiffness_is_the_sum_over_thin_strips(inner: float) -> None:
+    outer, strips = 0.1, 200_000
+    heights = (np.arange(strips) + 0.5) / strips * outer - outer / 2.0
+    chords = 2.0 * np.sqrt(np.clip((outer / 2.0) ** 2 - heights**2, 0.0, None))
+    chords -= 2.0 * np.sqrt(np.clip((inner / 2.0) ** 2 - heights**2, 0.0, None))
+    second_moment = float(np.sum(heights**2 * chords)) * outer / strips
+    stiffness = steel(0.0, 1.0, outer, inner).bending_stiffness
+    assert stiffness == pytest.approx(206e9 * second_moment, rel=1e-6)
 
 
 def test_an_overhung_rotor_says_that_a_journal_lifts() -> None:
