@@ -185,5 +185,8 @@ def _at(document: Any, place: str) -> object:  # noqa: ANN401  (any JSON documen
 
 def _written(part: object) -> str:
     if isinstance(part, units.Quantity):
-        return part.written
+        unit = part.units[part.unit]
+        # After a number, "1e-6/K" would read as more digits of it; another name of it does not.
+        symbol = unit.aliases[0] if unit.symbol[:1].isdigit() else unit.symbol
+        return f"{part.typed} {symbol}".strip()
     raise NotImplementedError(f"{part!r} has no written form")

@@ -68,13 +68,18 @@ def quantity(kind: type) -> Node:
 
 
 def _pattern(kind: type[Quantity]) -> str:
-    names = sorted(set(kind.units), key=lambda name: (-len(name), name))
+    names = [name for name in kind.units if not name[:1].isdigit()]
+    names.sort(key=lambda name: (-len(name), name))
     units = "|".join(re.sub(r"([.*+?^${}()|\[\]\\/])", r"\\\1", name) for name in names)
     return rf"^\s*{_NUMBER}\s*({units})\s*$"
 
 
 def _described(kind: type[Quantity]) -> str:
-    units = ", ".join(symbol for symbol in kind.symbols() if symbol)
+    names = (
+        unit.aliases[0] if unit.symbol[:1].isdigit() else unit.symbol
+        for unit in dict.fromkeys(kind.units.values())
+    )
+    units = ", ".join(name for name in names if name)
     plain = "" in kind.symbols()
     return f"{kind.name} as text, {'alone or ' if plain else ''}with its unit: {units}"
 
