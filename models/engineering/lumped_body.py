@@ -172,6 +172,7 @@ def time_to_cool(
     if heat_loss(end_temperature) <= 0.0:
         return math.inf
     span = start_temperature - end_temperature
+    # Narrower towards the end, where a body close to the room loses least and so lingers.
     edges = np.linspace(0.0, 1.0, 9) ** 2 * span + end_temperature
     total = 0.0
     for low, high in pairwise(edges):

@@ -204,7 +204,8 @@ def _time_to_close(
         seconds, warmer = _runge_kutta(slopes, hot, shaft, step)
         left = clearance(hot - step, shaft + warmer)
         if left <= 0.0:
-            return time + seconds * gap / (gap - left)
+            # Of the step in which they meet nothing is counted: it is short, and this is cautious.
+            return time
         hot, shaft, time, gap = hot - step, shaft + warmer, time + seconds, left
     # A slip part is still open when it is as cold as sizes are stated; rounding is not open.
     return math.inf if gap > _ROUNDING else time

@@ -24,9 +24,11 @@ from models.engineering.surface_heat import (
 )
 from tests.published.cooling import (
     AIR_ROWS,
+    FACES,
     PIPES,
     RADIATIONS,
     AirRow,
+    Face,
     Pipe,
     Radiation,
 )
@@ -49,6 +51,12 @@ def test_rayleigh_and_nusselt_numbers_agree_with_their_source(row: Pipe) -> None
     assert nusselt == printed(row.nusselt), row.source
     heat = nusselt * row.conductivity * math.pi * row.difference
     assert heat == printed(row.heat_per_metre), row.source
+
+
+@pytest.mark.parametrize("row", FACES, ids=lambda row: row.case)
+def test_nusselt_number_of_a_face_agrees_with_its_source(row: Face) -> None:
+    nusselt = nusselt_vertical_face(rayleigh=row.rayleigh, prandtl=row.prandtl)
+    assert nusselt == printed(row.nusselt), row.source
 
 
 def test_a_pipe_in_tabulated_air_loses_what_its_source_says_of_nearly_the_same_air() -> None:

@@ -94,14 +94,16 @@ def test_twice_the_stated_uncertainty_holds_the_truth_nearly_always() -> None:
     random = np.random.default_rng(20)
     times = np.linspace(0.0, 3.0, 8)
     truth = 5.0 - 3.0j
-    held = 0
+    held, scatter = 0, 0.0
     for _ in range(100):
         noise = random.normal(0.0, 0.3, 8) + 1j * random.normal(0.0, 0.3, 8)
         values = truth + (20.0 + 10.0j) * np.exp(-times / 1.2) + noise
         found = forecast(times=times, values=values, tolerance=1.0, reading_uncertainty=0.3)
+        scatter += found.residual**2 / 100.0
         off = found.final - truth
         held += max(abs(off.real), abs(off.imag)) <= 2.0 * found.final_uncertainty
     assert held >= 90
+    assert scatter == pytest.approx(0.3**2, rel=0.1)
 
 
 @given(

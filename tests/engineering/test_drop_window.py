@@ -101,7 +101,7 @@ def test_the_gap_followed_in_time_closes_when_the_range_says(
         part_temperature=250.0,
         air_temperature=20.0,
     )
-    assert (found.least if wall == 0.0 else found.greatest) == pytest.approx(in_time, rel=0.01)
+    assert (found.least if wall == 0.0 else found.greatest) == pytest.approx(in_time, rel=0.005)
 
 
 def test_a_ring_followed_along_its_radius_closes_within_the_range() -> None:

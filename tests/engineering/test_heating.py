@@ -86,6 +86,19 @@ def test_the_coefficient_is_taken_low_by_the_spread() -> None:
     ) == pytest.approx(by_hand, abs=1e-9)
 
 
+@pytest.mark.parametrize("shaft_temperature", [40.0, 0.0])
+def test_the_growth_of_the_shaft_is_taken_to_its_adverse_side(shaft_temperature: float) -> None:
+    # Seat of 150.2 mm at 12e-6: 36.048 µm warm or cold by 20 K, and 8 % of it on top.
+    shaft = 36.048e-6 if shaft_temperature > 20.0 else -36.048e-6
+    by_hand = 20.0 + (300e-6 + shaft + 0.08 * 36.048e-6) / (0.92 * 12e-6 * 0.150)
+    assert target(
+        part_expansion=constant(12e-6),
+        shaft_expansion=constant(12e-6),
+        shaft_temperature=shaft_temperature,
+        expansion_spread=0.08,
+    ) == pytest.approx(by_hand, abs=1e-6)
+
+
 def test_a_shaft_of_another_metal_counts_with_its_own_coefficient() -> None:
     needed = target(
         greatest_interference=0.0,

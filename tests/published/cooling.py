@@ -34,6 +34,24 @@ PIPES = [
 ]  # fmt: skip
 
 
+class Face(NamedTuple):
+    """Warm vertical plate in still air, Rayleigh and Prandtl number as the source gives them."""
+
+    case: str
+    source: str
+    rayleigh: float
+    prandtl: float
+    nusselt: str
+
+
+FACES = [
+    Face(
+        "2 ft at 130 °F", "Y. A. Çengel, solution of problem 9-19E, read", 5.503e8, 0.7256, "102.6"
+    ),
+    Face("0.6 m at 90 °C", "Y. A. Çengel, example 9-2, from memory", 7.656e8, 0.7202, "113.4"),
+]
+
+
 class Radiation(NamedTuple):
     """Radiation of a metre of pipe; temperatures in kelvin, as the source rounds them."""
 
