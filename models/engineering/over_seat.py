@@ -6,8 +6,8 @@ from dataclasses import dataclass
 
 from models.engineering.cooling import HotPart, TimeRange, heat_loss_in_air
 from models.engineering.errors import OutOfRangeError
-from models.engineering.expansion import MeanExpansion, diameter_at
-from models.engineering.heating import target_temperature
+from models.engineering.expansion import MeanExpansion
+from models.engineering.heating import opening, target_temperature
 from models.engineering.surface_heat import gap_coefficient, radiation_coefficient
 
 __all__ = ["Seat", "time_over_seat"]
@@ -128,17 +128,16 @@ def time_over_seat(
     wall = (part.outer_diameter - part.bore_diameter) / 2.0
 
     def closing(emissivity: float, eccentricity: float, warming: float, inner: float) -> float:
-        return _time_to_close(
+        return _Closing(
             part=part,
             seat=seat,
             part_expansion=part_expansion,
-            part_temperature=part_temperature,
             air_temperature=air_temperature,
             emissivity=emissivity,
             eccentricity=eccentricity,
             shaft_warming=warming,
             inner_resistance=inner,
-        )
+        ).seconds(part_temperature)
 
     return TimeRange(
         least=closing(greatest_emissivity, greatest_eccentricity, part.heat_capacity / slug, 0.0),
@@ -146,69 +145,85 @@ def time_over_seat(
     )
 
 
-def _time_to_close(
-    *,
-    part: HotPart,
-    seat: Seat,
-    part_expansion: MeanExpansion,
-    part_temperature: float,
-    air_temperature: float,
-    emissivity: float,
-    eccentricity: float,
-    shaft_warming: float,
-    inner_resistance: float,
-) -> float:
-    def clearance(hot: float, shaft: float) -> float:
-        bore = diameter_at(diameter=part.bore_diameter, temperature=hot, expansion=part_expansion)
-        return bore - diameter_at(
-            diameter=seat.diameter, temperature=shaft, expansion=seat.expansion
+@dataclass(frozen=True, kw_only=True)
+class _Closing:
+    """One end of the range: bodies, surfaces, and what stands in the heat's way."""
+
+    part: HotPart
+    seat: Seat
+    part_expansion: MeanExpansion
+    air_temperature: float
+    emissivity: float
+    eccentricity: float
+    shaft_warming: float
+    inner_resistance: float
+
+    def clearance(self, hot: float, shaft: float) -> float:
+        return opening(
+            bore_diameter=self.part.bore_diameter,
+            seat_diameter=self.seat.diameter,
+            mean_bore_temperature=hot,
+            shaft_temperature=shaft,
+            part_expansion=self.part_expansion,
+            shaft_expansion=self.seat.expansion,
         )
 
-    def slopes(hot: float, shaft: float) -> tuple[float, float]:
+    def slopes(self, hot: float, shaft: float) -> tuple[float, float]:
+        """Seconds, and kelvin of the shaft, for each kelvin that the part cools."""
         # Both sides of the balance are multiplied by the gap, which goes to zero where metal meets.
         film = radiation_coefficient(
-            emissivity=emissivity, surface_temperature=hot, surroundings_temperature=shaft
+            emissivity=self.emissivity, surface_temperature=hot, surroundings_temperature=shaft
         )
-        gap = max(clearance(hot, shaft), 0.0)
+        gap = max(self.clearance(hot, shaft), 0.0)
         through = film * gap + gap_coefficient(
-            clearance=1.0, gap_temperature=(hot + shaft) / 2.0, eccentricity=eccentricity
+            clearance=1.0, gap_temperature=(hot + shaft) / 2.0, eccentricity=self.eccentricity
         )
-        resistance = gap + through * inner_resistance
-        across = through * part.bore_area * (hot - shaft)
+        resistance = gap + through * self.inner_resistance
+        across = through * self.part.bore_area * (hot - shaft)
         outside = heat_loss_in_air(
-            part=part,
+            part=self.part,
             temperature=hot,
-            air_temperature=air_temperature,
-            emissivity=emissivity,
+            air_temperature=self.air_temperature,
+            emissivity=self.emissivity,
         )
         all_heat = across + outside * resistance
-        return part.heat_capacity * resistance / all_heat, shaft_warming * across / all_heat
+        return (
+            self.part.heat_capacity * resistance / all_heat,
+            self.shaft_warming * across / all_heat,
+        )
 
-    if clearance(part_temperature, seat.temperature) <= 0.0:
-        return 0.0
-    coldest = target_temperature(
-        greatest_interference=seat.diameter - part.bore_diameter,
-        clearance=0.0,
-        diameter=part.bore_diameter,
-        shaft_temperature=seat.temperature,
-        part_expansion=part_expansion,
-        shaft_expansion=seat.expansion,
-        search_limit=part_temperature,
-    )
-    step = (part_temperature - coldest) / _STEPS
-    hot, shaft, time = part_temperature, seat.temperature, 0.0
-    gap = clearance(hot, shaft)
-    for _ in range(_STEPS):
-        if hot - step - shaft < _LEVEL or hot - step < air_temperature:
-            return math.inf
-        seconds, warmer = _runge_kutta(slopes, hot, shaft, step)
-        left = clearance(hot - step, shaft + warmer)
-        if left <= 0.0:
-            # Of the step in which they meet nothing is counted: it is short, and this is cautious.
-            return time
-        hot, shaft, time, gap = hot - step, shaft + warmer, time + seconds, left
-    # A slip part is still open when it is as cold as sizes are stated; rounding is not open.
-    return math.inf if gap > _ROUNDING else time
+    def seconds(self, part_temperature: float) -> float:
+        """Duration from a temperature of the part until its bore is shut."""
+        hot, shaft, time = part_temperature, self.seat.temperature, 0.0
+        gap = self.clearance(hot, shaft)
+        if gap <= 0.0:
+            return 0.0
+        step = (part_temperature - self.coldest(part_temperature)) / _STEPS
+        for _ in range(_STEPS):
+            if hot - step - shaft < _LEVEL:
+                return math.inf
+            passed, warmer = _runge_kutta(self.slopes, hot, shaft, step)
+            if not passed >= 0.0:
+                return math.inf
+            left = self.clearance(hot - step, shaft + warmer)
+            if left <= 0.0:
+                # The step in which they meet is not counted: it is short, and this is cautious.
+                return time
+            hot, shaft, time, gap = hot - step, shaft + warmer, time + passed, left
+        # A slip part is still open when as cold as sizes are stated; rounding is not open.
+        return math.inf if gap > _ROUNDING else time
+
+    def coldest(self, part_temperature: float) -> float:
+        """Temperature at which the bore shuts on a shaft that has not warmed."""
+        return target_temperature(
+            greatest_interference=self.seat.diameter - self.part.bore_diameter,
+            clearance=0.0,
+            diameter=self.part.bore_diameter,
+            shaft_temperature=self.seat.temperature,
+            part_expansion=self.part_expansion,
+            shaft_expansion=self.seat.expansion,
+            search_limit=part_temperature,
+        )
 
 
 def _runge_kutta(

@@ -168,6 +168,20 @@ def test_a_slip_part_never_closes(air: float) -> None:
     assert found.over_seat_greatest == math.inf
 
 
+def test_a_cold_shaft_in_a_warm_room_is_still_closed_upon() -> None:
+    # By hand: at 15 °C the seat is 4 µm larger than the bore at 20 °C, which 3.1 K of 1.29 µm/K
+    # make up for; the bore shuts at 23.1 °C, below the room's 30.
+    seat = replace(SEAT, diameter=0.10001, temperature=15.0)
+    found = time_over_seat(
+        part=HUB,
+        seat=seat,
+        part_expansion=hub_steel,
+        part_temperature=120.0,
+        air_temperature=30.0,
+    )
+    assert 0.0 < found.least < found.greatest
+
+
 def test_a_poor_conductor_in_a_thick_part_is_said_not_to_cool_as_one() -> None:
     drum = replace(HUB, outer_diameter=0.400, length=0.200, conductivity=6.7)
     found = window(part=drum)
