@@ -1,0 +1,63 @@
+"""Connections to the one file, each with the settings that the record relies on."""
+
+import sqlite3
+from pathlib import Path
+
+from sqlalchemy import Connection, Engine, create_engine, event
+from sqlalchemy.pool import QueuePool
+
+from models.record.errors import UnsafeSettingError
+
+__all__ = ["BUSY_SECONDS", "engine_for"]
+
+BUSY_SECONDS = 5
+
+# Setting, what is asked for, what the library must then read back.
+_SETTINGS = (
+    ("journal_mode", "DELETE", "delete"),
+    ("synchronous", "EXTRA", "3"),
+    ("foreign_keys", "ON", "1"),
+    ("recursive_triggers", "ON", "1"),
+    ("trusted_schema", "OFF", "0"),
+    ("cell_size_check", "ON", "1"),
+)
+
+
+def engine_for(path: Path, *, writing: bool, busy_seconds: float = BUSY_SECONDS) -> Engine:
+    """Prepare connections that only read, or that take the write lock when they begin."""
+    uri = f"{path.absolute().as_uri()}?mode=rw"
+
+    def connect() -> sqlite3.Connection:
+        connection = sqlite3.connect(
+            uri, uri=True, timeout=busy_seconds, isolation_level=None, check_same_thread=False
+        )
+        try:
+            _set(connection, writing=writing, busy_seconds=busy_seconds)
+        except BaseException:
+            connection.close()
+            raise
+        return connection
+
+    engine = create_engine("sqlite://", creator=connect, poolclass=QueuePool)
+    # A deferred start would fail at once, without waiting, when two writers meet.
+    statement = "BEGIN IMMEDIATE" if writing else "BEGIN"
+
+    def begin(connection: Connection) -> None:
+        connection.exec_driver_sql(statement)
+
+    event.listen(engine, "begin", begin)
+    return engine
+
+
+def _set(connection: sqlite3.Connection, *, writing: bool, busy_seconds: float) -> None:
+    waits = str(int(busy_seconds * 1000))
+    only_reads = "0" if writing else "1"
+    for name, asked, expected in (
+        ("busy_timeout", waits, waits),
+        *_SETTINGS,
+        ("query_only", only_reads, only_reads),
+    ):
+        connection.execute(f"PRAGMA {name} = {asked}")
+        (found,) = connection.execute(f"PRAGMA {name}").fetchone()
+        if str(found) != expected:
+            raise UnsafeSettingError(name, expected, str(found))

@@ -1,0 +1,233 @@
+"""The one file of a shop's record: opened, checked, and handed out in transactions.
+
+The file is never opened, hashed or copied by other means than the one database library of the
+process: closing any other handle on it would drop the lock under a writer.
+"""
+
+import errno
+import os
+import platform
+import uuid
+from collections.abc import Callable, Iterator
+from contextlib import contextmanager
+from datetime import datetime
+from importlib.metadata import PackageNotFoundError, version
+from pathlib import Path
+from typing import Self
+
+from sqlalchemy import Connection, Engine
+from sqlalchemy.orm import Session
+
+from models.record.connections import BUSY_SECONDS, engine_for
+from models.record.errors import (
+    EmptyFileError,
+    FolderMissingError,
+    NewerRecordError,
+    NotARecordError,
+    ReadOnlyError,
+    RecordError,
+    RecordMissingError,
+    SchemaDiffersError,
+    TornRecordError,
+)
+from models.record.migrations import APPLICATION_ID, FORM, bring_up_to_date
+from models.record.schema import differences
+from models.record.tables import CHANGEABLE
+from models.record.trouble import sentence_for
+
+__all__ = ["FILE_NAME", "Store"]
+
+FILE_NAME = "shop.thirdjournal"
+
+
+def _now() -> datetime:
+    return datetime.now().astimezone()
+
+
+def _program_edition() -> str:
+    try:
+        return version("thirdjournal")
+    except PackageNotFoundError:
+        return "from source"
+
+
+class Store:
+    """An open record.
+
+    `clock` gives the present with its offset; `station_name` says which computer this is.
+    """
+
+    def __init__(
+        self, path: Path, *, clock: Callable[[], datetime], station_name: str, busy_seconds: float
+    ) -> None:
+        self.path = path
+        self.clock = clock
+        self.station_name = station_name
+        self.program_edition = _program_edition()
+        self._reader = engine_for(path, writing=False, busy_seconds=busy_seconds)
+        self._writer = engine_for(path, writing=True, busy_seconds=busy_seconds)
+
+    @classmethod
+    def open(
+        cls,
+        folder: Path,
+        *,
+        create: bool = True,
+        clock: Callable[[], datetime] = _now,
+        station_name: str | None = None,
+        busy_seconds: float = BUSY_SECONDS,
+    ) -> Self:
+        """Open the record of a folder; a missing one is made if `create` says so.
+
+        Raises
+        ------
+        RecordError
+            If the folder or the file cannot be used; the message says why, and the way out.
+        """
+        if not folder.is_dir():
+            raise FolderMissingError(folder)
+        path = folder / FILE_NAME
+        if not path.exists():
+            if not create:
+                raise RecordMissingError(path)
+            _make(path)
+        store = cls(
+            path,
+            clock=clock,
+            station_name=station_name or platform.node() or "unnamed computer",
+            busy_seconds=busy_seconds,
+        )
+        try:
+            store._examine()
+        except BaseException:
+            store.close()
+            raise
+        return store
+
+    def close(self) -> None:
+        """Give the file back."""
+        self._reader.dispose()
+        self._writer.dispose()
+
+    def __enter__(self) -> Self:
+        return self
+
+    def __exit__(self, *_: object) -> None:
+        self.close()
+
+    @contextmanager
+    def reading(self) -> Iterator[Session]:
+        """Hand out a session that sees one state of the record and cannot write.
+
+        Keep it short: while it is open, nobody's act can be put on the disk.
+        """
+        with self._session(self._reader) as session:
+            yield session
+
+    @contextmanager
+    def writing(self) -> Iterator[Session]:
+        """Hand out a session that holds the write lock; all of it is recorded, or nothing.
+
+        When the block ends without an error, what it recorded is on the disk.
+        """
+        with self._session(self._writer) as session:
+            yield session
+
+    @contextmanager
+    def _session(self, engine: Engine) -> Iterator[Session]:
+        with _sentences(self.path):
+            session = Session(engine, autoflush=False, expire_on_commit=False)
+            session.info["store"] = self
+            with session, session.begin():
+                yield session
+
+    def _examine(self) -> None:
+        if self.path.stat().st_size == 0:
+            raise EmptyFileError(self.path)
+        with _sentences(self.path), self._reader.connect() as connection:
+            found = _form(self.path, connection)
+            _refuse_torn(self.path, connection)
+        if found < FORM:
+            self._migrate()
+        with _sentences(self.path), self._reader.connect() as connection:
+            said = differences(connection)
+        if said:
+            raise SchemaDiffersError(self.path, said)
+
+    def _migrate(self) -> None:
+        with _sentences(self.path), self._writer.connect() as connection, connection.begin():
+            bring_up_to_date(connection, changeable=CHANGEABLE)
+
+
+def _form(path: Path, connection: Connection) -> int:
+    application = connection.exec_driver_sql("PRAGMA application_id").scalar_one()
+    if application != APPLICATION_ID:
+        raise NotARecordError(path)
+    found = int(connection.exec_driver_sql("PRAGMA user_version").scalar_one())
+    if found > FORM:
+        raise NewerRecordError(path, found, FORM)
+    return found
+
+
+def _refuse_torn(path: Path, connection: Connection) -> None:
+    pages = connection.exec_driver_sql("PRAGMA page_count").scalar_one()
+    size = connection.exec_driver_sql("PRAGMA page_size").scalar_one()
+    missing = pages * size - path.stat().st_size
+    if missing > 0:
+        raise TornRecordError(path, f"{missing} bytes are missing at its end")
+    found = connection.exec_driver_sql("PRAGMA quick_check(1)").scalar_one()
+    if found != "ok":
+        raise TornRecordError(path, found)
+
+
+def _make(path: Path) -> None:
+    """Make a new record beside its place and put it there whole, or not at all."""
+    draft = path.with_name(f".{path.name}.new-{uuid.uuid4()}")
+    try:
+        os.close(os.open(draft, os.O_CREAT | os.O_EXCL | os.O_WRONLY, 0o600))
+    except PermissionError as error:
+        raise ReadOnlyError(path) from error
+    except OSError as error:
+        if error.errno == errno.EROFS:
+            raise ReadOnlyError(path) from error
+        raise
+    try:
+        engine = engine_for(draft, writing=True)
+        try:
+            with _sentences(path), engine.connect() as connection, connection.begin():
+                bring_up_to_date(connection, changeable=CHANGEABLE)
+        finally:
+            engine.dispose()
+        _put_in_place(draft, path)
+    finally:
+        draft.unlink(missing_ok=True)
+
+
+def _put_in_place(draft: Path, path: Path) -> None:
+    try:
+        # Unlike a rename, a link never takes the place of a record that another window has made
+        # in the meantime.
+        os.link(draft, path)
+    except FileExistsError:
+        return
+    except OSError:
+        if not path.exists():
+            draft.rename(path)
+    folder = os.open(path.parent, os.O_RDONLY)
+    try:
+        os.fsync(folder)
+    finally:
+        os.close(folder)
+
+
+@contextmanager
+def _sentences(path: Path) -> Iterator[None]:
+    try:
+        yield
+    except RecordError:
+        raise
+    except Exception as error:
+        sentence = sentence_for(error, path)
+        if sentence is None:
+            raise
+        raise sentence from error
