@@ -4,6 +4,7 @@ from collections.abc import Iterable, Sequence
 from dataclasses import dataclass, replace
 
 from models.assess.heat import Heat, heat_facts, item_heat
+from models.assess.questions import open_questions
 from models.assess.runout import (
     StationChange,
     SurveyRunout,
@@ -426,7 +427,9 @@ def survey_findings(
         stations_due=tuple(station.key for station in job.plan.stations_in_reach(attempt.step.key)),
         stations_read=tuple(one.key for one in survey.stations if one.is_read),
         set_up_differences=differences,
-        open_questions=(),
+        open_questions=tuple(
+            one.place for one in open_questions(job, entry, baseline.entry if baseline else None)
+        ),
     )
     yield rule("survey-whole").apply(facts, subject)
     yield rule("set-up-same").apply(facts, subject)

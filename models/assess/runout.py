@@ -23,6 +23,7 @@ __all__ = [
     "compare_surveys",
     "read_station",
     "read_survey",
+    "reading_uncertainty",
     "where_the_bend_sits",
 ]
 
@@ -108,7 +109,7 @@ def read_station(job: Job, survey: RunoutSurvey, readings: StationReadings) -> S
     count = int(np.sum(~np.isnan(values)))
     fit: HarmonicFit | None = None
     vector, uncertainty, total = complex(math.nan, math.nan), math.nan, math.nan
-    instrument = _reading_uncertainty(job, survey)
+    instrument = reading_uncertainty(job, survey)
     if count >= _LEAST_MARKS:
         try:
             fit = fit_harmonics(
@@ -266,7 +267,7 @@ def _value(survey: RunoutSurvey, text: str | None) -> float:
     return lever_corrected(reading=value, lever_angle=math.radians(lever.si))
 
 
-def _reading_uncertainty(job: Job, survey: RunoutSurvey) -> float:
+def reading_uncertainty(job: Job, survey: RunoutSurvey) -> float:
     """Find the standard uncertainty of one reading: the plan's, else from the certificate."""
     planned = job.plan.runout.reading_uncertainty
     if planned is not None:

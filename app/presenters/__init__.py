@@ -1,0 +1,1 @@
+"""One object per page: state, signals, calls into models; no widgets."""
