@@ -43,7 +43,8 @@ def gap_view(*, picture: GapPicture, place: Box, medium: Medium) -> Layer:
     band = 1.5 * size
     seat = place.bottom - band
     factor = (seat - place.top - band) / picture.opening_gap
-    right = place.right - 0.2 * place.width
+    words = note(x=0.0, y=0.0, text=picture.gap_text, medium=medium).box(medium)
+    right = place.right - words.width - 5.0 * medium.space
 
     def height(gap: float) -> float:
         # A bore cannot sink into its seat: from contact on the lines stay on each other.
@@ -70,6 +71,16 @@ def gap_view(*, picture: GapPicture, place: Box, medium: Medium) -> Layer:
             colour=Colour.INK,
         ),
     ]
+    if picture.least_text and cautious - bore > 1.2 * size:
+        items.append(
+            note(
+                x=right - medium.space,
+                y=cautious - 0.3 * size,
+                text=picture.least_text,
+                medium=medium,
+                anchor=Anchor.END,
+            )
+        )
     if picture.gap_text:
         items += _measure(right + 2.0 * medium.space, bore, seat, picture.gap_text, medium)
     tells = picture.tells or f"Gap between bore and seat: {picture.gap_text}."

@@ -445,8 +445,9 @@ class GapPicture:
         Radial gap when it left the furnace, which sets the scale [m].
     least_gap : float
         The cautious end of the gap now [m].
-    bore_text, seat_text, gap_text : str
-        Words at the bore line, the seat line and between them.
+    bore_text, seat_text, gap_text, least_text : str
+        Words at the bore line, the seat line, between them, and at the cautious end; the last is
+        left out where it has no room.
     tells : str
         One sentence when touched.
     """
@@ -457,4 +458,5 @@ class GapPicture:
     bore_text: str = "bore"
     seat_text: str = "seat"
     gap_text: str = ""
+    least_text: str = "at least"
     tells: str = ""

@@ -128,14 +128,21 @@ def planes(
     """
     items: list[Item] = list(_guides(stations, axis, length, place))
     marks: list[Mark] = []
-    for index, name in enumerate(PLANE_NAMES):
+    factor = axis.scale * magnification
+    both = []
+    for index in range(2):
         strip = _strip(place, index)
         zero = (strip.top + strip.bottom) / 2.0
-        factor = axis.scale * magnification
-        drawn = [(curve, _points(curve, index, axis, zero, factor)) for curve in curves]
+        both.append([(curve, _points(curve, index, axis, zero, factor)) for curve in curves])
+    taken = [box for drawn in both for _, points in drawn for box in _line_boxes(points, medium)]
+    for index, (name, drawn) in enumerate(zip(PLANE_NAMES, both, strict=True)):
+        strip = _strip(place, index)
+        zero = (strip.top + strip.bottom) / 2.0
         for curve, points in drawn:
             items += _curve_items(curve, points, medium)
-        items += _names(drawn, zero, strip, medium)
+        names = _names(drawn, zero, place, taken, medium)
+        taken += [text.box(medium).grown(medium.space) for text in names]
+        items += names
         items += _caption(
             name, index, magnification, place.left, axis.x(0.0) - medium.space, strip, medium
         )
@@ -219,29 +226,33 @@ def _runs(points: list[Point | None], *, without: int | None) -> list[list[Point
 def _names(
     drawn: list[tuple[PlaneCurve, list[Point | None]]],
     zero: float,
-    strip: Box,
+    place: Box,
+    taken: list[Box],
     medium: Medium,
 ) -> list[Text]:
     """Write each curve's name where it is farthest from the others and nothing is crossed."""
-    taken = [box for _, points in drawn for box in _line_boxes(points, medium)]
     texts: list[Text] = []
     for curve, points in reversed(drawn):
         if not curve.name:
             continue
         rivals = [other for rival, other in drawn if rival is not curve]
+        blocked = [*taken, *(text.box(medium).grown(medium.space) for text in texts)]
         found = next(
             (
                 text
                 for text in _name_places(curve, points, rivals, zero, medium)
-                if not any(text.box(medium).overlaps(box) for box in taken)
-                and strip.grown(medium.size(Size.NOTE)).holds(text.x, text.y)
+                if _is_free(text.box(medium), place, blocked)
             ),
             None,
         )
         if found is not None:
             texts.append(found)
-            taken.append(found.box(medium).grown(medium.space))
     return texts
+
+
+def _is_free(box: Box, place: Box, blocked: list[Box]) -> bool:
+    inside = place.top <= box.top and box.bottom <= place.bottom
+    return inside and not any(box.overlaps(other) for other in blocked)
 
 
 def _name_places(

@@ -183,7 +183,7 @@ def _part(part: PartOutline, *, rising: bool, shown: Shown) -> Layer:
     lift = LIFT_MAGNIFICATION * part.lifted_gap if part.state is PartState.CURRENT else 0.0
     items: list[Item] = []
     if lift:
-        items += [Polygon(points=shown.upper(area), stroke=TO_COME) for area in shape.cut]
+        items += [_free_outline(area, shown) for area in shape.cut]
     if part.state is PartState.TO_COME:
         items += _outlines(shape, shown)
     else:
@@ -213,10 +213,18 @@ def _part_sentence(part: PartOutline) -> str:
 
 
 def _outlines(shape: PartShape, shown: Shown) -> list[Item]:
-    items: list[Item] = [Polygon(points=shown.upper(area), stroke=TO_COME) for area in shape.cut]
+    items = [_free_outline(area, shown) for area in shape.cut]
     if shown.view is View.SECTION:
         items.append(Polyline(points=shown.lower(shape.silhouette), stroke=TO_COME))
     return items
+
+
+def _free_outline(area: tuple[Point, ...], shown: Shown) -> Item:
+    """Leave out the line along the bore, where the shaft's own outline already is."""
+    points = shown.upper(area)
+    if area[0][1] == area[-1][1] == min(radius for _, radius in area):
+        return Polyline(points=points, stroke=TO_COME)
+    return Polygon(points=points, stroke=TO_COME)
 
 
 def _solid(
