@@ -45,6 +45,7 @@ class ReadingCell(PlainWidget):
     typed = Signal(str)
     taken = Signal(str)
     corrected = Signal(str, str)
+    reason_chosen = Signal(str)
     doubled = Signal(str)
     cleared = Signal(str)
     asked_for_last = Signal()
@@ -173,6 +174,7 @@ class ReadingCell(PlainWidget):
             self._reason = reason
             self._notice = ""
             self._settle()
+            self.reason_chosen.emit(reason)
 
     # What the keypad does; it never has the keyboard itself
 
