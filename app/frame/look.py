@@ -10,7 +10,7 @@ from PySide6.QtGui import QColor, QFont, QPen
 from app.style.tokens import colour as style_colour
 from app.style.tokens import pixel_font
 from reports.palette import LIGHT, Colour, Palette
-from reports.sheet.medium import BENCH_1280, BENCH_1920, LineWidth, Size
+from reports.sheet.medium import BENCH_1280, BENCH_1920, LineWidth, Medium, Size
 from reports.typeface import Weight
 
 __all__ = ["LEAST_TOUCH", "Look"]
@@ -197,6 +197,12 @@ class Look:
         4.0
         """
         return self.between(narrow=BENCH_1280.width(width), wide=BENCH_1920.width(width))
+
+    @property
+    def medium(self) -> Medium:
+        """The nearer of the two screens that were drawn."""
+        middle = (_NARROW_WINDOW + _WIDE_WINDOW) / 2.0
+        return BENCH_1280 if self.window_width < middle else BENCH_1920
 
     @property
     def touch(self) -> int:
