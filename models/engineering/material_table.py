@@ -94,14 +94,11 @@ def _from_rows(key: str, rows: Sequence[Mapping[str, str]]) -> Material:
     def single(name: str) -> float | None:
         return next(iter(values[name].values()), None)
 
-    density, poisson = single("density"), single("poisson")
-    if density is None or poisson is None:
-        raise ValueError(f"materials.csv lacks density or Poisson's ratio of {key}")
     return Material(
         key=key,
         name=rows[0]["name"],
-        density=density,
-        poisson=poisson,
+        density=values["density"][20.0],
+        poisson=values["poisson"][20.0],
         expansion_temperatures=tuple(values["mean_expansion"]),
         mean_expansions=tuple(values["mean_expansion"].values()),
         modulus_temperatures=tuple(values["modulus"]),

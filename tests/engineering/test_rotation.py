@@ -69,7 +69,7 @@ one_material = st.builds(
 )
 
 
-def solved_by_elements(joint, speed):
+def solved_by_elements(joint, speed, elements=60):
     radius = joint.interface_diameter / 2.0
     return press_together(
         shaft=Ring(
@@ -78,6 +78,7 @@ def solved_by_elements(joint, speed):
             joint.shaft_modulus,
             joint.shaft_poisson,
             joint.shaft_density,
+            elements=elements,
         ),
         hub=Ring(
             radius,
@@ -85,6 +86,7 @@ def solved_by_elements(joint, speed):
             joint.hub_modulus,
             joint.hub_poisson,
             joint.hub_density,
+            elements=elements,
         ),
         radial_interference=joint.interference / 2.0,
         speed=speed,
@@ -134,10 +136,10 @@ def test_rings_of_finite_elements_keep_the_same_pressure_at_speed(joint, share):
 @pytest.mark.parametrize("joint", JOINTS)
 def test_rings_of_finite_elements_let_go_at_the_same_speed(joint):
     def pressure(speed):
-        return solved_by_elements(joint, speed).pressure
+        return solved_by_elements(joint, speed, elements=15).pressure
 
-    opened = optimize.brentq(pressure, 100.0, 5000.0, xtol=1e-3)
-    assert release_speed(joint=joint) == pytest.approx(opened, rel=1e-5)
+    opened = optimize.brentq(pressure, 100.0, 5000.0, xtol=1e-2)
+    assert release_speed(joint=joint) == pytest.approx(opened, rel=5e-5)
 
 
 @pytest.mark.parametrize("shaft_bore", [0.0, 0.040, 0.120])
