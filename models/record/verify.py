@@ -1,0 +1,106 @@
+"""Recompute every link of every chain from the rows themselves, and say in words what differs.
+
+Whoever holds the file can rewrite a chain whole, or cut its tail: such a chain is consistent in
+itself. Only a head that somebody else kept (on a traveler, in a backup) shows it; give that head
+as `expected`.
+"""
+
+from collections.abc import Iterator
+from dataclasses import dataclass
+
+from sqlalchemy import select
+from sqlalchemy.exc import DBAPIError
+from sqlalchemy.orm import Session
+
+from models.job import Head
+from models.record import tables
+from models.record.chain_check import ChainCheck, Trouble
+from models.record.errors import UnknownJobError
+from models.record.lookups import chain_of_job
+from models.record.schema import differences
+from models.record.tables import recorded_tables, table
+
+__all__ = ["SHOP_NAME", "Trouble", "Verification", "verify"]
+
+SHOP_NAME = "the shop"
+
+
+@dataclass(frozen=True, kw_only=True)
+class Verification:
+    """What was found; `heads` by job number, the shop's own under `SHOP_NAME`."""
+
+    troubles: tuple[Trouble, ...]
+    heads: dict[str, Head]
+    acts: int
+
+    @property
+    def is_whole(self) -> bool:
+        """Whether everything is as it was recorded."""
+        return not self.troubles
+
+
+def verify(
+    session: Session, *, number: str | None = None, expected: Head | None = None
+) -> Verification:
+    """Recompute the links of one job, or of the whole record.
+
+    Parameters
+    ----------
+    session
+        A session of `Store.reading`.
+    number
+        The job to look at; all jobs and the shop if absent.
+    expected
+        A head of that job which was kept elsewhere; the chain must contain it.
+
+    Raises
+    ------
+    UnknownJobError
+        If there is no job of this number.
+    """
+    troubles = list(_of_the_file(session))
+    heads: dict[str, Head] = {}
+    acts = 0
+    for chain_id, name in _chains(session, number).items():
+        chain = ChainCheck(session, chain_id, name)
+        troubles += chain.troubles()
+        acts += len(chain.acts)
+        if chain.head is not None:
+            heads[name] = chain.head
+        if expected is not None and number is not None:
+            troubles += chain.compared_with(expected)
+    return Verification(troubles=tuple(troubles), heads=heads, acts=acts)
+
+
+def _of_the_file(session: Session) -> Iterator[Trouble]:
+    connection = session.connection()
+    for said in differences(connection):
+        yield Trouble(what=said)
+    for (said,) in connection.exec_driver_sql("PRAGMA integrity_check"):
+        if said != "ok":
+            yield Trouble(what=f"the file is damaged: {said}")
+    for row in connection.exec_driver_sql("PRAGMA foreign_key_check"):
+        yield Trouble(what=f"a row names one of {row[2]} that is not there", table=row[0])
+
+
+def _chains(session: Session, number: str | None) -> dict[str, str]:
+    if number is not None:
+        chain_id = chain_of_job(session, number)
+        if chain_id is None:
+            raise UnknownJobError(number)
+        return {chain_id: number}
+    job, chain = table(tables.Job), table(tables.Chain)
+    names: dict[str, str] = {}
+    # Also chains that only a stray row speaks of.
+    for each in (chain, table(tables.Act), *recorded_tables()):
+        for found in session.execute(select(each.c.chain_id).distinct()).scalars():
+            names.setdefault(found, found)
+    try:
+        shops = session.execute(select(chain.c.chain_id).where(chain.c.kind == "shop")).scalars()
+        names.update(dict.fromkeys(shops, SHOP_NAME))
+        for row in session.execute(select(job.c.chain_id, job.c.number)):
+            names[row.chain_id] = row.number
+    except DBAPIError:
+        # Undecodable text: the chain goes by its id, and its check names the table.
+        pass
+    return names
