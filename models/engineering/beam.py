@@ -1,6 +1,7 @@
 """A stepped shaft on two rigid bearings as a beam: its sag and its first critical speed.
 
-Euler-Bernoulli elements, cubic in each; neither shear nor the springs of real bearings.
+Slender-beam theory: flexibility by virtual work, mass by cubic elements; neither shear nor the
+springs of real bearings.
 """
 
 import itertools
@@ -24,7 +25,8 @@ __all__ = [
 _Array = npt.NDArray[np.float64]
 _SAME_PLACE = 1e-9
 _SAMPLES_PER_ELEMENT = 9
-_MOST_ELEMENTS = 512
+_FEWEST_ELEMENTS = 8
+_REFINEMENTS = (1, 2, 4, 8, 16)
 
 
 @dataclass(frozen=True, eq=False)
@@ -90,10 +92,15 @@ def _stations(
     return np.asarray(clipped[apart], dtype=np.float64)
 
 
-def _mesh(sections: list[StepSection], stations: _Array, elements_per_interval: int) -> _Mesh:
-    steps = np.arange(elements_per_interval) / elements_per_interval
-    starts = stations[:-1, None] + steps * np.diff(stations)[:, None]
-    nodes = np.append(starts.ravel(), stations[-1])
+def _mesh(sections: list[StepSection], stations: _Array, refinement: int) -> _Mesh:
+    lengths = np.diff(stations)
+    longest = (stations[-1] - stations[0]) / _FEWEST_ELEMENTS
+    counts = refinement * np.ceil(lengths / longest).astype(int)
+    pieces = [
+        start + length * np.arange(count) / count
+        for start, length, count in zip(stations, lengths, counts, strict=False)
+    ]
+    nodes = np.append(np.concatenate(pieces), stations[-1])
     middles = (nodes[:-1] + nodes[1:]) / 2.0
     ends = np.array([section.end for section in sections])
     owner = np.minimum(np.searchsorted(ends, middles), len(sections) - 1)
@@ -102,17 +109,30 @@ def _mesh(sections: list[StepSection], stations: _Array, elements_per_interval: 
     return _Mesh(nodes=nodes, stiffness=stiffness[owner], mass_per_length=mass_per_length[owner])
 
 
-def _element_stiffness(stiffness: float, length: float) -> _Array:
-    ell = length
-    pattern = np.array(
-        [
-            [12.0, 6.0 * ell, -12.0, 6.0 * ell],
-            [6.0 * ell, 4.0 * ell**2, -6.0 * ell, 2.0 * ell**2],
-            [-12.0, -6.0 * ell, 12.0, -6.0 * ell],
-            [6.0 * ell, 2.0 * ell**2, -6.0 * ell, 4.0 * ell**2],
-        ]
-    )
-    return stiffness / ell**3 * pattern
+def _flexibility_root(mesh: _Mesh, bearings: tuple[float, float]) -> _Array:
+    """Matrix whose product with its transpose is the flexibility of the nodes, by virtual work.
+
+    A row holds the bending moments that a unit force, or a unit moment, at a node makes at two
+    Gauss points of each element: exact, because they vary linearly between nodes. Inverting a
+    stiffness instead loses every digit where a section is very short.
+    """
+    first, second = bearings
+    lengths = np.diff(mesh.nodes)
+    middles = (mesh.nodes[:-1] + mesh.nodes[1:]) / 2.0
+    away = lengths / (2.0 * math.sqrt(3.0))
+    points = np.concatenate([middles - away, middles + away])
+    weights = np.tile(np.sqrt(lengths / (2.0 * mesh.stiffness)), 2)
+    beyond_first = np.maximum(points - first, 0.0)
+    beyond_second = np.maximum(points - second, 0.0)
+    on_second = ((mesh.nodes - first) / (second - first))[:, None]
+    beyond_node = points - mesh.nodes[:, None]
+    by_force = np.maximum(beyond_node, 0.0) - (1.0 - on_second) * beyond_first
+    by_force -= on_second * beyond_second
+    by_moment = (beyond_first - beyond_second) / (second - first) - (beyond_node > 0.0)
+    root = np.empty((2 * mesh.nodes.size, points.size))
+    root[0::2] = by_force * weights
+    root[1::2] = by_moment * weights
+    return root
 
 
 def _element_mass(mass_per_length: float, length: float) -> _Array:
@@ -126,14 +146,6 @@ def _element_mass(mass_per_length: float, length: float) -> _Array:
         ]
     )
     return mass_per_length * ell / 420.0 * pattern
-
-
-def _assembled_stiffness(mesh: _Mesh) -> _Array:
-    whole = np.zeros((2 * mesh.nodes.size, 2 * mesh.nodes.size))
-    for index, length in enumerate(np.diff(mesh.nodes)):
-        place = slice(2 * index, 2 * index + 4)
-        whole[place, place] += _element_stiffness(float(mesh.stiffness[index]), float(length))
-    return whole
 
 
 def _assembled_mass(mesh: _Mesh, added_masses: list[AddedMass]) -> _Array:
@@ -150,11 +162,6 @@ def _assembled_mass(mesh: _Mesh, added_masses: list[AddedMass]) -> _Array:
 
 def _node_at(nodes: _Array, position: float) -> int:
     return int(np.argmin(np.abs(nodes - position)))
-
-
-def _free_to_move(nodes: _Array, bearings: tuple[float, float]) -> npt.NDArray[np.intp]:
-    held = [2 * _node_at(nodes, bearing) for bearing in bearings]
-    return np.setdiff1d(np.arange(2 * nodes.size), held)
 
 
 def _checked(
@@ -228,9 +235,10 @@ def static_deflection(
 
     Notes
     -----
-    Exact for a slender stepped beam, whatever the mesh; only the position of the greatest value is
-    taken from samples. Shear adds to the sag, and a step stiffens less than its drawing says; both
-    matter on short, thick shafts. A part adds no stiffness.
+    Exact for a slender stepped beam, whatever the mesh; only the greatest value is the greatest of
+    samples, at least 256 over the length, and so up to 0.002 % low. Shear adds to the sag, and a
+    step stiffens less than its drawing says; both matter on short, thick shafts. A part adds no
+    stiffness.
 
     Examples
     --------
@@ -247,11 +255,11 @@ def static_deflection(
 
     References
     ----------
-    Beam theory; cubic elements as in any text on finite elements, from memory.
+    Beam theory: virtual work and cubic elements, as in any text on either, from memory.
     """
     ordered = _checked(sections, added_masses, first_bearing, second_bearing)
     bearings = (first_bearing, second_bearing)
-    mesh = _mesh(ordered, _stations(ordered, added_masses, bearings), 8)
+    mesh = _mesh(ordered, _stations(ordered, added_masses, bearings), 4)
     load = np.zeros(2 * mesh.nodes.size)
     for index, length in enumerate(np.diff(mesh.nodes)):
         weight = mesh.mass_per_length[index] * STANDARD_GRAVITY * length
@@ -259,9 +267,8 @@ def static_deflection(
         load[2 * index : 2 * index + 4] += weight * share
     for part in added_masses:
         load[2 * _node_at(mesh.nodes, part.position)] += part.mass * STANDARD_GRAVITY
-    free = _free_to_move(mesh.nodes, bearings)
-    nodal = np.zeros_like(load)
-    nodal[free] = np.linalg.solve(_assembled_stiffness(mesh)[np.ix_(free, free)], load[free])
+    root = _flexibility_root(mesh, bearings)
+    nodal = root @ (root.T @ load)
     positions, deflections = _sampled(mesh, nodal)
     place = int(np.argmax(np.abs(deflections)))
     return StaticDeflection(
@@ -272,15 +279,13 @@ def static_deflection(
     )
 
 
-def _lowest_speed(mesh: _Mesh, added_masses: list[AddedMass], free: npt.NDArray[np.intp]) -> float:
+def _lowest_speed(
+    mesh: _Mesh, added_masses: list[AddedMass], bearings: tuple[float, float]
+) -> float:
     """Root of the largest flexibility times mass; a gyroscopic disc makes the mass indefinite."""
-    stiffness = _assembled_stiffness(mesh)[np.ix_(free, free)]
-    mass = _assembled_mass(mesh, added_masses)[np.ix_(free, free)]
-    lower = np.linalg.cholesky(stiffness)
-    half = np.linalg.solve(lower, mass)
-    reduced = np.linalg.solve(lower, half.T)
-    largest = float(np.linalg.eigvalsh((reduced + reduced.T) / 2.0)[-1])
-    return 1.0 / math.sqrt(largest)
+    root = _flexibility_root(mesh, bearings)
+    seen = root.T @ _assembled_mass(mesh, added_masses) @ root
+    return 1.0 / math.sqrt(float(np.linalg.eigvalsh((seen + seen.T) / 2.0)[-1]))
 
 
 def first_critical_speed(
@@ -343,25 +348,24 @@ def first_critical_speed(
 
     References
     ----------
-    Beam theory; cubic elements with consistent mass as in any text on finite elements, from memory.
+    Beam theory: virtual work, and consistent mass of cubic elements, as in any text on either, from
+    memory.
     """
     demand_positive("greatest_change", greatest_change)
     ordered = _checked(sections, added_masses, first_bearing, second_bearing)
     bearings = (first_bearing, second_bearing)
     stations = _stations(ordered, added_masses, bearings)
-    per_interval = 1
     coarse = math.inf
     change = math.inf
-    while per_interval * (stations.size - 1) <= _MOST_ELEMENTS:
-        mesh = _mesh(ordered, stations, per_interval)
-        speed = _lowest_speed(mesh, added_masses, _free_to_move(mesh.nodes, bearings))
+    for refinement in _REFINEMENTS:
+        mesh = _mesh(ordered, stations, refinement)
+        speed = _lowest_speed(mesh, added_masses, bearings)
         change = abs(speed - coarse) / speed
         if change <= greatest_change:
             return CriticalSpeed(
                 speed=speed, element_count=mesh.nodes.size - 1, change_on_refinement=change
             )
         coarse = speed
-        per_interval *= 2
     raise OutOfRangeError(
         "greatest_change", greatest_change, f"exceed what the mesh can show, here {change:.1e}"
     )
