@@ -13,7 +13,7 @@ from models.engineering.surface_heat import gap_coefficient, radiation_coefficie
 __all__ = ["Seat", "time_over_seat"]
 
 _STEPS = 120
-# Conduction has nearly stopped when bore and seat are this close; they will not meet any more.
+# Conduction has nearly stopped when bore and seat are this close [K]; the gap no longer shuts them.
 _LEVEL = 0.5
 _ROUNDING = 1e-9
 
@@ -63,8 +63,8 @@ def time_over_seat(
         C_p \dot T_p = -h_g A_b (T_p - T_s) - q_{air}(T_p), \quad
         C_s \dot T_s = h_g A_b (T_p - T_s), \quad c(T_p, T_s) \to 0
 
-    The least: a shaft that keeps all the heat below the part and grows with it, a part that hangs
-    out of centre, dark surfaces. The greatest: a shaft that stays as it is, a centred part, bright
+    The least: a shaft that keeps all the heat below the part and grows with it, or none where that
+    is sooner, a part that hangs out of centre, dark surfaces. The greatest: a shaft that stays as it is, a centred part, bright
     surfaces, and the way from the middle of the wall to the bore in series.
 
     Parameters
@@ -139,8 +139,14 @@ def time_over_seat(
             inner_resistance=inner,
         ).seconds(part_temperature)
 
+    # A shaft that warms grows, but may also come level with a part that grows more than it does;
+    # the sooner of warming and staying cold is the cautious one.
+    soonest = min(
+        closing(greatest_emissivity, greatest_eccentricity, warming, 0.0)
+        for warming in (part.heat_capacity / slug, 0.0)
+    )
     return TimeRange(
-        least=closing(greatest_emissivity, greatest_eccentricity, part.heat_capacity / slug, 0.0),
+        least=soonest,
         greatest=closing(least_emissivity, 0.0, 0.0, wall / (3.0 * part.conductivity)),
     )
 

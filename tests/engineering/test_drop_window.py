@@ -160,12 +160,41 @@ def test_a_bore_open_by_less_than_wanted_leaves_no_time_in_the_room() -> None:
     assert found.over_seat_least > 0.0
 
 
-@pytest.mark.parametrize("air", [5.0, 20.0, 30.0])
-def test_a_slip_part_never_closes(air: float) -> None:
-    found = window(seat=replace(SEAT, diameter=0.09990), bore_temperature=60.0, air_temperature=air)
+@pytest.mark.parametrize(("air", "shaft"), [(5.0, 5.0), (5.0, 20.0), (20.0, 20.0), (30.0, 15.0)])
+def test_a_slip_part_never_closes(air: float, shaft: float) -> None:
+    found = window(
+        seat=replace(SEAT, diameter=0.09990, temperature=shaft),
+        bore_temperature=60.0,
+        air_temperature=air,
+    )
     assert found.in_air_least == math.inf
     assert found.over_seat_least == math.inf
     assert found.over_seat_greatest == math.inf
+
+
+def test_a_part_that_never_gets_near_a_cold_shaft_in_a_hot_room_stays_open() -> None:
+    # 2 K above where it would shut, on a shaft of 20 °C, with so little through the gap that a room
+    # of 300 °C warms it instead.
+    found = time_over_seat(
+        part=replace(HUB, bore_diameter=0.010),
+        seat=replace(SEAT, diameter=0.010005),
+        part_expansion=hub_steel,
+        part_temperature=80.0,
+        air_temperature=300.0,
+    )
+    assert found.greatest == math.inf
+
+
+def test_a_part_that_grows_more_than_its_shaft_keeps_its_range_in_order() -> None:
+    # Once level with its shaft it still stands open, by hand 0.1 · 5e-6 · (T − 20) less 20 µm.
+    found = time_over_seat(
+        part=HUB,
+        seat=replace(SEAT, diameter=0.10002),
+        part_expansion=lambda temperature: 17e-6,
+        part_temperature=250.0,
+        air_temperature=20.0,
+    )
+    assert 0.0 < found.least < found.greatest < math.inf
 
 
 def test_a_cold_shaft_in_a_warm_room_is_still_closed_upon() -> None:
