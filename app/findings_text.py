@@ -6,7 +6,7 @@ from typing import Any
 from models.assess import Assessment, Standing
 from models.rules.rule import Verdict
 
-__all__ = ["as_data", "as_text"]
+__all__ = ["as_data", "as_text", "summary"]
 
 _ORDER = (Verdict.OUTSIDE, Verdict.CANNOT_TELL, Verdict.NOT_JUDGED, Verdict.WITHIN)
 _COUNTED = {
@@ -55,23 +55,27 @@ def _one(standing: Standing) -> dict[str, Any]:
     }
 
 
-def as_text(view: Assessment) -> str:
-    """Say what was found: what needs a person first, then a line for every step."""
+def summary(view: Assessment) -> list[str]:
+    """Say in two lines which job this is and how many findings of each kind it has."""
     job = view.job
     invented = " (invented)" if job.plan.rotor.invented else ""
     counts = Counter(one.finding.verdict for one in view.findings if one.answered_by is None)
     answered = sum(1 for one in view.findings if one.answered_by is not None)
-    summary = ", ".join(
+    kinds = ", ".join(
         f"{counts[verdict]} {_COUNTED[verdict]}" for verdict in _ORDER if counts[verdict]
     )
-    lines = [
+    tail = f", {answered} answered by a removal or a decision." if answered else "."
+    return [
         f"Rotor {job.plan.rotor.serial}{invented}, job {job.number}, plan {job.plan.revision}: "
         f"{view.verdict.phrase.lower()}.",
-        f"{len(view.findings)} findings: {summary}"
-        + (f", {answered} answered by a removal or a decision." if answered else "."),
-        "",
+        f"  {len(view.findings)} findings: {kinds}{tail}",
     ]
-    for number, step in enumerate(job.plan.steps, start=1):
+
+
+def as_text(view: Assessment) -> str:
+    """Say what was found: what needs a person first, then a line for every step."""
+    lines = [*summary(view), ""]
+    for number, step in enumerate(view.job.plan.steps, start=1):
         attempts = view.attempts_at(step.key)
         if not attempts:
             continue
@@ -79,18 +83,23 @@ def as_text(view: Assessment) -> str:
         for attempt in attempts:
             outcome = attempt.settled.outcome if attempt.settled else "open"
             lines.append(f"  attempt {attempt.number}: {outcome}")
-            lines += [
-                f"    {finding.phrase} [{finding.rule.id}] {finding.message}"
-                for finding in sorted(attempt.findings, key=lambda one: _ORDER.index(one.verdict))
-                if finding.verdict is not Verdict.WITHIN
+            about = (attempt.step.key, attempt.number)
+            mine = [
+                one
+                for one in view.findings
+                if (one.finding.subject.step, one.finding.subject.attempt) == about
             ]
-    rest = [
-        one.finding
-        for one in view.findings
-        if one.finding.subject.step is None and one.finding.verdict is not Verdict.WITHIN
-    ]
-    if rest:
-        lines += ["", "The whole rotor"]
-        lines += [f"    {one.phrase} [{one.rule.id}] {one.message}" for one in rest]
-    lines += ["", f"Next: {view.next.words}"]
+            lines += _standing_lines(mine)
+    rest = [one for one in view.findings if one.finding.subject.step is None]
+    lines += ["", "The whole rotor", *_standing_lines(rest), "", f"Next: {view.next.words}"]
     return "\n".join(lines)
+
+
+def _standing_lines(standings: list[Standing]) -> list[str]:
+    shown = [one for one in standings if one.finding.verdict is not Verdict.WITHIN]
+    shown.sort(key=lambda one: _ORDER.index(one.finding.verdict))
+    return [
+        f"    {one.finding.phrase} [{one.finding.rule.id}] {one.finding.message}"
+        + (f" Answered: {one.answered_by}." if one.answered_by else "")
+        for one in shown
+    ]

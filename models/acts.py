@@ -14,6 +14,7 @@ from dataclasses import dataclass
 from datetime import datetime
 
 import msgspec
+from sqlalchemy.orm import Session
 
 from models.assess import Assessment, Standing, assess, finding_key
 from models.job import (
@@ -99,10 +100,10 @@ class Acts:
         with self._store.reading() as session:
             return queries.read_job(session, number)
 
-    def bring_in(self, job: Job, *, by: str) -> None:
+    def bring_in(self, job: Job, *, by: str, act_id: str) -> None:
         """Take a whole job from a job file into the record; one that is there is refused."""
         with self._store.writing() as session:
-            journal.bring_in(session, job, by=by, done_at=self.now())
+            journal.bring_in(session, job, by=by, act_id=act_id)
 
     def record(
         self, number: str, entry: AnyEntry, *, act_id: str | None = None, head: int | None = None
@@ -152,8 +153,8 @@ class Acts:
         """
         with self._store.writing() as session:
             at = self.now()
-            closed = reason is not None and queries.is_closed(session, entry_id)
-            before = assess(queries.read_job(session, number)) if closed else None
+            # Only a correction can touch what has been judged; a first reading costs no look back.
+            before = _judged_already(session, number, entry_id) if reason is not None else None
             with journal.act(
                 session,
                 chain=number,
@@ -162,9 +163,9 @@ class Acts:
                 act_id=act_id,
                 done_at=at,
             ) as act:
-                act.add_reading(entry_id, reading, at=at, reason=reason)
+                act.add_reading(entry_id, reading, reason=reason)
                 if before is not None:
-                    session.flush()
+                    act.flush()
                     after = assess(queries.read_job(session, number))
                     act.add_verdicts(_changed(before, after, entry_id, at))
             return Recorded(act.sequence, at)
@@ -193,7 +194,7 @@ class Acts:
                 session, chain=number, kind="survey closed", by=by, act_id=act_id, done_at=at
             ) as act:
                 act.close_survey(entry_id, at)
-                session.flush()
+                act.flush()
                 view = assess(queries.read_job(session, number))
                 act.add_verdicts(
                     _stored(one, entry_id, at)
@@ -201,6 +202,14 @@ class Acts:
                     if one.finding.subject.entry == entry_id or _rests_on(view, one, entry_id)
                 )
             return Recorded(act.sequence, at)
+
+
+def _judged_already(session: Session, number: str, entry_id: str) -> Assessment | None:
+    """Assess the job as it stands if the entry is closed and so may carry verdicts."""
+    job = queries.read_job(session, number)
+    entry = next((one for one in job.entries if one.id == entry_id), None)
+    closed = not isinstance(entry, RunoutSurvey | SizeSurvey) or entry.closed_at is not None
+    return assess(job) if closed else None
 
 
 def _demand(permission: Permission) -> None:

@@ -2,6 +2,9 @@
 
 from collections.abc import Iterable, Sequence
 from dataclasses import dataclass, replace
+from functools import lru_cache
+
+import msgspec
 
 from models.assess.heat import Heat, heat_facts, item_heat
 from models.assess.questions import open_questions
@@ -9,6 +12,7 @@ from models.assess.runout import (
     StationChange,
     SurveyRunout,
     compare_surveys,
+    read_survey,
     where_the_bend_sits,
 )
 from models.assess.sizes import LandFit, expansion_of, land_fit
@@ -147,19 +151,33 @@ def assess_attempt(
     opened: AttemptOpened,
     entries: Sequence[AnyEntry],
     earlier_sizes: Sequence[SizeSurvey],
-    surveys: dict[str, SurveyRunout],
-    bare_shaft: SurveyRunout | None,
+    baseline: RunoutSurvey | None,
+    bare_shaft: RunoutSurvey | None,
 ) -> Attempt:
-    """Sort, work out and judge one attempt."""
-    step = job.plan.step(opened.place.step or "")
-    number = opened.place.attempt or 1
-    items = tuple(_item_view(job, item, opened, entries, earlier_sizes) for item in step.items)
-    coolings = tuple(one for one in entries if isinstance(one, Cooling))
-    mine = tuple(
-        surveys[one.id] for one in entries if isinstance(one, RunoutSurvey) and one.id in surveys
+    """Sort, work out and judge one attempt.
+
+    An attempt that was worked out before from the same facts is not worked out again: all of it is
+    frozen, so that a new entry costs its own attempt only.
+    """
+    ground = msgspec.structs.replace(job, entries=(), verdicts=(), head=None)
+    return _assess_attempt(
+        ground, opened, tuple(entries), tuple(earlier_sizes), baseline, bare_shaft
     )
-    baseline = surveys.get(opened.baseline or "")
+
+
+@lru_cache(maxsize=1024)
+def _assess_attempt(
+    job: Job,
+    opened: AttemptOpened,
+    entries: tuple[AnyEntry, ...],
+    earlier_sizes: tuple[SizeSurvey, ...],
+    named_baseline: RunoutSurvey | None,
+    bare_shaft: RunoutSurvey | None,
+) -> Attempt:
+    step = job.plan.step(opened.place.step or "")
+    mine = tuple(read_survey(job, one) for one in entries if isinstance(one, RunoutSurvey))
     fresh = [one for one in mine if one.entry.purpose == "before" and one.entry.is_closed]
+    baseline = read_survey(job, named_baseline) if named_baseline else None
     baseline = fresh[-1] if fresh else baseline
     closing = [
         one for one in mine if one.entry.purpose in ("after", "again") and one.entry.is_closed
@@ -167,22 +185,22 @@ def assess_attempt(
     judged = closing[-1] if closing else None
     seat = [one for one in mine if one.entry.purpose == "bare seat" and one.entry.is_closed]
     changes = compare_surveys(job, baseline, judged) if baseline and judged else ()
-    drift = compare_surveys(job, bare_shaft, judged) if bare_shaft and judged else ()
+    bare = read_survey(job, bare_shaft) if bare_shaft else None
     settled = [one for one in entries if isinstance(one, Settled)]
     attempt = Attempt(
         step=step,
-        number=number,
+        number=opened.place.attempt or 1,
         opened=opened,
-        entries=tuple(entries),
-        items=items,
-        coolings=coolings,
+        entries=entries,
+        items=tuple(_item_view(job, item, opened, entries, earlier_sizes) for item in step.items),
+        coolings=tuple(one for one in entries if isinstance(one, Cooling)),
         baseline=baseline,
         surveys=mine,
         judged=judged,
         changes=changes,
         kink=where_the_bend_sits(job, changes),
         seat_survey=seat[-1] if seat else None,
-        drift=drift,
+        drift=compare_surveys(job, bare, judged) if bare and judged else (),
         settled=settled[-1] if settled else None,
         signatures=tuple(one for one in entries if isinstance(one, Signature)),
         decisions=tuple(one for one in entries if isinstance(one, Decision)),

@@ -3,6 +3,8 @@
 from collections.abc import Iterable, Sequence
 from dataclasses import dataclass
 
+import msgspec
+
 from models.assess.attempts import (
     Attempt,
     assess_attempt,
@@ -87,14 +89,15 @@ def live_entries(job: Job) -> tuple[AnyEntry, ...]:
 def assess(job: Job) -> Assessment:
     """Work out and judge a whole job."""
     entries = live_entries(job)
-    surveys = {one.id: read_survey(job, one) for one in entries if isinstance(one, RunoutSurvey)}
+    ground = msgspec.structs.replace(job, entries=(), verdicts=(), head=None)
+    surveys = {one.id: read_survey(ground, one) for one in entries if isinstance(one, RunoutSurvey)}
     bare = [
         surveys[one.id]
         for one in entries
         if isinstance(one, RunoutSurvey) and one.purpose == "bare shaft" and one.is_closed
     ]
     bare_shaft = bare[-1] if bare else None
-    attempts = tuple(_attempts(job, entries, surveys, bare_shaft))
+    attempts = tuple(_attempts(job, entries, bare_shaft.entry if bare_shaft else None))
     findings = tuple(_standing(attempts, _final_findings(job, attempts)))
     progress = _progress(job, entries, attempts, bare_shaft)
     return Assessment(
@@ -111,16 +114,17 @@ def assess(job: Job) -> Assessment:
 def _attempts(
     job: Job,
     entries: Sequence[AnyEntry],
-    surveys: dict[str, SurveyRunout],
-    bare_shaft: SurveyRunout | None,
+    bare_shaft: RunoutSurvey | None,
 ) -> Iterable[Attempt]:
     opened = [one for one in entries if isinstance(one, AttemptOpened)]
+    surveys = {one.id: one for one in entries if isinstance(one, RunoutSurvey)}
     earlier = [
         one for one in entries if isinstance(one, SizeSurvey) and one.place.kind != "attempt"
     ]
     for one in opened:
         mine = [entry for entry in entries if entry.place == one.place]
-        yield assess_attempt(job, one, mine, earlier, surveys, bare_shaft)
+        baseline = surveys.get(one.baseline or "")
+        yield assess_attempt(job, one, mine, earlier, baseline, bare_shaft)
 
 
 def _standing(attempts: Sequence[Attempt], final: Iterable[Finding]) -> Iterable[Standing]:

@@ -2,6 +2,7 @@
 
 from collections.abc import Sequence
 from dataclasses import dataclass
+from functools import cached_property
 
 from models.assess.sizes import LandFit, expansion_of
 from models.engineering.cooling import HotPart
@@ -34,7 +35,17 @@ class Heat:
     coldest_bore: float | None
     hottest: float | None
     spread: float | None
-    window: DropWindow | None
+    fits: tuple[LandFit, ...]
+    shaft_material: str
+    shaft_bore: float
+
+    @cached_property
+    def window(self) -> DropWindow | None:
+        """How long the part may hang in the room and over its seat; None where not enough is known.
+
+        Worked out when it is asked for: no rule rests on it, and it takes longer than all of them.
+        """
+        return _window(self)
 
 
 def land_gauge(heat: Heat, land: str) -> float | None:
@@ -63,7 +74,9 @@ def item_heat(job: Job, item: Item, fits: Sequence[LandFit], heatings: Sequence[
         coldest_bore=min(bore, default=None),
         hottest=max(hottest, default=None),
         spread=max(everywhere) - min(everywhere) if len(everywhere) > 1 else None,
-        window=_window(job, item, fits, shaft_temperature, min(bore, default=None)),
+        fits=tuple(fits),
+        shaft_material=job.plan.shaft.material,
+        shaft_bore=job.plan.shaft.bore.si if job.plan.shaft.bore else 0.0,
     )
 
 
@@ -193,17 +206,12 @@ def _gauge_sizes(
     )
 
 
-def _window(
-    job: Job,
-    item: Item,
-    fits: Sequence[LandFit],
-    shaft_temperature: float | None,
-    coldest_bore: float | None,
-) -> DropWindow | None:
-    part, shaft = MATERIALS.get(item.material or ""), MATERIALS.get(job.plan.shaft.material)
+def _window(heat: Heat) -> DropWindow | None:
+    item = heat.item
+    part, shaft = MATERIALS.get(item.material or ""), MATERIALS.get(heat.shaft_material)
     part_expansion = expansion_of(item.material)
-    shaft_expansion = expansion_of(job.plan.shaft.material)
-    tight = [fit for fit in fits if fit.interference is not None]
+    shaft_expansion = expansion_of(heat.shaft_material)
+    tight = [fit for fit in heat.fits if fit.interference is not None]
     if (
         part is None
         or shaft is None
@@ -212,8 +220,8 @@ def _window(
         or part.conductivity is None
         or part.specific_heat is None
         or shaft.specific_heat is None
-        or coldest_bore is None
-        or shaft_temperature is None
+        or heat.coldest_bore is None
+        or heat.shaft_temperature is None
         or not tight
     ):
         return None
@@ -222,7 +230,6 @@ def _window(
         return None
     if worst.bore.at_reference is None:
         return None
-    hollow = job.plan.shaft.bore
     try:
         return drop_window(
             part=HotPart(
@@ -235,14 +242,14 @@ def _window(
             ),
             seat=Seat(
                 diameter=worst.seat.at_reference.greatest,
-                temperature=shaft_temperature,
+                temperature=heat.shaft_temperature,
                 density=shaft.density,
                 specific_heat=shaft.specific_heat,
                 expansion=shaft_expansion,
-                inner_diameter=hollow.si if hollow else 0.0,
+                inner_diameter=heat.shaft_bore,
             ),
             part_expansion=part_expansion,
-            bore_temperature=coldest_bore,
+            bore_temperature=heat.coldest_bore,
             air_temperature=_ROOM_TEMPERATURE,
         )
     except OutOfRangeError:

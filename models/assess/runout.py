@@ -3,6 +3,7 @@
 import math
 from collections.abc import Sequence
 from dataclasses import dataclass
+from functools import lru_cache
 
 import numpy as np
 import numpy.typing as npt
@@ -136,8 +137,13 @@ def read_station(job: Job, survey: RunoutSurvey, readings: StationReadings) -> S
     )
 
 
+@lru_cache(maxsize=1024)
 def read_survey(job: Job, survey: RunoutSurvey) -> SurveyRunout:
-    """Turn a survey into vectors, and into the journal axis once both journals are read."""
+    """Turn a survey into vectors, and into the journal axis once both journals are read.
+
+    A survey read before is not read again; give the job without its entries, so that it is known
+    again after the next one.
+    """
     stations = tuple(read_station(job, survey, one) for one in survey.stations)
     keys = [one.key for one in stations]
     in_axis = uncertainty = None
