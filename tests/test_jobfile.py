@@ -361,6 +361,26 @@ def test_what_is_written_and_read_is_written_as_the_same_bytes():
     assert jobfile.dumps(jobfile.loads(written)) == written
 
 
+def test_equal_jobs_give_equal_bytes_however_they_came_about():
+    read = jobfile.loads(GOOD)
+    rotor = read.plan.rotor
+    end = "".join(["drive", " ", "end"])  # equal to the default, and another object
+    spelled = msgspec.structs.replace(rotor, first_end=end)
+    plan = msgspec.structs.replace(read.plan, rotor=spelled, approved_by=str(b"", "ascii"))
+    made = msgspec.structs.replace(read, plans=(plan,))
+
+    assert made == read
+    assert jobfile.dumps(made) == jobfile.dumps(read)
+
+
+def test_a_whole_number_among_the_inputs_of_a_verdict_is_written_as_it_is_read():
+    job = jobfile.loads(GOOD)
+    verdict = msgspec.structs.replace(job.verdicts[0], inputs={"marks": 8, "judged": True})
+    written = jobfile.dumps(msgspec.structs.replace(job, verdicts=(verdict,)))
+
+    assert jobfile.dumps(jobfile.loads(written)) == written
+
+
 def test_names_stand_in_the_order_of_the_types_however_the_file_had_them():
     document = small_job.document()
     turned = dict(reversed(document.items()))

@@ -73,7 +73,7 @@ def dumps(job: Job) -> bytes:
     JobFileError
         If a stored verdict holds a number that JSON cannot hold.
     """
-    document: dict[str, Any] = msgspec.to_builtins(job, enc_hook=_written)
+    document: dict[str, Any] = _plain(job)
     # Defaults are left out, but these two are what tells the file from any other JSON.
     document = {"form": job.form, "edition": job.edition} | document
     refuse_first(odd_values(document, ""))
@@ -183,10 +183,33 @@ def _at(document: Any, place: str) -> object:  # noqa: ANN401  (any JSON documen
     return node
 
 
-def _written(part: object) -> str:
+def _plain(part: Any) -> Any:  # noqa: ANN401  (any part of a job, and its form in JSON)
     if isinstance(part, units.Quantity):
-        unit = part.units[part.unit]
-        # After a number, "1e-6/K" would read as more digits of it; another name of it does not.
-        symbol = unit.aliases[0] if unit.symbol[:1].isdigit() else unit.symbol
-        return f"{part.typed} {symbol}".strip()
-    raise NotImplementedError(f"{part!r} has no written form")
+        return _written(part)
+    if isinstance(part, msgspec.Struct):
+        return _plain_struct(part)
+    if isinstance(part, tuple):
+        return [_plain(one) for one in part]
+    if isinstance(part, dict):
+        # Only the inputs of a verdict are named freely, and their numbers are floats when read.
+        return {key: float(one) if type(one) is int else one for key, one in part.items()}
+    return part
+
+
+def _plain_struct(part: msgspec.Struct) -> dict[str, Any]:
+    # msgspec's own omission of defaults goes by identity, so that one job read and one made would
+    # be written differently.
+    tag = part.__struct_config__.tag
+    plain: dict[str, Any] = {str(part.__struct_config__.tag_field): tag} if tag else {}
+    for field in msgspec.structs.fields(part):
+        value = getattr(part, field.name)
+        if field.default is msgspec.NODEFAULT or value != field.default:
+            plain[field.encode_name] = _plain(value)
+    return plain
+
+
+def _written(quantity: units.Quantity) -> str:
+    unit = quantity.units[quantity.unit]
+    # After a number, "1e-6/K" would read as more digits of it; another name of it does not.
+    symbol = unit.aliases[0] if unit.symbol[:1].isdigit() else unit.symbol
+    return f"{quantity.typed} {symbol}".strip()
