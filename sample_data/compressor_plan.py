@@ -105,7 +105,7 @@ def _text(inches: float, decimals: int = 3) -> str:
 
 
 def _lands(part: _Part) -> tuple[Land, ...]:
-    rows = part.lands or (("land", part.start + 0.2, part.end - 0.2),)
+    rows = part.lands or (("1", part.start + 0.2, part.end - 0.2),)
     least, greatest = (f"{part.seat * ratio:.4f} in" for ratio in part.per_inch)
     return tuple(
         Land(

@@ -157,7 +157,7 @@ def _inches(
 ) -> Diameter:
     return Diameter(
         item=item,
-        land="land",
+        land="1",
         seat=seat * INCH,
         bore=(seat - interference) * INCH,
         taper=0.0001 * INCH,
@@ -309,15 +309,15 @@ PUMP = Truth(
     ),
     diameters=(
         *(
-            _fit(f"impeller-{number}", seat, interference, 20.0 * number, "land")
+            _fit(f"impeller-{number}", seat, interference, 20.0 * number, "1")
             for number, (seat, interference) in enumerate(
                 zip(_IMPELLER_SEATS, _IMPELLER_FITS, strict=True), start=1
             )
         ),
         _fit("drum", 80.00, 0.055, 15.0, "inner"),
         _fit("drum", 79.90, 0.053, 70.0, "outer"),
-        _fit("thrust-collar", 65.00, 0.036, 120.0, "land"),
-        _fit("hub", 60.00, 0.046, 45.0, "land"),
+        _fit("thrust-collar", 65.00, 0.036, 120.0, "1"),
+        _fit("hub", 60.00, 0.046, 45.0, "1"),
     ),
     ovens=(
         *(Oven(f"impeller-{number}", usual_set_point=190.0, lag=2.0) for number in range(1, 9)),

@@ -1,0 +1,1 @@
+"""Tests of the pure functions: published tables, limits, second paths, properties."""
