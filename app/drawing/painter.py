@@ -2,6 +2,8 @@
 
 from __future__ import annotations
 
+import math
+
 from PySide6.QtCore import QLineF, QPointF, QRectF, Qt
 from PySide6.QtGui import QFontMetricsF, QPainter, QPen, QPolygonF
 
@@ -24,6 +26,9 @@ from reports.sheet.elements import (
 )
 
 __all__ = ["paint_sheet"]
+
+_WIDE_ENOUGH_TO_BLUR = 2.25
+"""Device pixels from which a grey edge no longer makes a line look out of focus [-]."""
 
 
 def paint_sheet(
@@ -104,8 +109,12 @@ class _Painted:
         return pen
 
     def pen_width(self, stroke: Stroke) -> float:
-        """Give a stroke's width in device-independent pixels."""
-        return self.sheet.medium.width(stroke.width) * self.scale
+        """Give a stroke's width in device-independent pixels, a thin one in whole device pixels."""
+        width = self.sheet.medium.width(stroke.width) * self.scale
+        device_width = width * self.ratio
+        if device_width < _WIDE_ENOUGH_TO_BLUR:
+            return max(1.0, math.floor(device_width + 0.5)) / self.ratio
+        return width
 
     def fill(self, token: Colour | None) -> None:
         """Choose what areas are filled with."""
@@ -140,8 +149,7 @@ class _Painted:
 
     def whole(self, value: float, width: float) -> float:
         """Put the middle of a line where its edges fall between device pixels."""
-        device_width = max(1, round(width * self.ratio))
-        shift = 0.5 if device_width % 2 else 0.0
+        shift = 0.5 if round(width * self.ratio) % 2 else 0.0
         return (round(value * self.ratio - shift) + shift) / self.ratio
 
     def polyline(self, points: tuple[Point, ...], stroke: Stroke) -> None:
