@@ -64,8 +64,9 @@ def time_over_seat(
         C_s \dot T_s = h_g A_b (T_p - T_s), \quad c(T_p, T_s) \to 0
 
     The least: a shaft that keeps all the heat below the part and grows with it, or none where that
-    is sooner, a part that hangs out of centre, dark surfaces. The greatest: a shaft that stays as it is, a centred part, bright
-    surfaces, and the way from the middle of the wall to the bore in series.
+    is sooner, a part that hangs out of centre, dark surfaces. The greatest: a shaft that stays as
+    it is, a centred part, bright surfaces, and the way from the middle of the wall to the bore in
+    series.
 
     Parameters
     ----------
