@@ -158,6 +158,14 @@ def test_turning_the_reference_mark_turns_the_residual_with_it(turn: float) -> N
     assert cmath.exp(1j * check.angle) == pytest.approx(cmath.exp(1j * (1.0 + turn)))
 
 
+def test_four_readings_leave_one_degree_of_freedom_to_the_scatter() -> None:
+    # By hand: ± 0.1 about 1 in turn fits no circle; √(4 · 0.1² / 1) = 0.2.
+    check = residual_from_amplitudes(
+        trial_unbalance=1.0, angles=places(4), amplitudes=[1.1, 0.9, 1.1, 0.9]
+    )
+    assert check.scatter == published.printed("0.2")
+
+
 def test_scatter_tells_a_noisy_round_from_a_clean_one() -> None:
     noise = np.random.default_rng(3).normal(0.0, 0.02, 400)
     angles = places(400)
