@@ -1,6 +1,9 @@
 """Compare what a file holds with what the program made: tables, indices, triggers."""
 
 import re
+from collections.abc import Mapping
+from functools import cache
+from types import MappingProxyType
 
 from sqlalchemy import Connection
 from sqlalchemy.dialects import sqlite
@@ -14,7 +17,8 @@ __all__ = ["differences", "expected_objects", "found_objects"]
 _SPACE = re.compile(r"\s+|(?<=[(),])|(?=[(),])")
 
 
-def expected_objects() -> dict[tuple[str, str], str]:
+@cache
+def expected_objects() -> Mapping[tuple[str, str], str]:
     """Write out every table, index and trigger as the program makes them."""
     dialect = sqlite.dialect()
     expected: dict[tuple[str, str], str] = {}
@@ -25,7 +29,7 @@ def expected_objects() -> dict[tuple[str, str], str]:
             expected["index", str(index.name)] = _plain(text)
     for name, text in trigger_texts(Base.metadata, changeable=CHANGEABLE).items():
         expected["trigger", name] = _plain(text)
-    return expected
+    return MappingProxyType(expected)
 
 
 def found_objects(connection: Connection) -> dict[tuple[str, str], str]:

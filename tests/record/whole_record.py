@@ -1,0 +1,92 @@
+"""A record with a row in every table, and ways to work on its file behind the program's back."""
+
+import sqlite3
+from collections.abc import Iterator
+from contextlib import contextmanager
+
+import msgspec
+from sqlalchemy import create_engine
+from sqlalchemy.orm import Session
+from sqlalchemy.pool import StaticPool
+
+from models.job import GaugeTry, Hot, Place, Question, RunoutReading, SizeReading, Warmth
+from models.record import journal
+from models.record.act import Act
+from models.record.places import AnyReading
+from models.record.store import Store
+from models.record.tables import CHANGEABLE
+from models.units import Angle
+from tests.record.a_job import ANGLES, NUMBER, a_job, a_survey, at, celsius, mm
+
+__all__ = ["behind_the_back", "fill", "one_act", "tables_of"]
+
+
+@contextmanager
+def one_act(
+    store: Store, act_id: str, *, chain: str | None = NUMBER, **more: object
+) -> Iterator[Act]:
+    facts: dict[str, object] = {"kind": "entered", "by": "tom", "done_at": at(200), **more}
+    with (
+        store.writing() as session,
+        journal.act(session, chain=chain, act_id=act_id, **facts) as act,
+    ):
+        yield act
+
+
+def fill(store: Store) -> None:
+    """Bring a whole job in, replace one of each kind of reading, and give the shop its people."""
+    job = a_job()
+    with store.writing() as session:
+        journal.bring_in(session, job, by="tom", act_id="brought")
+    with one_act(store, "shop", chain=journal.SHOP) as act:
+        act.add_people(job.people)
+        act.add_instruments(job.instruments)
+    with one_act(store, "shop again", chain=journal.SHOP) as act:
+        act.add_people([msgspec.structs.replace(job.people[0], role="inspector")])
+        act.add_instruments([msgspec.structs.replace(job.instruments[0], range="0 to 2 mm")])
+    with one_act(store, "facts again") as act:
+        act.add_components([msgspec.structs.replace(job.components[0], revision="C")])
+    with one_act(store, "opened") as act:
+        act.add_entry(a_survey("open", Place(kind="final"), 199, purpose="final"))
+    for number, (entry_id, reading, reason) in enumerate(_READINGS):
+        with one_act(store, f"reading {number}") as act:
+            act.add_reading(entry_id, reading, reason=reason)
+    with one_act(store, "asked") as act:
+        act.add_question(
+            "open",
+            Question(where=("middle", "0"), question="7?", answer="yes", by="tom", at=at(201)),
+        )
+
+
+_READINGS: tuple[tuple[str, AnyReading, str | None], ...] = (
+    ("open", RunoutReading(station="middle", mark=0, typed="7"), None),
+    ("open", RunoutReading(station="middle", mark=0, typed="8"), "misread"),
+    ("bore", SizeReading(position=0, angle=0, typed="119.9"), "misread"),
+    (
+        "heat",
+        Hot(where="rim", temperature=celsius("260"), at=at(51), angle=Angle.read("90°")),
+        "misread",
+    ),
+    ("heat", GaugeTry(land="front", size=mm("120.31"), passed=True, at=at(52)), "misread"),
+    ("cool", Warmth(position=mm("450"), angle=ANGLES[0], temperature=celsius("20")), "misread"),
+)
+
+
+@contextmanager
+def behind_the_back(store: Store) -> Iterator[tuple[sqlite3.Connection, Session]]:
+    """Open the file as another program would; what is done is undone at the end."""
+    raw = sqlite3.connect(store.path, isolation_level=None)
+    engine = create_engine("sqlite://", creator=lambda: raw, poolclass=StaticPool)
+    try:
+        with Session(engine) as session:
+            # SQLAlchemy ends whatever is under way when it meets a connection.
+            session.connection()
+            yield raw, session
+    finally:
+        raw.close()
+
+
+def tables_of(raw: sqlite3.Connection) -> list[str]:
+    """List the tables in the live schema whose rows must not change."""
+    rows = raw.execute("SELECT name FROM sqlite_schema WHERE type = 'table' ORDER BY name")
+    return [name for (name,) in rows if name not in CHANGEABLE]
