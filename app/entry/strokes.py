@@ -47,6 +47,7 @@ _KEYS = {
     Qt.Key.Key_Backspace: Act.ERASE,
     Qt.Key.Key_Escape: Act.CLEAR,
 }
+_LINE_ENDS = ("\r", "\n", "\r\n")
 _COMMANDS = (
     Qt.KeyboardModifier.ControlModifier
     | Qt.KeyboardModifier.AltModifier
@@ -72,6 +73,9 @@ def stroke_of(event: QKeyEvent, *, at: float) -> Stroke | None:
     if event.modifiers() & _COMMANDS:
         return None
     act = _KEYS.get(Qt.Key(event.key()))
+    if act is None and event.text() in _LINE_ENDS:
+        # Some indicators end with a line feed, which is no Enter key to the window system.
+        act = Act.TAKE
     if act is not None:
         return Stroke(act=act, at=at)
     if event.text() and event.text().isprintable():
