@@ -5,15 +5,17 @@ from __future__ import annotations
 from dataclasses import dataclass, replace
 
 from PySide6.QtCore import QPointF, QRect, QRectF, QSize, Qt
-from PySide6.QtGui import QFontMetricsF, QPainter, QPen
+from PySide6.QtGui import QFont, QFontMetricsF, QPainter, QPen
 from PySide6.QtWidgets import QWidget
 
 from app.entry.cell_state import Asked, CellState
+from app.frame.key import KEY_WORDS_SHARE
 from app.frame.lettering import draw_at, draw_struck, fitted, wrapped
 from app.frame.look import Look
 from app.frame.plain import flat_painter
 from reports.palette import Colour
 from reports.sheet.medium import LineWidth, Size
+from reports.typeface import Weight
 
 __all__ = ["CellFace", "paint_cell", "place_cell"]
 
@@ -83,7 +85,7 @@ class CellFace:
         elif self.double:
             notice, words, hint = "sent twice, taken once", "Both were meant", "F2"
         elif self.cleared:
-            notice, words, hint = f"cleared {self.cleared}", "Undo", "Ctrl+Z"
+            notice, words, hint = f"cleared {self.cleared.replace('-', '−')}", "Undo", "Ctrl+Z"
         elif self.state is CellState.CORRECTING and not notice:
             needed = self.asked is not None and self.asked.reason_needed and not self.reason
             notice = self.reasons if needed else ""
@@ -113,9 +115,28 @@ class CellFace:
         return self.asked.old or ""
 
 
-def _unit_width(face: CellFace, look: Look) -> float:
-    note = QFontMetricsF(look.note_font())
-    title = QFontMetricsF(look.font(Size.TITLE))
+def _note(size: QSize, look: Look) -> QFont:
+    """Give the font of sentences; in a low cell it does not grow over the figures."""
+    font = look.note_font()
+    font.setPixelSize(max(min(font.pixelSize(), round(size.height() * 0.17)), 8))
+    return font
+
+
+def _lead(size: QSize, look: Look) -> QFont:
+    font = look.font(Size.LEAD)
+    font.setPixelSize(max(min(font.pixelSize(), round(size.height() * 0.24)), 8))
+    return font
+
+
+def _title(size: QSize, look: Look) -> QFont:
+    font = look.font(Size.TITLE)
+    font.setPixelSize(max(min(font.pixelSize(), round(size.height() * 0.32)), 8))
+    return font
+
+
+def _unit_width(face: CellFace, size: QSize, look: Look) -> float:
+    note = QFontMetricsF(_note(size, look))
+    title = QFontMetricsF(_title(size, look))
     widest = max(note.horizontalAdvance(text) for text in (_USUAL_OTHER, face.other))
     return max(widest, title.horizontalAdvance(face.symbol)) + _PADDING
 
@@ -123,7 +144,7 @@ def _unit_width(face: CellFace, look: Look) -> float:
 def _notice_lines(face: CellFace, size: QSize, look: Look) -> tuple[list[str], float]:
     if not face.notice:
         return [], 0.0
-    font = look.note_font()
+    font = _note(size, look)
     room = size.width() - 2.0 * _PADDING
     if face.help_words:
         room -= _help_width(face, look) + _PADDING
@@ -132,16 +153,23 @@ def _notice_lines(face: CellFace, size: QSize, look: Look) -> tuple[list[str], f
 
 
 def _help_width(face: CellFace, look: Look) -> float:
-    words = QFontMetricsF(look.font(Size.TEXT, condensed=look.window_width < 1920.0))
-    hint = QFontMetricsF(look.note_font())
-    wide = words.horizontalAdvance(face.help_words) * 1.06 + 24.0
-    return wide + (hint.horizontalAdvance(face.help_hint) + 12.0 if face.help_hint else 0.0)
+    # As wide as the words at the size that a key of the least height gives them.
+    size = min(look.size(Size.TEXT), look.touch * KEY_WORDS_SHARE)
+    words = look.font(size, weight=Weight.MEDIUM, condensed=look.window_width < 1920.0)
+    wide = QFontMetricsF(words).horizontalAdvance(face.help_words) + 24.0
+    if face.help_hint:
+        wide += QFontMetricsF(words).horizontalAdvance(face.help_hint) + 10.0
+    return wide
 
 
 def _bands(face: CellFace, size: QSize, look: Look) -> tuple[float, float]:
     """Give the top and the bottom of the figures' room."""
     edge = look.line(LineWidth.HEAVY) + 2.0
-    above = look.size(Size.LEAD) if face.above and face.state is not CellState.TROUBLE else 0.0
+    above = (
+        float(_lead(size, look).pixelSize())
+        if face.above and face.state is not CellState.TROUBLE
+        else 0.0
+    )
     _, below = _notice_lines(face, size, look)
     if face.help_words:
         below = max(below, look.touch)
@@ -165,7 +193,7 @@ def place_cell(face: CellFace, size: QSize, look: Look, edit: QWidget, key: QWid
     """
     top, bottom = _bands(face, size, look)
     left = _PADDING + look.line(LineWidth.HEAVY)
-    width = size.width() - left - _unit_width(face, look) - 8.0
+    width = size.width() - left - _unit_width(face, size, look) - 8.0
     edit.setGeometry(QRect(round(left), round(top), round(width), max(round(bottom - top), 1)))
     edge = round(look.line(LineWidth.HEAVY))
     wide = round(_help_width(face, look))
@@ -202,20 +230,20 @@ def paint_cell(widget: QWidget, face: CellFace, look: Look, *, focused: bool) ->
         bar = look.line(LineWidth.HEAVY) * 2.5
         painter.fillRect(QRectF(0.0, 0.0, bar, frame.height()), look.colour(Colour.STOP))
     _paint_units(painter, face, widget.size(), look)
-    _paint_above(painter, face, look)
+    _paint_above(painter, face, widget.size(), look)
     _paint_notice(painter, face, widget.size(), look)
     painter.end()
 
 
 def _paint_units(painter: QPainter, face: CellFace, size: QSize, look: Look) -> None:
     top, bottom = _bands(face, size, look)
-    left = size.width() - _unit_width(face, look)
+    left = size.width() - _unit_width(face, size, look)
     painter.setPen(look.colour(Colour.INK2))
-    painter.setFont(look.note_font())
+    painter.setFont(_note(size, look))
     base = look.line(LineWidth.HEAVY) + 8.0 + QFontMetricsF(painter.font()).ascent() * 0.85
     right = size.width() - _PADDING
     draw_at(painter, QPointF(right, base), face.other, align=Qt.AlignmentFlag.AlignRight)
-    title = look.font(Size.TITLE)
+    title = _title(size, look)
     room = max(bottom - base - 4.0, 8.0)
     title.setPixelSize(max(min(title.pixelSize(), int(room)), 8))
     painter.setFont(title)
@@ -224,21 +252,21 @@ def _paint_units(painter: QPainter, face: CellFace, size: QSize, look: Look) -> 
     draw_at(painter, QPointF(left, max(unit_base, base + title.pixelSize())), face.symbol)
 
 
-def _paint_above(painter: QPainter, face: CellFace, look: Look) -> None:
+def _paint_above(painter: QPainter, face: CellFace, size: QSize, look: Look) -> None:
     if not face.above or face.state is CellState.TROUBLE:
         return
     left = _PADDING + look.line(LineWidth.HEAVY)
     painter.setPen(look.colour(Colour.INK2))
-    base = look.line(LineWidth.HEAVY) + 2.0 + look.size(Size.LEAD) * 0.86
+    base = look.line(LineWidth.HEAVY) + 2.0 + _lead(size, look).pixelSize() * 0.86
     if face.asked is not None and face.asked.closing is not None:
-        painter.setFont(look.note_font())
+        painter.setFont(_note(size, look))
         draw_at(painter, QPointF(left, base), face.above)
         return
-    painter.setFont(look.font(Size.LEAD))
+    painter.setFont(_lead(size, look))
     rule = look.line(LineWidth.WIDE)
     right = draw_struck(painter, QPointF(left + 4.0, base), face.above, rule=rule)
     if face.reason:
-        painter.setFont(look.note_font())
+        painter.setFont(_note(size, look))
         draw_at(painter, QPointF(right + 16.0, base), f"because: {face.reason}")
 
 
@@ -247,7 +275,7 @@ def _paint_notice(painter: QPainter, face: CellFace, size: QSize, look: Look) ->
     if not lines:
         return
     painter.setPen(look.colour(Colour.INK))
-    font = look.note_font()
+    font = _note(size, look)
     painter.setFont(fitted(font, lines, width=size.width() - 2.0 * _PADDING))
     left = _PADDING + look.line(LineWidth.HEAVY)
     step = font.pixelSize() * 1.15

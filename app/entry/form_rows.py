@@ -20,6 +20,7 @@ __all__ = ["ChoiceRow", "FormRow", "LineRow"]
 _GAP = 8
 _LABEL_SHARE = 0.42
 _EDIT_SHARE = 0.3
+_LEAST_LABEL = 12
 _ENTER = (Qt.Key.Key_Return, Qt.Key.Key_Enter)
 
 
@@ -124,10 +125,12 @@ class FormRow(PlainWidget):
         room = self.control_left() - 16.0
         font = look.font(Size.TEXT)
         height = self.control_height()
-        lines = wrapped(self._field.label, font, width=room, most=2)
-        if len(lines) > 1:
-            font.setPixelSize(min(font.pixelSize(), int(height / 2.3)))
-            lines = wrapped(self._field.label, font, width=room, most=2)
+        lines = wrapped(self._field.label, font, width=room)
+        while len(lines) > 1 and font.pixelSize() > _LEAST_LABEL:
+            if len(lines) * font.pixelSize() * 1.12 <= height:
+                break
+            font.setPixelSize(font.pixelSize() - 1)
+            lines = wrapped(self._field.label, font, width=room)
         step = font.pixelSize() * 1.12
         painter.setFont(font)
         painter.setPen(look.colour(Colour.INK))

@@ -21,6 +21,7 @@ from reports.typeface import Weight
 __all__ = ["Ladder", "Rung"]
 
 _LEAST_HEIGHT = 44.0
+_LEAST_OF_MARKS = 0.75
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)
@@ -70,6 +71,7 @@ class _RungKey(PlainButton):
     def __init__(self, rung: Rung, *, look: Look, parent: Ladder) -> None:
         super().__init__(rung.mark, look=look, parent=parent)
         self.rung = rung
+        self._ladder = parent
         self.setFocusPolicy(Qt.FocusPolicy.NoFocus)
 
     def show_rung(self, rung: Rung) -> None:
@@ -80,28 +82,23 @@ class _RungKey(PlainButton):
 
     def keyPressEvent(self, event: QKeyEvent) -> None:
         """Walk along the ladder."""
-        ladder = self.parentWidget()
         step = {Qt.Key.Key_Left: -1, Qt.Key.Key_Right: 1}.get(Qt.Key(event.key()))
-        if step is not None and isinstance(ladder, Ladder):
-            ladder.walk(self, step)
+        if step is not None:
+            self._ladder.walk(self, step)
             return
         super().keyPressEvent(event)
 
     def paintEvent(self, event: QPaintEvent) -> None:
-        """Paint mark, reading, struck readings and question."""
+        """Paint reading, struck readings and question; the ladder paints the mark."""
         painter = flat_painter(self)
         look, rung = self.look, self.rung
         width = float(self.width())
         middle = width / 2.0
         centre = Qt.AlignmentFlag.AlignHCenter
-        ladder = self.parentWidget()
-        shrunk = ladder.shrinking() if isinstance(ladder, Ladder) else 1.0
+        shrunk = self._ladder.shrinking()
         note = look.note_font(weight=Weight.SEMI_BOLD if rung.active else Weight.REGULAR)
         note.setPixelSize(max(round(note.pixelSize() * shrunk), 8))
-        painter.setFont(fitted(note, [rung.mark], width=width - 2.0))
-        painter.setPen(look.colour(Colour.ACCENT if rung.active else Colour.INK2))
         base = note.pixelSize() * 1.0
-        draw_at(painter, QPointF(middle, base), rung.mark, align=centre)
         base += look.size(Size.LEAD) * shrunk
         self._paint_value(painter, middle, base, shrunk)
         small = look.note_font()
@@ -124,13 +121,14 @@ class _RungKey(PlainButton):
     def _paint_value(self, painter: QPainter, middle: float, base: float, shrunk: float) -> None:
         look, rung = self.look, self.rung
         shown, colour, weight = rung.value, Colour.INK, Weight.MEDIUM
+        size = Size.LEAD
         if not shown and rung.active:
             shown, colour, weight = "…", Colour.ACCENT, Weight.SEMI_BOLD
         elif not shown and rung.skipped:
-            shown, colour = "none", Colour.INK2
+            shown, colour, size = "none", Colour.INK2, Size.NOTE
         elif not shown:
             shown, colour = "—", Colour.HAIR
-        font = look.font(look.size(Size.LEAD) * shrunk, weight=weight)
+        font = look.font(look.size(size) * shrunk, weight=weight)
         shape = look.between(narrow=16.0, wide=20.0) if rung.questioned else 0.0
         gap = 4.0 if shape else 0.0
         font = fitted(font, [shown], width=self.width() - 2.0 - shape - gap)
@@ -225,6 +223,37 @@ class Ladder(PlainWidget):
         if 0 <= place < len(self._keys):
             self._keys[place].setFocus(Qt.FocusReason.OtherFocusReason)
 
+    def _paint_marks(self, painter: QPainter) -> None:
+        if not self._keys:
+            return
+        full = self._look.note_font(weight=Weight.SEMI_BOLD)
+        full.setPixelSize(max(round(full.pixelSize() * self.shrinking()), 8))
+        base = float(full.pixelSize())
+        room = self.width() / len(self._keys) - 2.0
+        marks = [key.rung.mark for key in self._keys]
+        every = 1
+        size = fitted(full, marks, width=room).pixelSize()
+        if size < _LEAST_OF_MARKS * full.pixelSize():
+            # Overfull: every second mark goes unnamed, so that the others can be read.
+            every = 2
+            size = fitted(full, marks[::2], width=1.9 * room).pixelSize()
+        active = next((at for at, key in enumerate(self._keys) if key.rung.active), None)
+        for place, key in enumerate(self._keys):
+            crowded = active is not None and every > 1 and abs(place - active) == 1
+            if place != active and (place % every or crowded):
+                continue
+            weight = Weight.SEMI_BOLD if place == active else Weight.REGULAR
+            font = self._look.note_font(weight=weight)
+            font.setPixelSize(size)
+            painter.setFont(font)
+            painter.setPen(self._look.colour(Colour.ACCENT if place == active else Colour.INK2))
+            middle = key.geometry().left() + key.width() / 2.0
+            advance = QFontMetricsF(font).horizontalAdvance(key.rung.mark)
+            middle = min(max(middle, advance / 2.0), self.width() - advance / 2.0)
+            draw_at(
+                painter, QPointF(middle, base), key.rung.mark, align=Qt.AlignmentFlag.AlignHCenter
+            )
+
     def _place(self) -> None:
         if not self._keys:
             return
@@ -269,8 +298,9 @@ class Ladder(PlainWidget):
         self._place()
 
     def paintEvent(self, event: QPaintEvent) -> None:
-        """Paint the caption; the marks paint themselves."""
+        """Paint the marks and the caption."""
         painter = flat_painter(self)
+        self._paint_marks(painter)
         font = self._look.note_font()
         font.setPixelSize(max(round(font.pixelSize() * self.shrinking()), 8))
         font = fitted(font, [self._caption], width=float(self.width()))

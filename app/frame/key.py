@@ -13,9 +13,13 @@ from reports.palette import Colour
 from reports.sheet.medium import LineWidth, Size
 from reports.typeface import Weight
 
-__all__ = ["Key"]
+__all__ = ["KEY_WORDS_SHARE", "Key"]
+
+KEY_WORDS_SHARE = 0.52
+"""Greatest size of the words on a key as a share of its height [-]."""
 
 _PADDING = 8.0
+_ONE_LINE_FROM = 0.8
 
 
 class Key(PlainButton):
@@ -120,13 +124,21 @@ class Key(PlainButton):
         left = frame.left()
         room = frame.width() - 2.0 * _PADDING
         if self._hint:
-            painter.setFont(self._hint_font())
+            hint = self._hint_font()
+            hint.setPixelSize(max(min(hint.pixelSize(), round(frame.height() * 0.46)), 8))
+            painter.setFont(hint)
             advance = QFontMetricsF(painter.font()).horizontalAdvance(self._hint)
             base = frame.center().y() + QFontMetricsF(painter.font()).capHeight() / 2.0
             draw_at(painter, QPointF(frame.left() + _PADDING, base), self._hint)
             left += advance + _PADDING
             room -= advance + _PADDING
         font = self._font()
+        tallest = round(frame.height() * KEY_WORDS_SHARE)
+        font.setPixelSize(max(min(font.pixelSize(), tallest), 8))
+        least = font.pixelSize() * _ONE_LINE_FROM
+        one_line = fitted(font, [self.text()], width=room, least=least)
+        if QFontMetricsF(one_line).horizontalAdvance(self.text()) <= room:
+            font = one_line
         lines = wrapped(self.text(), font, width=room)
         step = font.pixelSize() * 1.15
         if len(lines) * step > frame.height() - 4.0:

@@ -99,11 +99,11 @@ class MessageStrip(PlainWidget):
         keys = [key for key in (self._away, self._key) if not key.isHidden()]
         return sum(key.sizeHint().width() + _PADDING for key in keys)
 
-    def _lines(self) -> list[tuple[str, QFont]]:
+    def _lines(self, width: float) -> list[tuple[str, QFont]]:
         message = self._message
         if message is None:
             return []
-        room = self.width() - self._edge() - 2.0 * _PADDING - self._keys_width()
+        room = width - self._edge() - 2.0 * _PADDING - self._keys_width()
         head = self._look.font(Size.TEXT, weight=Weight.SEMI_BOLD)
         body = self._look.font(Size.TEXT)
         rest = " ".join(part for part in (message.where, message.way_out) if part)
@@ -115,7 +115,7 @@ class MessageStrip(PlainWidget):
     def heightForWidth(self, width: int) -> int:
         """Give the height the words need at a width."""
         step = line_step(self._look.font(Size.TEXT))
-        return round(max(len(self._lines()) * step + _PADDING, self._look.touch + _PADDING))
+        return round(max(len(self._lines(width)) * step + _PADDING, self._look.touch + _PADDING))
 
     def sizeHint(self) -> QSize:
         """Give the whole width, and the height its words need."""
@@ -154,7 +154,7 @@ class MessageStrip(PlainWidget):
         thin = look.line(LineWidth.NARROW)
         for top in (0.0, self.height() - thin):
             painter.fillRect(QRectF(0.0, top, self.width(), thin), look.colour(Colour.INK2))
-        lines = self._lines()
+        lines = self._lines(self.width())
         step = line_step(look.font(Size.TEXT))
         base = (self.height() - step * len(lines)) / 2.0 + step * 0.76
         painter.setPen(look.colour(Colour.INK))

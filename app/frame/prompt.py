@@ -5,7 +5,7 @@ from __future__ import annotations
 from dataclasses import dataclass
 
 from PySide6.QtCore import QPointF, QSize
-from PySide6.QtGui import QFontMetricsF, QPainter, QPaintEvent
+from PySide6.QtGui import QFont, QFontMetricsF, QPainter, QPaintEvent
 from PySide6.QtWidgets import QWidget
 
 from app.frame.lettering import draw_at, fitted
@@ -43,6 +43,13 @@ class Prompt:
     def spoken(self) -> str:
         """The prompt as one text, for somebody who hears it."""
         return "; ".join(part for part in (self.mark, self.head, *self.lines) if part)
+
+
+def _no_taller(font: QFont, text: str, *, height: float) -> QFont:
+    inked = QFontMetricsF(font).tightBoundingRect(text).height()
+    if inked > height > 0.0:
+        font.setPixelSize(max(int(font.pixelSize() * height / inked), 8))
+    return font
 
 
 class PromptBlock(PlainWidget):
@@ -89,8 +96,12 @@ class PromptBlock(PlainWidget):
         font = fitted(font, [self._prompt.mark], width=self.width() * _GREATEST_SHARE)
         painter.setFont(font)
         painter.setPen(look.colour(Colour.INK))
-        capital = QFontMetricsF(font).capHeight()
-        right = draw_at(painter, QPointF(2.0, (self.height() + capital) / 2.0), self._prompt.mark)
+        font = _no_taller(font, self._prompt.mark, height=float(self.height()))
+        painter.setFont(font)
+        inked = QFontMetricsF(font).tightBoundingRect(self._prompt.mark)
+        # Middle of what is inked: a tail as in "again" would leave the block below.
+        base = (self.height() - inked.height()) / 2.0 - inked.top()
+        right = draw_at(painter, QPointF(2.0, base), self._prompt.mark)
         self._paint_lines(painter, right + _GAP)
         painter.end()
 

@@ -22,6 +22,8 @@ from reports.typeface import Weight
 __all__ = ["ShownVerdict", "VerdictBand", "VerdictPane"]
 
 _MARGIN = 12.0
+_INSET = 10.0
+_MOST_LINES_BESIDE = 2
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)
@@ -93,84 +95,80 @@ class VerdictPane(PlainButton):
     def sizeHint(self) -> QSize:
         """Width and height of its place beside the dial."""
         return QSize(
-            round(self.look.between(narrow=280.0, wide=442.0)),
+            round(self.look.between(narrow=300.0, wide=462.0)),
             round(self.look.between(narrow=337.0, wide=427.0)),
         )
 
     def paintEvent(self, event: QPaintEvent) -> None:
         """Paint shape, phrase, sentences and facts; what does not fit opens."""
         painter = flat_painter(self)
-        width = float(self.width())
+        width = self.width() - 2.0 * _INSET
+        painter.translate(_INSET, 0.0)
         top = self._paint_head(painter, width)
         bottom = self._paint_facts(painter, width)
         self._paint_sentences(painter, top, bottom, width)
+        painter.translate(-_INSET, 0.0)
         if self.hasFocus():
             draw_focus(painter, QRectF(self.rect()), self.look)
         painter.end()
 
     def _paint_head(self, painter: QPainter, width: float) -> float:
         look, verdict = self.look, self._verdict
-        shape = look.between(narrow=104.0, wide=120.0)
-        shape = min(shape, self.height() * 0.34)
-        draw_verdict_shape(
-            painter, QPointF(shape / 2.0, _MARGIN + shape / 2.0), shape, verdict.kind, look
-        )
-        quiet = verdict.kind is VerdictKind.WITHIN
+        painter.setPen(look.colour(Colour.INK))
+        shape = min(look.between(narrow=104.0, wide=120.0), self.height() * 0.34)
+        # Grown type takes no more of the pane than it has, so that the sentence keeps its room.
         font = look.font(Size.WORD, weight=Weight.SEMI_BOLD)
+        font.setPixelSize(max(min(font.pixelSize(), round(self.height() * 0.16)), 8))
         left = shape + 14.0
-        words = verdict.phrase.split(" ")
-        if look.text_scale > 1.0 and len(words) <= 2:
-            # Grown type stays beside the shape, so that the sentence keeps its room.
-            least = look.size(Size.WORD) / look.text_scale
-            font = fitted(font, words, width=width - left, least=least)
-            tall = shape / (0.96 * len(words))
-            font.setPixelSize(round(max(min(font.pixelSize(), tall), least)))
-        beside = wrapped(verdict.phrase, font, width=width - left)
-        metrics = QFontMetricsF(font)
-        fits = all(metrics.horizontalAdvance(word) <= width - left for word in words)
-        painter.setPen(
-            look.colour(Colour.INK2 if verdict.kind is VerdictKind.NOT_JUDGED else Colour.INK)
-        )
-        step = font.pixelSize() * 0.96
-        if fits and len(beside) <= (3 if quiet else 2):
+        lines = wrapped(verdict.phrase, font, width=width - left)
+        widest = max(QFontMetricsF(font).horizontalAdvance(line) for line in lines)
+        if widest <= width - left and len(lines) <= _MOST_LINES_BESIDE:
+            centre = QPointF(shape / 2.0, _MARGIN + shape / 2.0)
+            draw_verdict_shape(painter, centre, shape, verdict.kind, look)
             painter.setFont(font)
-            block = step * (len(beside) - 1) + metrics.capHeight()
-            base = _MARGIN + shape / 2.0 - block / 2.0 + metrics.capHeight()
-            for line in beside:
+            capital = QFontMetricsF(font).capHeight()
+            step = font.pixelSize() * 0.96
+            base = centre.y() + (capital - step * (len(lines) - 1)) / 2.0
+            for line in lines:
                 draw_at(painter, QPointF(left, base), line)
                 base += step
             return max(_MARGIN + shape, base - step + font.pixelSize() * 0.3) + 8.0
-        font = fitted(font, words, width=width - 4.0)
+        shape *= 0.88
+        centre = QPointF(shape / 2.0, _MARGIN + shape / 2.0)
+        draw_verdict_shape(painter, centre, shape, verdict.kind, look)
+        font = fitted(font, verdict.phrase.split(" "), width=width)
         painter.setFont(font)
-        step = font.pixelSize() * 1.02
-        base = _MARGIN + shape + step * 0.92
-        for line in wrapped(verdict.phrase, font, width=width - 4.0):
-            draw_at(painter, QPointF(4.0, base), line)
+        step = font.pixelSize() * 0.98
+        base = _MARGIN + shape + step * 0.9
+        for line in wrapped(verdict.phrase, font, width=width):
+            draw_at(painter, QPointF(0.0, base), line)
             base += step
-        return base - step + font.pixelSize() * 0.4
+        return base - step + font.pixelSize() * 0.34
 
     def _paint_facts(self, painter: QPainter, width: float) -> float:
-        painter.setFont(self.look.note_font())
+        font = self.look.note_font()
+        font.setPixelSize(max(min(font.pixelSize(), round(self.height() * 0.068)), 8))
+        painter.setFont(font)
         painter.setPen(self.look.colour(Colour.INK2))
-        step = painter.font().pixelSize() * 1.2
+        step = font.pixelSize() * 1.2
         lines = [
             line
             for fact in self._verdict.facts
-            for line in wrapped(fact, painter.font(), width=width - 8.0, most=2)
+            for line in wrapped(fact, painter.font(), width=width, most=2)
         ]
-        top = self.height() - step * len(lines)
+        top = self.height() - step * len(lines) - 6.0
         for place, line in enumerate(lines):
-            draw_at(painter, QPointF(4.0, top + step * place + step * 0.68), line)
+            draw_at(painter, QPointF(0.0, top + step * place + step * 0.68), line)
         return top - 4.0
 
     def _height_of_sentences(self, font: QFont, width: float) -> float:
-        lines = [wrapped(text, font, width=width - 8.0) for text in self._verdict.sentences]
+        lines = [wrapped(text, font, width=width) for text in self._verdict.sentences]
         between = max(len(lines) - 1, 0) * 0.35
         return line_step(font) * (sum(len(part) for part in lines) + between)
 
     def _paint_sentences(self, painter: QPainter, top: float, bottom: float, width: float) -> None:
         font = self.look.font(Size.TEXT)
-        smallest = font.pixelSize() * 0.7
+        smallest = self.look.size(Size.NOTE) / max(self.look.text_scale, 1.0) * 0.8
         while font.pixelSize() > smallest and self._height_of_sentences(font, width) > bottom - top:
             font.setPixelSize(font.pixelSize() - 1)
         painter.setFont(font)
@@ -180,8 +178,8 @@ class VerdictPane(PlainButton):
             room = int((bottom - top) / step)
             if room < 1:
                 return
-            lines = wrapped(sentence, painter.font(), width=width - 8.0, most=room)
-            top = draw_lines(painter, 4.0, top, lines) + step * 0.35
+            lines = wrapped(sentence, painter.font(), width=width, most=room)
+            top = draw_lines(painter, 0.0, top, lines) + step * 0.35
 
 
 class VerdictBand(PlainWidget):
@@ -249,7 +247,7 @@ class VerdictBand(PlainWidget):
     def _place(self) -> None:
         height = round(self._look.between(narrow=80.0, wide=96.0))
         wide = round(
-            min(max(self._next.sizeHint().width() * 1.2, self.width() * 0.26), self.width() * 0.4)
+            min(max(self._next.sizeHint().width() * 1.2, self.width() * 0.26), self.width() * 0.32)
         )
         top = self.height() - height - 8
         self._next.setGeometry(self.width() - wide, top, wide, height)
@@ -267,12 +265,13 @@ class VerdictBand(PlainWidget):
         left = shape + 32.0
         room = self.width() - left
         font = look.font(Size.MARK, weight=Weight.SEMI_BOLD)
+        font.setPixelSize(max(min(font.pixelSize(), round(self.height() * 0.32)), 8))
         font = fitted(font, [self._verdict.phrase], width=room)
         painter.setFont(font)
         painter.setPen(look.colour(Colour.INK))
         base = 16.0 + QFontMetricsF(font).capHeight() + 4.0
         draw_at(painter, QPointF(left, base), self._verdict.phrase)
-        painter.setFont(look.font(Size.TEXT))
+        painter.setFont(self._text_font(Weight.REGULAR))
         top = base + font.pixelSize() * 0.26
         for sentence in self._verdict.sentences[:2]:
             lines = wrapped(sentence, painter.font(), width=room, most=2)
@@ -280,16 +279,21 @@ class VerdictBand(PlainWidget):
         self._paint_facts(painter, max(top, 16.0 + shape) + 8.0)
         painter.end()
 
+    def _text_font(self, weight: Weight) -> QFont:
+        font = self._look.font(Size.TEXT, weight=weight)
+        font.setPixelSize(max(min(font.pixelSize(), round(self.height() * 0.082)), 8))
+        return font
+
     def _paint_facts(self, painter: QPainter, top: float) -> None:
         facts: Sequence[str] = self._verdict.facts[:3]
         if not facts:
             return
-        look = self._look
-        painter.setFont(look.font(Size.TEXT, weight=Weight.MEDIUM))
         right = self._reasons.geometry().left() - 24.0
-        step = line_step(painter.font())
-        room = max(int((self.height() - top) / step), 1)
+        font = self._text_font(Weight.MEDIUM)
+        font = fitted(font, facts, width=right, least=font.pixelSize() * 0.72)
+        painter.setFont(font)
+        room = max(int((self.height() - top) / line_step(font)), 1)
         each = max(room // len(facts), 1)
         for fact in facts:
-            lines = wrapped(fact, painter.font(), width=right, most=each)
+            lines = wrapped(fact, font, width=right, most=each)
             top = draw_lines(painter, 0.0, top, lines)
