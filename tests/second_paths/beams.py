@@ -5,10 +5,10 @@ matrix exponential of its equations, each support an unknown jump of the shear f
 """
 
 from dataclasses import dataclass, field
+from functools import cached_property
 
 import numpy as np
 from scipy.integrate import quad
-from scipy.linalg import expm
 from scipy.optimize import brentq
 
 FALL = 9.80665
@@ -27,11 +27,11 @@ class Stretch:
         edges = (self.inner_diameter / 2.0, self.outer_diameter / 2.0)
         return quad(lambda radius: radius**power, *edges, epsabs=0.0)[0]
 
-    @property
+    @cached_property
     def stiffness(self):
         return self.modulus * np.pi * self.ring(3)
 
-    @property
+    @cached_property
     def mass(self):
         return self.density * 2.0 * np.pi * self.ring(1)
 
@@ -48,6 +48,17 @@ class Beam:
     stretches: list[Stretch]
     supports: tuple[float, float]
     discs: list[Disc] = field(default_factory=list)
+
+
+def _exponential(matrix):
+    """Power series, added up until a term no longer counts; short for a stretch of a slow beam."""
+    total = term = np.eye(len(matrix))
+    for order in range(1, 60):
+        term = term @ matrix / order
+        total = total + term
+        if (np.abs(term) <= 1e-18 * np.abs(total)).all():
+            return total
+    raise AssertionError("the series of a stretch does not settle")
 
 
 def _carried(beam, frequency, fall, stop):
@@ -68,7 +79,7 @@ def _carried(beam, frequency, fall, stop):
             field_matrix[2, 3] = 1.0
             field_matrix[3, 0] = stretch.mass * frequency**2
             field_matrix[3, 4] = stretch.mass * fall
-            state = expm(field_matrix * (place - here)) @ state
+            state = _exponential(field_matrix * (place - here)) @ state
             here = place
         at_stop[place] = state[0].copy()
         for disc in beam.discs:
@@ -100,9 +111,10 @@ def deflection_at(beam, place):
 def first_natural_frequency(beam, *, below):
     """Lowest root of the boundary determinant under `below`, by a scan and then by bracketing."""
 
+    scale = np.abs(_conditions(beam, 0.0, 0.0)[:, :4]).max(axis=1, keepdims=True)
+
     def determinant(frequency):
         rows = _conditions(beam, frequency, 0.0)[:, :4]
-        scale = np.abs(_conditions(beam, 0.0, 0.0)[:, :4]).max(axis=1, keepdims=True)
         return float(np.linalg.det(rows / scale))
 
     grid = np.linspace(0.0, below, 60)
