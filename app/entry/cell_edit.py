@@ -19,7 +19,7 @@ __all__ = ["CellEdit", "fit_figures"]
 
 _STEPS = (1.0, 0.875, 0.75)
 _CARET_WIDTH = 4.0
-_BEFORE_CARET = 10.0
+_BEFORE_CARET = 6.0
 
 
 def fit_figures(text: str, look: Look, *, width: float, height: float) -> QFont:
@@ -153,16 +153,20 @@ class CellEdit(QLineEdit):
         self._caret_shown = True
         self.update()
 
+    def _shown(self) -> str:
+        # The hyphen that keyboards send is narrower than a figure; a true minus is as wide.
+        return self.text().replace("-", "−")
+
     def _refit(self) -> None:
         width = self.width() - _BEFORE_CARET - _CARET_WIDTH
-        self.setFont(fit_figures(self.text(), self._look, width=width, height=self.height()))
+        self.setFont(fit_figures(self._shown(), self._look, width=width, height=self.height()))
         self.update()
 
     def paintEvent(self, event: QPaintEvent) -> None:
         """Paint the figures with a true minus sign, and the caret."""
         painter = flat_painter(self)
         metrics = QFontMetricsF(self.font())
-        shown = self.text().replace("-", "−")
+        shown = self._shown()
         base = (self.height() + metrics.capHeight()) / 2.0
         if self.hasSelectedText():
             start = metrics.horizontalAdvance(shown[: self.selectionStart()])

@@ -19,7 +19,7 @@ from reports.typeface import Weight
 
 __all__ = ["CellFace", "paint_cell", "place_cell"]
 
-_PADDING = 14.0
+_PADDING = 10.0
 _USUAL_OTHER = "−0.0 µm"
 
 
@@ -193,7 +193,7 @@ def place_cell(face: CellFace, size: QSize, look: Look, edit: QWidget, key: QWid
     """
     top, bottom = _bands(face, size, look)
     left = _PADDING + look.line(LineWidth.HEAVY)
-    width = size.width() - left - _unit_width(face, size, look) - 8.0
+    width = size.width() - left - _unit_width(face, size, look) - 4.0
     edit.setGeometry(QRect(round(left), round(top), round(width), max(round(bottom - top), 1)))
     edge = round(look.line(LineWidth.HEAVY))
     wide = round(_help_width(face, look))

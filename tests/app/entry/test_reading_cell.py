@@ -6,6 +6,7 @@ from PySide6.QtWidgets import QLineEdit, QPushButton, QVBoxLayout, QWidget
 from app.entry.cell_state import Asked, CellState
 from app.entry.cell_unit import unit_for
 from app.entry.reading_cell import ReadingCell
+from app.entry.stray_strokes import StrayStrokes
 from app.frame.key import Key
 from models.units import inch_set
 
@@ -415,8 +416,51 @@ def test_figures_shrink_to_fit_and_never_leave_the_cell(desk):
     assert metrics.horizontalAdvance("−0.00034567890") <= desk.edit.width()
 
 
+@pytest.mark.parametrize("width", range(400, 660, 20))
+def test_a_true_minus_sign_and_the_caret_find_room_at_any_width(desk, width):
+    desk.cell.setFixedSize(width, 130)
+    desk.type("-0.0003")
+
+    # Beside the figures a gap of 6 px and a caret of 4 px.
+    assert desk.edit.fontMetrics().horizontalAdvance("−0.0003") + 10 <= desk.edit.width()
+
+
 def test_one_figure_more_costs_one_step_of_size(desk):
     desk.cell.setFixedSize(608, 130)
     desk.type("-10.0003")
 
     assert desk.edit.font().pixelSize() in (112, 96)
+
+
+def test_readings_sent_while_a_key_has_the_keyboard_come_into_the_cell(desk):
+    StrayStrokes(cell=desk.cell, page=desk.window)
+    desk.button.setFocus()
+    QTest.keyClick(desk.button, Qt.Key.Key_Minus)
+    assert desk.edit.hasFocus()
+    desk.type("0.0003\n")
+
+    assert desk.taken == ["-0.0003"]
+
+
+def test_letters_and_space_stay_with_the_key_that_has_the_keyboard(desk):
+    StrayStrokes(cell=desk.cell, page=desk.window)
+    pressed = []
+    desk.button.clicked.connect(lambda: pressed.append(True))
+    desk.button.setFocus()
+    QTest.keyClick(desk.button, Qt.Key.Key_X)
+    QTest.keyClick(desk.button, Qt.Key.Key_Space)
+
+    assert pressed == [True]
+    assert desk.cell.text == ""
+    assert desk.button.hasFocus()
+
+
+def test_another_line_keeps_its_figures(desk):
+    StrayStrokes(cell=desk.cell, page=desk.window)
+    line = QLineEdit()
+    desk.window.layout().addWidget(line)
+    line.setFocus()
+    QTest.keyClicks(line, "610")
+
+    assert line.text() == "610"
+    assert desk.cell.text == ""
