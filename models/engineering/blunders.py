@@ -14,7 +14,6 @@ from models.engineering.slips import (
     unit_slip,
 )
 from models.engineering.survey_blunders import (
-    TwoSurveys,
     flipped_sign,
     likeliest_mistake,
     mirrored_angles,
@@ -24,6 +23,7 @@ from models.engineering.survey_blunders import (
     turned_mark,
 )
 from models.engineering.suspicion import Mistake, Suspicion
+from models.engineering.two_surveys import TwoSurveys
 
 __all__ = [
     "Mistake",

@@ -1,6 +1,7 @@
 """All that is computed from indicator readings, gathered under one name.
 
-The parts live in modules of their own: the readings of one turn (`harmonics`), the journal axis
+The parts live in modules of their own: the readings of one turn (`harmonics`) and
+of a whole survey (`survey_fit`), the journal axis
 (`datum`), what moved between two surveys (`mount_change`), two surveys that should agree
 (`same_state`), the indicator itself (`indicator`) and the shape of a bow (`bow_shape`).
 """
@@ -9,9 +10,7 @@ from models.engineering.bow_shape import side_to_side_bow, unbalance_of_bow
 from models.engineering.datum import datum_uncertainty, journal_datum, line_through_journals
 from models.engineering.harmonics import (
     HarmonicFit,
-    SurveyFit,
     fit_harmonics,
-    fit_survey,
     largest_sampling_loss,
 )
 from models.engineering.indicator import (
@@ -41,6 +40,7 @@ from models.engineering.same_state import (
     repeatability,
     still_to_come,
 )
+from models.engineering.survey_fit import SurveyFit, fit_survey
 
 __all__ = [
     "Agreement",

@@ -7,8 +7,7 @@ way, was probably read or typed that way.
 
 import math
 from collections.abc import Sequence
-from dataclasses import dataclass, replace
-from functools import cached_property
+from dataclasses import replace
 from typing import NamedTuple
 
 import numpy as np
@@ -16,9 +15,9 @@ import numpy.typing as npt
 
 from models.engineering.errors import OutOfRangeError
 from models.engineering.suspicion import Mistake, Suspicion
+from models.engineering.two_surveys import TwoSurveys
 
 __all__ = [
-    "TwoSurveys",
     "flipped_sign",
     "likeliest_mistake",
     "mirrored_angles",
@@ -28,12 +27,8 @@ __all__ = [
     "turned_mark",
 ]
 
-FloatArray = npt.NDArray[np.float64]
 ComplexArray = npt.NDArray[np.complex128]
 
-_PLACES = 301
-_TURNS = 360
-_SIGMAS = 5.0
 _LEAST_TURN = math.radians(4.0)
 _LEAST_GAIN = 25.0
 _LEAST_RATIO_OF_A_TURN = 2.5
@@ -49,77 +44,12 @@ _FACTORS = (
 )
 
 
-class _Field(NamedTuple):
-    """How the rotor may lie and bend: two lines, and bends with the lines taken out."""
-
-    known: npt.NDArray[np.bool_]
-    both: npt.NDArray[np.bool_]
-    weights: FloatArray
-    line: FloatArray
-    bends: FloatArray
-
-
 class _Reading(NamedTuple):
     """One way of reading the survey, and the mistake it would put right."""
 
     present: ComplexArray
     seconds: ComplexArray
     blank: Suspicion
-
-
-@dataclass(frozen=True, eq=False)
-class TwoSurveys:
-    """A survey beside the one before it, at the stations both have.
-
-    Attributes
-    ----------
-    positions : numpy.ndarray
-        Axial positions of the stations, four at least, [m]
-    earlier : numpy.ndarray
-        Complex offsets of the earlier survey, [m]
-    present : numpy.ndarray
-        Complex offsets of the present one, [m]
-    uncertainties : numpy.ndarray
-        Standard uncertainty of either component of one survey's offset, [m]
-    earlier_seconds : numpy.ndarray
-        Two-lobed parts of the earlier survey, as `fit_survey` gives them, [m]
-    present_seconds : numpy.ndarray
-        Two-lobed parts of the present one, [m]
-    """
-
-    positions: FloatArray
-    earlier: ComplexArray
-    present: ComplexArray
-    uncertainties: FloatArray
-    earlier_seconds: ComplexArray
-    present_seconds: ComplexArray
-
-    def __post_init__(self) -> None:
-        shape = np.shape(self.positions)
-        for name in ("earlier", "present", "uncertainties", "earlier_seconds", "present_seconds"):
-            if np.shape(getattr(self, name)) != shape:
-                raise OutOfRangeError(name, np.shape(getattr(self, name)), "fit the positions")
-        if shape[0] < 4:
-            raise OutOfRangeError("positions", shape[0], "be four or more")
-        if not (np.asarray(self.uncertainties) > 0.0).all():
-            raise OutOfRangeError("uncertainties", self.uncertainties, "be more than 0 everywhere")
-
-    @cached_property
-    def field(self) -> _Field:
-        """How this rotor may lie and bend without any mistake."""
-        return _field(self)
-
-    @cached_property
-    def unexplained(self) -> float:
-        """Weighted squares that no lie and no bend explains, as the survey stands, [-]."""
-        return float(_squares(self, self.present[None, :], self.present_seconds[None, :])[0])
-
-    @cached_property
-    def allowed(self) -> float:
-        """Weighted squares up to which noise is explanation enough, [-]."""
-        # Two components at each station, less four of the rotor's lie and three of a bend.
-        freedom = max(2 * int(self.field.known.sum()) - 7, 1) + 2 * int(self.field.both.sum())
-        return freedom + _SIGMAS * math.sqrt(2.0 * freedom)
 
 
 def likeliest_mistake(*, surveys: TwoSurveys, marks: int) -> Suspicion | None:
@@ -285,7 +215,7 @@ def turned_mark(*, surveys: TwoSurveys) -> Suspicion | None:
     """
     if surveys.unexplained <= surveys.allowed:
         return None
-    turn = _best_turn(surveys)
+    turn = surveys.best_turn()
     if abs((turn + math.pi) % (2.0 * math.pi) - math.pi) < _LEAST_TURN:
         return None
     back = np.exp(-1j * turn)
@@ -326,7 +256,7 @@ def slipped_survey(*, surveys: TwoSurveys) -> Suspicion | None:
     """
     nothing = np.zeros((1, surveys.positions.size), dtype=np.complex128)
     # The earlier survey must have features of its own for the scaled one to agree with.
-    structure = float(_squares(surveys, nothing, nothing)[0]) / 3.0
+    structure = float(surveys.squares(nothing, nothing)[0]) / 3.0
     found = []
     for factor, mistake in _FACTORS:
         present = surveys.present / factor
@@ -449,8 +379,7 @@ def _likeliest(
     """Of several ways of reading a survey, the one that leaves least, if that is little enough."""
     if not readings:
         return None
-    left = _squares(
-        surveys,
+    left = surveys.squares(
         np.array([reading.present for reading in readings]),
         np.array([reading.seconds for reading in readings]),
     )
@@ -472,49 +401,3 @@ def _most_evident(found: Sequence[Suspicion | None]) -> Suspicion | None:
 
 def _size(vectors: ComplexArray) -> float:
     return float(np.nanmedian(np.abs(vectors)))
-
-
-def _field(surveys: TwoSurveys) -> _Field:
-    known = np.isfinite(surveys.present) & np.isfinite(surveys.earlier)
-    places = surveys.positions[known]
-    weights = 1.0 / (math.sqrt(2.0) * surveys.uncertainties[known])
-    line = np.linalg.qr(np.column_stack([weights, weights * places]))[0]
-    kinks = np.linspace(places.min(), places.max(), _PLACES + 2)[1:-1, None]
-    bends = weights * np.maximum(places - kinks, 0.0)
-    bends = bends - (bends @ line) @ line.T
-    sizes = np.sqrt(np.sum(bends**2, axis=1))
-    usable = sizes > 1e-9 * float(sizes.max(initial=0.0))
-    both = np.isfinite(surveys.present_seconds) & np.isfinite(surveys.earlier_seconds)
-    return _Field(known, both, weights, line, bends[usable] / sizes[usable, None])
-
-
-def _squares(surveys: TwoSurveys, present: ComplexArray, seconds: ComplexArray) -> FloatArray:
-    """Weighted squares that no lie and no bend explains, for each row of readings."""
-    field = surveys.field
-    moved = field.weights * (present - surveys.earlier)[:, field.known]
-    moved = moved - (moved @ field.line) @ field.line.T
-    along = np.abs(moved @ field.bends.T) ** 2
-    least = np.sum(np.abs(moved) ** 2, axis=1) - along.max(axis=1, initial=0.0)
-    form = (seconds - surveys.earlier_seconds)[:, field.both]
-    spread = math.sqrt(2.0) * surveys.uncertainties[field.both]
-    return np.asarray(
-        np.maximum(least, 0.0) + np.sum(np.abs(form / spread) ** 2, axis=1), dtype=np.float64
-    )
-
-
-def _best_turn(surveys: TwoSurveys) -> float:
-    field = surveys.field
-    before = field.weights * surveys.earlier[field.known]
-    after = field.weights * surveys.present[field.known]
-    before, after = (row - field.line @ (field.line.T @ row) for row in (before, after))
-    turns = np.linspace(0.0, 2.0 * math.pi, _TURNS, endpoint=False)
-    back = np.exp(-1j * turns)
-    left = -2.0 * np.real(np.vdot(before, after) * back)
-    # What lies along a bend is free to differ, so it is taken off the squares again.
-    along_before, along_after = field.bends @ before, field.bends @ after
-    free = np.abs(along_after[:, None] * back - along_before[:, None]) ** 2
-    left = left - free.max(axis=0, initial=0.0)
-    spread = 1.0 / (2.0 * surveys.uncertainties[field.both] ** 2)
-    earlier, present = surveys.earlier_seconds[field.both], surveys.present_seconds[field.both]
-    left = left - 2.0 * np.real(np.sum(spread * earlier.conj() * present) * back**2)
-    return float(turns[int(np.argmin(left))])

@@ -26,7 +26,7 @@ from models.engineering.blunders import (
     wild_reading,
 )
 from models.engineering.bow_shape import kink_shape
-from models.engineering.harmonics import fit_survey
+from models.engineering.survey_fit import fit_survey
 
 __all__ = ["MADE", "Shares", "clean_share", "main", "shares_of"]
 
