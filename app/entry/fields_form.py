@@ -8,8 +8,10 @@ from PySide6.QtCore import QSize, Qt, Signal
 from PySide6.QtGui import QPalette
 from PySide6.QtWidgets import QFrame, QScrollArea, QVBoxLayout, QWidget
 
+from app.entry.choice_row import ChoiceRow
 from app.entry.fields import ChoiceField, FormField
-from app.entry.form_rows import ChoiceRow, FormRow, LineRow
+from app.entry.form_rows import FormRow
+from app.entry.line_row import LineRow
 from app.frame.look import Look
 from app.frame.plain import PlainWidget
 from reports.palette import Colour
