@@ -59,14 +59,20 @@ class ReadingCell(CellStrokes):
     def ask(self, asked: Asked) -> None:
         """Ask for a reading; what was in hand is done with, and waiting strokes go on.
 
+        Text that was typed for another mark and not taken is cleared, with undo.
+
         Parameters
         ----------
         asked : Asked
             The mark and whether it corrects or closes something.
         """
+        moved = self._asked is not None and self._asked.mark != asked.mark
         self._asked = asked
         self._reason = ""
         self._finish()
+        if moved and self._edit.text():
+            # Half a reading for one mark must not become the reading of another.
+            self._clear()
         self._settle()
         self._replay()
 

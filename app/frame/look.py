@@ -18,6 +18,7 @@ __all__ = ["LEAST_TOUCH", "Look"]
 LEAST_TOUCH = 44
 """Least height of anything to be touched on the bench, before scaling [px]."""
 
+_FAR_GROWTH = {Size.MARK: 144.0 / 100.0, Size.HERO: 176.0 / 128.0, Size.WORD: 104.0 / 52.0}
 _NARROW_WINDOW = 1280.0
 _WIDE_WINDOW = 1920.0
 
@@ -36,12 +37,15 @@ class Look:
         What the person chose, 0.8 to 2.0 [-].
     less_motion : bool
         Whether the system asks for a caret that stands still.
+    far : bool
+        Whether what is read at three metres grows, at the cost of the planes and the dial.
     """
 
     palette: Palette = LIGHT
     window_width: float = _NARROW_WINDOW
     text_scale: float = 1.0
     less_motion: bool = False
+    far: bool = False
 
     def scaled(self, *, text_scale: float) -> Look:
         """Give the same look at another text scale.
@@ -98,8 +102,12 @@ class Look:
         --------
         >>> Look(text_scale=0.8).size(Size.NOTE)
         16.0
+        >>> Look(far=True).size(Size.HERO)
+        176.0
         """
         size_here = self.between(narrow=BENCH_1280.size(size), wide=BENCH_1920.size(size))
+        if self.far:
+            size_here *= _FAR_GROWTH.get(size, 1.0)
         return size_here * self.text_scale
 
     def font(

@@ -24,6 +24,9 @@ __all__ = ["ShownVerdict", "VerdictBand", "VerdictPane"]
 _MARGIN = 12.0
 _INSET = 10.0
 _MOST_LINES_BESIDE = 2
+_SHAPE_GROWTH_FAR = 1.4
+_WORD_SHARE = 0.16
+_WORD_SHARE_FAR = 0.21
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)
@@ -115,10 +118,12 @@ class VerdictPane(PlainButton):
     def _paint_head(self, painter: QPainter, width: float) -> float:
         look, verdict = self.look, self._verdict
         painter.setPen(look.colour(Colour.INK))
-        shape = min(look.between(narrow=104.0, wide=120.0), self.height() * 0.34)
+        shape = look.between(narrow=104.0, wide=120.0) * (_SHAPE_GROWTH_FAR if look.far else 1.0)
+        shape = min(shape, self.height() * 0.34, width * 0.4)
         # Grown type takes no more of the pane than it has, so that the sentence keeps its room.
         font = look.font(Size.WORD, weight=Weight.SEMI_BOLD)
-        font.setPixelSize(max(min(font.pixelSize(), round(self.height() * 0.16)), 8))
+        share = _WORD_SHARE_FAR if look.far else _WORD_SHARE
+        font.setPixelSize(max(min(font.pixelSize(), round(self.height() * share)), 8))
         left = shape + 14.0
         lines = wrapped(verdict.phrase, font, width=width - left)
         widest = max(QFontMetricsF(font).horizontalAdvance(line) for line in lines)
@@ -129,6 +134,7 @@ class VerdictPane(PlainButton):
             capital = QFontMetricsF(font).capHeight()
             step = font.pixelSize() * 0.96
             base = centre.y() + (capital - step * (len(lines) - 1)) / 2.0
+            base = max(base, _MARGIN + capital)
             for line in lines:
                 draw_at(painter, QPointF(left, base), line)
                 base += step

@@ -33,6 +33,7 @@ LOOKS = {
     "small": Look(palette=LIGHT, text_scale=0.8),
     "large": Look(palette=LIGHT, text_scale=1.5),
     "double": Look(palette=LIGHT, text_scale=2.0),
+    "far": Look(palette=LIGHT, far=True),
     "wide": Look(palette=DARK, window_width=1920.0),
 }
 MARKS = ("0°", "45°", "90°", "135°", "180°", "225°", "270°", "315°", "0° again")

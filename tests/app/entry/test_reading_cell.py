@@ -177,6 +177,23 @@ def test_undo_by_keyboard_after_escape(desk):
     assert desk.cell.text == "0.0012"
 
 
+def test_half_a_reading_does_not_move_to_another_mark_but_can_be_brought_back(desk):
+    desk.type("0.00")
+    desk.cell.ask(Asked(mark="90°", old="0.0040"))
+    assert desk.cell.text == ""
+
+    desk.cell.ask(Asked(mark="225°"))
+    desk.cell.undo_clear()
+    assert desk.cell.text == "0.00"
+
+
+def test_asking_for_the_same_mark_again_keeps_what_is_typed(desk):
+    desk.type("0.00")
+    desk.cell.ask(Asked(mark="225°"))
+
+    assert desk.cell.text == "0.00"
+
+
 def test_undo_never_writes_over_what_was_typed_since(desk):
     desk.type("0.0012")
     desk.press(Qt.Key.Key_Escape)
