@@ -24,6 +24,7 @@ __all__ = ["ShownVerdict", "VerdictBand", "VerdictPane"]
 _MARGIN = 12.0
 _INSET = 10.0
 _MOST_LINES_BESIDE = 2
+_HEAD_SHARE = 0.66
 _SHAPE_GROWTH_FAR = 1.4
 _WORD_SHARE = 0.16
 _WORD_SHARE_FAR = 0.21
@@ -143,6 +144,11 @@ class VerdictPane(PlainButton):
         centre = QPointF(shape / 2.0, _MARGIN + shape / 2.0)
         draw_verdict_shape(painter, centre, shape, verdict.kind, look)
         font = fitted(font, verdict.phrase.split(" "), width=width)
+        room = self.height() * _HEAD_SHARE - _MARGIN - shape
+        while font.pixelSize() > 8 and font.pixelSize() * 0.98 * len(
+            wrapped(verdict.phrase, font, width=width)
+        ) > max(room, 10.0):
+            font.setPixelSize(font.pixelSize() - 1)
         painter.setFont(font)
         step = font.pixelSize() * 0.98
         base = _MARGIN + shape + step * 0.9

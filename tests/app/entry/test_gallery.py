@@ -219,7 +219,7 @@ def test_ladder_question_and_keys(qtbot, named_look):
 def test_verdicts(qtbot, named_look):
     name, look = named_look
     wide = name == "wide"
-    width, height = (462, 420) if wide else (300, 332)
+    width, height = {"wide": (462, 420), "far": (450, 500)}.get(name, (300, 332))
     board = Board(look, 4 * (width + 8) + 16)
     qtbot.addWidget(board)
     for number, verdict in enumerate(VERDICTS):
