@@ -29,6 +29,7 @@ from models.record.lookups import (
     last_version,
     people_known,
     plan_in_force,
+    refuse_second_replacement,
 )
 from models.record.places import AnyReading
 from models.record.reading_writer import closing_line, next_reading_line
@@ -181,9 +182,16 @@ class Act:
             If an attempt opens before the one in its way is settled, and no reason is given.
         UnfitEntryError
             If what it holds does not fit its own layout.
+        AlreadyReplacedError
+            If another entry has replaced the one that this one names.
+        UnknownEntryError
+            If the entry that this one replaces is not there.
         """
         if self.already_recorded:
             return
+        if entry.supersedes is not None:
+            self.flush()
+            refuse_second_replacement(self._session, self.chain_id, entry.supersedes)
         if isinstance(entry, AttemptOpened) and self.kind != BROUGHT_IN:
             self.flush()
             gate.refuse_unsettled(self._session, self.chain_id, entry)

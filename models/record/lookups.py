@@ -8,6 +8,7 @@ from sqlalchemy.orm import Session
 
 from models.job import Calibration, Head, Instrument
 from models.record import tables
+from models.record.errors import AlreadyReplacedError, UnknownEntryError
 from models.record.flat import Row, struct_from
 from models.record.tables import Base, table
 
@@ -21,6 +22,7 @@ __all__ = [
     "last_version",
     "people_known",
     "plan_in_force",
+    "refuse_second_replacement",
     "shop_chain",
 ]
 
@@ -127,6 +129,32 @@ def _instrument(row: Row) -> Instrument:
 def instrument_in_force(session: Session, chain_id: str, tag: str) -> KnownInstrument | None:
     """Find the last version of an instrument."""
     return next(iter(instruments_in_force(session, chain_id, tag)), None)
+
+
+def refuse_second_replacement(session: Session, chain_id: str, entry_id: str) -> None:
+    """Let an entry be replaced once.
+
+    Raises
+    ------
+    UnknownEntryError
+        If there is no such entry.
+    AlreadyReplacedError
+        If it has been replaced.
+    """
+    entry = table(tables.Entry)
+    replacing = entry.alias("replacing")
+    found = session.execute(
+        select(entry.c.key, replacing.c.key.label("replacing"))
+        .outerjoin(
+            replacing,
+            (replacing.c.chain_id == entry.c.chain_id) & (replacing.c.supersedes == entry.c.key),
+        )
+        .where(entry.c.chain_id == chain_id, entry.c.key == entry_id)
+    ).one_or_none()
+    if found is None:
+        raise UnknownEntryError(entry_id, "it cannot be replaced, the job has no such entry")
+    if found.replacing is not None:
+        raise AlreadyReplacedError
 
 
 def plan_in_force(session: Session, chain_id: str) -> tuple[int, str | None]:

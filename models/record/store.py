@@ -131,6 +131,7 @@ class Store:
         When the block ends without an error, what it recorded is on the disk.
         """
         with self._session(self._writer) as session:
+            session.connection()
             yield session
 
     @contextmanager

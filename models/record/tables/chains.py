@@ -1,6 +1,6 @@
 """Chains of acts: one for the shop, one for each job."""
 
-from sqlalchemy import CheckConstraint, UniqueConstraint
+from sqlalchemy import CheckConstraint, Index, UniqueConstraint
 from sqlalchemy.orm import Mapped, mapped_column
 from sqlalchemy.schema import SchemaItem
 
@@ -56,4 +56,5 @@ class Chain(Recorded, Base):
         return (
             CheckConstraint("kind IN ('shop', 'job')", name="kind_known"),
             CheckConstraint("key = chain_id", name="names_itself"),
+            Index(None, "kind"),
         )

@@ -110,6 +110,7 @@ def upgrade() -> None:
         _check("chain", "kind_known", "kind IN ('shop', 'job')"),
         _check("chain", "names_itself", "key = chain_id"),
     )
+    op.create_index("ix_chain_kind", "chain", ["kind"])
     _recorded(
         "component",
         _words("serial"),
