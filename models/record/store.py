@@ -20,6 +20,7 @@ from sqlalchemy.orm import Session
 
 from models.record.connections import BUSY_SECONDS, engine_for
 from models.record.errors import (
+    DiskFullError,
     EmptyFileError,
     FolderMissingError,
     NewerRecordError,
@@ -34,6 +35,7 @@ from models.record.migrations import APPLICATION_ID, FORM, bring_up_to_date
 from models.record.schema import differences
 from models.record.tables import CHANGEABLE
 from models.record.trouble import sentence_for
+from models.record.verify import verify
 
 __all__ = ["FILE_NAME", "Store"]
 
@@ -149,15 +151,31 @@ class Store:
             found = _form(self.path, connection)
             _refuse_torn(self.path, connection)
         if found < FORM:
-            self._migrate()
+            self._migrate(found)
         with _sentences(self.path), self._reader.connect() as connection:
             said = differences(connection)
         if said:
             raise SchemaDiffersError(self.path, said)
 
-    def _migrate(self) -> None:
-        with _sentences(self.path), self._writer.connect() as connection, connection.begin():
-            bring_up_to_date(connection, changeable=CHANGEABLE)
+    def _migrate(self, found: int) -> None:
+        with _sentences(self.path):
+            self._keep_copy(self.path.with_name(f"{self.path.stem} of form {found}.thirdjournal"))
+            with self._writer.connect() as connection, connection.begin():
+                bring_up_to_date(connection, changeable=CHANGEABLE)
+                whole = verify(Session(connection))
+                if not whole.is_whole:
+                    said = tuple(trouble.words for trouble in whole.troubles)
+                    raise SchemaDiffersError(self.path, said)
+
+    def _keep_copy(self, copy: Path) -> None:
+        """Keep the record as it was before it takes its next form."""
+        copy.unlink(missing_ok=True)
+        _touch(copy)
+        connection = self._writer.raw_connection()
+        try:
+            connection.cursor().execute("VACUUM INTO ?", (str(copy),))
+        finally:
+            connection.close()
 
 
 def _form(path: Path, connection: Connection) -> int:
@@ -185,12 +203,12 @@ def _make(path: Path) -> None:
     """Make a new record beside its place and put it there whole, or not at all."""
     draft = path.with_name(f".{path.name}.new-{uuid.uuid4()}")
     try:
-        os.close(os.open(draft, os.O_CREAT | os.O_EXCL | os.O_WRONLY, 0o600))
-    except PermissionError as error:
-        raise ReadOnlyError(path) from error
+        _touch(draft)
     except OSError as error:
-        if error.errno == errno.EROFS:
+        if error.errno in (errno.EACCES, errno.EPERM, errno.EROFS):
             raise ReadOnlyError(path) from error
+        if error.errno in (errno.ENOSPC, errno.EDQUOT):
+            raise DiskFullError(path) from error
         raise
     try:
         engine = engine_for(draft, writing=True)
@@ -204,6 +222,11 @@ def _make(path: Path) -> None:
         draft.unlink(missing_ok=True)
 
 
+def _touch(path: Path) -> None:
+    """Make an empty file that only its owner may read."""
+    os.close(os.open(path, os.O_CREAT | os.O_EXCL | os.O_WRONLY, 0o600))
+
+
 def _put_in_place(draft: Path, path: Path) -> None:
     try:
         # Unlike a rename, a link never takes the place of a record that another window has made
@@ -214,6 +237,8 @@ def _put_in_place(draft: Path, path: Path) -> None:
     except OSError:
         if not path.exists():
             draft.rename(path)
+    if os.name != "posix":
+        return
     folder = os.open(path.parent, os.O_RDONLY)
     try:
         os.fsync(folder)

@@ -1,15 +1,18 @@
 """A job that goes in comes out the same."""
 
 import typing
+from collections.abc import Callable
 from pathlib import Path
 
 import msgspec
 import pytest
 
+import sample_data
 from models.job import AnyEntry, Job
 from models.record import journal, queries
 from models.record.errors import JobKnownError, UnknownJobError
 from models.record.store import Store
+from models.record.verify import verify
 from tests.record.a_job import a_job
 
 
@@ -29,6 +32,17 @@ def test_a_whole_job_comes_back_identical(store: Store) -> None:
 
 def test_the_small_job_holds_every_kind_of_entry() -> None:
     assert {type(entry) for entry in a_job().entries} == set(typing.get_args(AnyEntry))
+
+
+@pytest.mark.parametrize("sample", [sample_data.compressor, sample_data.pump])
+def test_the_invented_builds_come_back_identical(store: Store, sample: Callable[[], Job]) -> None:
+    job = sample()
+    with store.writing() as session:
+        journal.bring_in(session, job, by=job.people[0].key, act_id="in")
+    with store.reading() as session:
+        back = queries.read_job(session, job.number)
+        assert verify(session).is_whole
+    assert msgspec.structs.replace(back, head=None) == msgspec.structs.replace(job, head=None)
 
 
 def test_a_job_passes_through_a_second_record_unchanged(store: Store, tmp_path: Path) -> None:

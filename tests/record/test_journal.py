@@ -79,6 +79,20 @@ def test_readings_stand_where_they_were_taken(surveyed: Store) -> None:
     )
 
 
+def test_a_reading_is_kept_as_typed_with_its_unit_and_as_a_whole_number(surveyed: Store) -> None:
+    read(surveyed, "1", 0, "−0.0005 in")
+    read(surveyed, "2", 1, "2.5")
+    with surveyed.reading() as session:
+        rows = session.connection().exec_driver_sql(
+            "SELECT typed, unit, value_nm FROM runout_reading ORDER BY mark_index"
+        )
+        # By hand: 0.0005 in × 25.4 mm/in = 12 700 nm; the survey is in µm.
+        assert [tuple(row) for row in rows] == [
+            ("−0.0005 in", "in", -12_700),
+            ("2.5", "µm", 2_500),
+        ]
+
+
 def test_the_last_reading_may_be_typed_again_without_a_reason(surveyed: Store) -> None:
     read(surveyed, "1", 0, "1")
     read(surveyed, "2", 0, "2")

@@ -103,6 +103,36 @@ def test_a_newer_file_names_both_numbers(closed: Path) -> None:
         Store.open(closed.parent)
 
 
+def test_an_older_form_is_brought_up_to_date_and_kept_as_it_was(closed: Path) -> None:
+    raw = sqlite3.connect(closed)
+    raw.execute("DROP TRIGGER note_never_changes")
+    raw.execute("PRAGMA user_version = 0")
+    raw.close()
+    with Store.open(closed.parent) as store, store.reading() as session:
+        assert verify(session).is_whole
+        assert session.connection().exec_driver_sql("PRAGMA user_version").scalar_one() == 1
+    (copy,) = closed.parent.glob("shop of form 0*")
+    assert copy.stat().st_mode & 0o777 == 0o600
+    kept = sqlite3.connect(copy)
+    assert kept.execute("PRAGMA user_version").fetchone() == (0,)
+    assert kept.execute("SELECT count(*) FROM note").fetchone() == (1,)
+    kept.close()
+
+
+def test_an_older_form_that_was_tampered_with_is_not_brought_up_to_date(closed: Path) -> None:
+    raw = sqlite3.connect(closed)
+    raw.execute("DROP TRIGGER note_never_changes")
+    raw.execute("UPDATE note SET words = 'other'")
+    raw.execute("PRAGMA user_version = 0")
+    raw.commit()
+    raw.close()
+    with pytest.raises(SchemaDiffersError, match="table note, row note: is changed"):
+        Store.open(closed.parent)
+    raw = sqlite3.connect(closed)
+    assert raw.execute("PRAGMA user_version").fetchone() == (0,)
+    raw.close()
+
+
 @pytest.mark.parametrize("kept", [0.5, 0.999])
 def test_a_torn_file(closed: Path, kept: float) -> None:
     os.truncate(closed, int(closed.stat().st_size * kept))
