@@ -102,7 +102,12 @@ class Act:
         self.begin_chain("job")
         facts = ("number", "customer", "shop", "opened_at", "form", "edition")
         others = tuple(name for name in job.__struct_fields__ if name not in facts)
-        self._put(Line(tables.Job, {"key": new_key(), **columns_of(job, leave=others)}))
+        brought: dict[str, Cell] = {
+            "brought_head_sequence": None if job.head is None else job.head.sequence,
+            "brought_head_digest": None if job.head is None else job.head.digest,
+        }
+        row = {"key": new_key(), **columns_of(job, leave=others), **brought}
+        self._put(Line(tables.Job, row))
         self.add_people(job.people)
         self.add_instruments(job.instruments)
         self.add_components(job.components)

@@ -8,7 +8,7 @@ import msgspec
 import pytest
 
 import sample_data
-from models.job import AnyEntry, Job
+from models.job import AnyEntry, Head, Job
 from models.record import journal, queries
 from models.record.errors import JobKnownError, UnknownJobError
 from models.record.store import Store
@@ -50,6 +50,16 @@ def test_a_job_passes_through_a_second_record_unchanged(store: Store, tmp_path: 
     (tmp_path / "other").mkdir()
     with Store.open(tmp_path / "other") as other:
         assert brought_in(other, first) == first
+
+
+def test_a_job_from_another_record_keeps_the_head_it_left_with(store: Store) -> None:
+    left_with = Head(sequence=7, digest="ab" * 32)
+    brought_in(store, msgspec.structs.replace(a_job(), head=left_with))
+    with store.reading() as session:
+        kept = session.connection().exec_driver_sql(
+            "SELECT brought_head_sequence, brought_head_digest FROM job"
+        )
+        assert tuple(kept.one()) == (7, "ab" * 32)
 
 
 def test_two_jobs_may_use_the_same_ids_of_entries(store: Store) -> None:

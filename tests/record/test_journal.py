@@ -34,6 +34,7 @@ from models.record.errors import (
 )
 from models.record.store import Store
 from models.record.verify import verify
+from models.units import Angle
 from tests.record.a_job import NUMBER, a_job, a_survey, an_attempt, at, settled
 from tests.record.whole_record import one_act
 
@@ -77,6 +78,31 @@ def test_readings_stand_where_they_were_taken(surveyed: Store) -> None:
             station="middle", typed=("0", None, "3.5", None), seconds=(60, None, 180, None)
         ),
     )
+
+
+def test_a_total_with_the_angle_of_its_high_spot_needs_no_marks(surveyed: Store) -> None:
+    for number, (what, typed) in enumerate(
+        [("total", "12.5"), ("high spot", "137.5"), ("swept total", "13"), ("again", None)]
+    ):
+        with one_act(surveyed, str(number)) as act:
+            act.add_reading("s", RunoutReading(station="middle", mark=what, typed=typed))
+    assert survey_of(surveyed).stations == (
+        StationReadings(
+            station="middle",
+            total="12.5",
+            high_spot=Angle.read("137.5°"),
+            swept_total="13",
+        ),
+    )
+
+
+def test_a_place_without_a_surface_strikes_what_was_typed_there(surveyed: Store) -> None:
+    read(surveyed, "1", 1, "4")
+    with one_act(surveyed, "2") as act:
+        act.add_reading("s", RunoutReading(station="middle", mark=1, typed=None))
+    survey = survey_of(surveyed)
+    assert survey.stations[0].typed == (None,) * 4
+    assert [(one.was, one.now) for one in survey.corrections] == [("4", "")]
 
 
 def test_a_reading_is_kept_as_typed_with_its_unit_and_as_a_whole_number(surveyed: Store) -> None:

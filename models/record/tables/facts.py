@@ -34,6 +34,9 @@ class Job(Recorded, Base):
     opened_at: Mapped[str]
     form: Mapped[str]
     edition: Mapped[int]
+    # Last link of the record that the job was exported from, if it came from one.
+    brought_head_sequence: Mapped[int | None]
+    brought_head_digest: Mapped[str | None]
 
     @classmethod
     def demands(cls) -> tuple[SchemaItem, ...]:

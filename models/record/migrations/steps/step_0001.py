@@ -178,6 +178,8 @@ def upgrade() -> None:
         _words("opened_at"),
         _words("form"),
         _whole("edition"),
+        _whole("brought_head_sequence", absent=True),
+        _words("brought_head_digest", absent=True),
         _once("job", "chain_id"),
         _once("job", "number"),
     )
