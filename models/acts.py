@@ -14,7 +14,6 @@ from dataclasses import dataclass
 from datetime import datetime
 
 import msgspec
-from sqlalchemy.orm import Session
 
 from models.assess import Assessment, Standing, assess, finding_key
 from models.job import (
@@ -154,7 +153,9 @@ class Acts:
         with self._store.writing() as session:
             at = self.now()
             # Only a correction can touch what has been judged; a first reading costs no look back.
-            before = _judged_already(session, number, entry_id) if reason is not None else None
+            before = (
+                _judged_already(queries.read_job(session, number), entry_id) if reason else None
+            )
             with journal.act(
                 session,
                 chain=number,
@@ -204,9 +205,8 @@ class Acts:
             return Recorded(act.sequence, at)
 
 
-def _judged_already(session: Session, number: str, entry_id: str) -> Assessment | None:
+def _judged_already(job: Job, entry_id: str) -> Assessment | None:
     """Assess the job as it stands if the entry is closed and so may carry verdicts."""
-    job = queries.read_job(session, number)
     entry = next((one for one in job.entries if one.id == entry_id), None)
     closed = not isinstance(entry, RunoutSurvey | SizeSurvey) or entry.closed_at is not None
     return assess(job) if closed else None
@@ -278,7 +278,7 @@ def _act_of(entry: AnyEntry) -> Act | None:
 
 
 def _correction_permission(view: Assessment, entry: AnyEntry) -> Permission:
-    """A correction records what already happened; it needs what it replaces, and a reason."""
+    """Let a correction stand that names what it replaces, and a reason; it only records."""
     old = next((one for one in view.job.entries if one.id == entry.supersedes), None)
     if old is None or type(old) is not type(entry) or old.place != entry.place:
         return _refuse("nothing-to-correct", "The entry to be corrected is not in this place.")

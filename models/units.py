@@ -74,6 +74,7 @@ class Quantity:
     __slots__ = ("typed", "unit", "whole")
 
     name: ClassVar[str] = "quantity"
+    example: ClassVar[str] = "12.5"
     small_unit: ClassVar[str] = ""
     si_unit: ClassVar[str] = ""
     units: ClassVar[Mapping[str, Unit]] = {}
@@ -108,7 +109,7 @@ class Quantity:
             If the text is empty, no finite decimal number, or its unit is not one of this kind.
         """
         written = _WRITTEN.match(text)
-        if written is None:
+        if written is None or "," in text:
             raise UnreadableNumberError(text, cls._expected(text))
         symbol = written["unit"] or unit
         if symbol is None:
@@ -136,7 +137,7 @@ class Quantity:
 
     @classmethod
     def _example(cls) -> str:
-        return f"−0.0003 {cls.symbols()[0]}".rstrip()
+        return f"{cls.example} {cls.symbols()[0]}".rstrip()
 
     @classmethod
     def symbols(cls) -> tuple[str, ...]:
@@ -198,6 +199,7 @@ class Length(Quantity):
     __slots__ = ()
 
     name = "a length"
+    example = "−0.0003"
     small_unit = "nm"
     si_unit = "m"
     small_per_si = Decimal(10) ** 9
@@ -218,6 +220,7 @@ class Temperature(Quantity):
     __slots__ = ()
 
     name = "a temperature"
+    example = "215"
     small_unit = "mK"
     si_unit = "°C"
     small_per_si = Decimal(1000)
@@ -390,8 +393,8 @@ class Expansion(Quantity):
     si_unit = "1/K"
     small_per_si = Decimal(10) ** 12
     units = _table(
-        _small("1e-6/K", "1000000", "µm/(m·K)"),
-        Unit("1e-6/°F", Decimal(1800000), Decimal(0), ("µin/(in·°F)",)),
+        _small("µm/(m·K)", "1000000", "μm/(m·K)"),
+        Unit("µin/(in·°F)", Decimal(1800000), Decimal(0), ("μin/(in·°F)",)),
     )
 
 

@@ -30,6 +30,8 @@ __all__ = [
 
 # Fewer marks cannot tell an offset from the mean, let alone from a second harmonic.
 _LEAST_MARKS = 3
+# A fit by weights needs some doubt at every station, also where none was stated.
+_LEAST_UNCERTAINTY = 0.1e-6
 
 
 @dataclass(frozen=True, eq=False)
@@ -95,6 +97,7 @@ class StationChange:
     expanded_uncertainty: float | None
     plain_change: float | None
     bounds: ChangeBounds | None
+    reading_uncertainty: float
 
 
 def read_station(job: Job, survey: RunoutSurvey, readings: StationReadings) -> StationRunout:
@@ -209,6 +212,9 @@ def compare_surveys(
                 expanded_uncertainty=expanded,
                 plain_change=plain,
                 bounds=bounds,
+                reading_uncertainty=math.hypot(
+                    _or_zero(one.uncertainty), _or_zero(other.uncertainty)
+                ),
             )
         )
     return tuple(changes)
@@ -228,7 +234,7 @@ def where_the_bend_sits(job: Job, changes: Sequence[StationChange]) -> KinkFit |
         return fit_one_kink(
             positions=[one.position for one in shaft],
             changes=[one.change for one in shaft if one.change is not None],
-            uncertainties=[max((one.expanded_uncertainty or 0.0) / 4.0, 1e-7) for one in shaft],
+            uncertainties=[max(one.reading_uncertainty, _LEAST_UNCERTAINTY) for one in shaft],
             first_journal_position=job.plan.station(job.plan.first_journal).position.si,
             second_journal_position=job.plan.station(job.plan.second_journal).position.si,
         )

@@ -260,7 +260,7 @@ def stage_contribution(*, before: TwoPlanes, after: TwoPlanes) -> TwoPlanes:
     return TwoPlanes(first=after.first - before.first, second=after.second - before.second)
 
 
-def clock_angle(vector: complex) -> float:
+def clock_angle(*, vector: complex) -> float:
     r"""Clock angle of a vector, counted from the reference mark.
 
     .. math:: \theta = \arg v \bmod 2\pi
@@ -282,7 +282,7 @@ def clock_angle(vector: complex) -> float:
 
     Examples
     --------
-    >>> clock_angle(-1.0), clock_angle(-1j)
+    >>> clock_angle(vector=-1.0), clock_angle(vector=-1j)
     (3.14159, 4.71239)
 
     References
@@ -332,7 +332,9 @@ def mass_to_add(*, unbalance: complex, radius: float) -> CorrectionMass:
     """
     demand_finite("unbalance", unbalance)
     demand_positive("radius", radius)
-    return CorrectionMass(mass=abs(unbalance) / radius, angle=clock_angle(-complex(unbalance)))
+    return CorrectionMass(
+        mass=abs(unbalance) / radius, angle=clock_angle(vector=-complex(unbalance))
+    )
 
 
 def mass_to_remove(*, unbalance: complex, radius: float) -> CorrectionMass:
@@ -369,7 +371,9 @@ def mass_to_remove(*, unbalance: complex, radius: float) -> CorrectionMass:
     """
     demand_finite("unbalance", unbalance)
     demand_positive("radius", radius)
-    return CorrectionMass(mass=abs(unbalance) / radius, angle=clock_angle(complex(unbalance)))
+    return CorrectionMass(
+        mass=abs(unbalance) / radius, angle=clock_angle(vector=complex(unbalance))
+    )
 
 
 def split_between_places(

@@ -219,7 +219,7 @@ def residual_from_amplitudes(
     missed = readings - smaller_sensitivity * np.abs(vectors)
     return AmplitudeCheck(
         trial_unbalance=trial_unbalance,
-        angle=clock_angle(swing),
+        angle=clock_angle(vector=swing),
         smaller=smaller,
         larger=trial_unbalance / relative if relative > 0.0 else math.inf,
         smaller_sensitivity=smaller_sensitivity,

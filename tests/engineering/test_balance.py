@@ -226,13 +226,13 @@ def test_a_place_that_is_right_takes_the_whole() -> None:
 
 @given(vector=st.complex_numbers(max_magnitude=1e3))
 def test_a_clock_angle_lies_within_one_turn(vector: complex) -> None:
-    assert 0.0 <= clock_angle(vector) < 2.0 * math.pi
-    assert abs(cmath.rect(abs(vector), clock_angle(vector)) - vector) <= 1e-12 * abs(vector)
+    assert 0.0 <= clock_angle(vector=vector) < 2.0 * math.pi
+    assert abs(cmath.rect(abs(vector), clock_angle(vector=vector)) - vector) <= 1e-12 * abs(vector)
 
 
 def test_no_vector_has_the_angle_of_the_mark_whatever_the_sign_of_its_zeros() -> None:
-    assert clock_angle(complex(-0.0, -0.0)) == 0.0
-    assert clock_angle(complex(1.0, -1e-320)) == 0.0
+    assert clock_angle(vector=complex(-0.0, -0.0)) == 0.0
+    assert clock_angle(vector=complex(1.0, -1e-320)) == 0.0
 
 
 @pytest.mark.parametrize(
@@ -261,7 +261,7 @@ def test_no_vector_has_the_angle_of_the_mark_whatever_the_sign_of_its_zeros() ->
             unbalance=1.0, first_angle=0.0, second_angle=math.pi)),
         ("unbalance", lambda: split_between_places(
             unbalance=-1.0, first_angle=-0.5, second_angle=0.5)),
-        ("vector", lambda: clock_angle(complex(math.inf, 0.0))),
+        ("vector", lambda: clock_angle(vector=complex(math.inf, 0.0))),
     ],
     ids=lambda value: value if isinstance(value, str) else "",
 )  # fmt: skip

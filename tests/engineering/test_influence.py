@@ -42,7 +42,7 @@ def test_a_one_plane_correction_agrees_with_its_source(row: published.OnePlaneRo
     influence = influence_coefficient(before=row.before, with_trial=row.with_trial, trial=row.trial)
     correction = single_plane_correction(reading=row.before, influence=influence)
     assert abs(correction) == row.size, row.source
-    assert math.degrees(clock_angle(correction)) == row.degrees, row.source
+    assert math.degrees(clock_angle(vector=correction)) == row.degrees, row.source
 
 
 @pytest.mark.parametrize("seed", range(6))

@@ -28,7 +28,6 @@ MUST_NOT_IMPORT = {
     "models/acts.py": ["app", "reports", "sample_data", "sqlalchemy", "PySide6"],
     "reports": ["app", "sample_data", "PySide6", "sqlalchemy", "models.record", "models.acts"],
     "app/presenters": ["PySide6.QtWidgets", "sqlalchemy", "models.record.journal"],
-    "app/viewmodels": ["PySide6.QtWidgets", "sqlalchemy", "models.record"],
     "app/pages": ["sqlalchemy", "models.record", "models.acts"],
     "app/entry": ["sqlalchemy", "models.record", "models.acts", "models.job", "models.assess"],
     "app/frame": ["sqlalchemy", "models.record", "models.acts", "models.job", "models.assess"],
