@@ -1,0 +1,168 @@
+"""The one large verdict of the bench, in words a person acts on."""
+
+from collections.abc import Mapping, Sequence
+
+from app.presenters.bench.reading import SoFar
+from app.presenters.bench.state import BenchVerdict
+from models.assess import Attempt
+from models.rules.progress import Act, NextAct
+from models.rules.rule import Finding, Verdict, words_for
+from models.units import UnitSet
+
+__all__ = ["final_verdict", "reasons_of", "verdict_at", "verdict_so_far"]
+
+_CAUSES = (
+    "Usual causes: cooled on one side first, touched before it was home, a key too high, dirt or a "
+    "burr at the shoulder."
+)
+_RULES_OF: dict[Act, tuple[str, ...]] = {
+    Act.CONFIRM_FURNACE: ("interference-within", "target-below-highest"),
+    Act.DECIDE_FIT: ("sizes-plausible", "seat-larger-than-bore", "interference-within"),
+    Act.HEAT: ("target-below-highest", "bore-open", "heated-through", "not-overheated"),
+    Act.CONFIRM_DOOR: ("bore-open", "heated-through", "not-overheated"),
+    Act.MOUNT: ("bore-open", "heated-through"),
+    Act.COMPLETE_MOUNT: ("part-seated",),
+    Act.COOL: ("may-be-read",),
+    Act.MEASURE_AXIAL: ("axial-position-right", "may-be-read"),
+    Act.SURVEY: ("may-be-read",),
+}
+
+
+def reasons_of(findings: Sequence[Finding]) -> tuple[str, ...]:
+    """Open verdicts to their statement, inputs, what was worked out, source and limit's origin."""
+    lines: list[str] = []
+    for finding in findings:
+        lines += [finding.message, finding.rule.statement]
+        lines += [
+            f"{words_for(finding.rule.facts, name)} = {_plain(value)}"
+            for name, value in finding.inputs.items()
+            if value is not None
+        ]
+        lines += [
+            f"{name.replace('_', ' ')} = {value:.6g}" for name, value in finding.computed.items()
+        ]
+        lines.append(f"Source: {finding.rule.source}")
+        if finding.limit_origin:
+            lines.append(f"The limit comes from {finding.limit_origin}")
+        lines.append("")
+    return tuple(lines)
+
+
+def _plain(value: object) -> str:
+    return f"{value:.6g}" if isinstance(value, float) else str(value)
+
+
+def _worst(findings: Sequence[Finding]) -> Finding | None:
+    return max(findings, key=lambda one: one.verdict.severity, default=None)
+
+
+def verdict_at(act: NextAct, attempt: Attempt | None) -> BenchVerdict:
+    """Say what stands at this act, before anything is read."""
+    if attempt is None:
+        return BenchVerdict(None, "Not judged yet", (act.words,))
+    findings = [
+        finding
+        for rule_id in _RULES_OF.get(act.act, ())
+        for finding in attempt.of(rule_id, act.item if act.item else None)
+    ]
+    worst = _worst(findings)
+    if worst is None:
+        return BenchVerdict(None, "Not judged yet", (act.words,))
+    rest = [one for one in findings if one is not worst and one.verdict is not Verdict.NOT_JUDGED]
+    return BenchVerdict(
+        worst.verdict,
+        worst.phrase,
+        (worst.message, *(one.message for one in rest[:1])),
+        reasons=reasons_of(findings),
+    )
+
+
+def verdict_so_far(so_far: SoFar, due: int, units: UnitSet) -> BenchVerdict:
+    """Say what a survey says while it grows."""
+    read = f"so far {len(so_far.stations_read)} of {due} stations"
+    findings: Mapping[str, Finding] = so_far.findings
+    worst = max(
+        findings.values(),
+        key=lambda one: (one.verdict.severity, float(one.inputs.get("change_tir") or 0.0)),
+        default=None,
+    )
+    if worst is None:
+        return BenchVerdict(
+            None,
+            "Not judged yet",
+            ("Both journals first: they carry the datum.",)
+            if so_far.survey is None or so_far.survey.in_axis is None
+            else (),
+            so_far=read,
+        )
+    return BenchVerdict(
+        worst.verdict,
+        worst.phrase if worst.verdict is not Verdict.OUTSIDE else "Stop",
+        (worst.message,),
+        so_far=read,
+        reasons=reasons_of([worst]),
+    )
+
+
+def final_verdict(attempt: Attempt, units: UnitSet) -> BenchVerdict:
+    """Say how a mount ended: within limits, or remount required and where the bend sits."""
+    if any(view.mount is not None and view.mount.outcome == "stopped short"
+           for view in attempt.items):  # fmt: skip
+        findings = attempt.of("part-seated")
+        return BenchVerdict(
+            Verdict.OUTSIDE,
+            "Stopped short",
+            tuple(one.message for one in findings if one.verdict is Verdict.OUTSIDE),
+            reasons=reasons_of(findings),
+            is_final=True,
+        )
+    findings = attempt.of("runout-changed") + attempt.of("set-up-same") + attempt.of("survey-whole")
+    findings += attempt.of("circle-closed")
+    worst = max(
+        findings,
+        key=lambda one: (one.verdict.severity, float(one.inputs.get("change_tir") or 0.0)),
+        default=None,
+    )
+    if worst is None:
+        return BenchVerdict(None, "Not judged yet", is_final=True)
+    facts: list[tuple[str, str]] = []
+    changes = [one for one in attempt.changes if one.tir is not None and not one.is_journal]
+    if changes:
+        greatest = max(changes, key=lambda one: one.tir or 0.0)
+        facts.append(
+            (
+                "greatest change",
+                f"{greatest.key}, {units.both(greatest.tir or 0.0, 'runout')} TIR at "
+                f"{greatest.clock_angle_degrees or 0.0:.0f}°, ± "
+                f"{units.show(greatest.expanded_uncertainty or 0.0, 'runout')}",
+            )
+        )
+    if worst.verdict is Verdict.OUTSIDE and attempt.kink is not None:
+        facts.append(("the bend sits", _bend(attempt, units)))
+        facts.append(("look for", _CAUSES))
+    return BenchVerdict(
+        worst.verdict,
+        worst.phrase,
+        (worst.message,),
+        facts=tuple(facts),
+        reasons=reasons_of([one for one in findings if one.verdict is worst.verdict]),
+        is_final=True,
+    )
+
+
+def _bend(attempt: Attempt, units: UnitSet) -> str:
+    kink = attempt.kink
+    if kink is None:
+        return "not told by these stations"
+    where = units.show(kink.position, "position")
+    item = next(
+        (
+            view.item.name
+            for view in attempt.items
+            if view.item.outline.start.si <= kink.position <= view.item.outline.end.si
+        ),
+        None,
+    )
+    place = f"under {item}" if item else "not under the part just mounted"
+    spread = units.show(kink.position_uncertainty, "position")
+    return f"{where} ± {spread} from the datum face, {place}"
