@@ -132,7 +132,7 @@ class Quantity:
         if not text.strip():
             return f"nothing typed; {cls.name} is expected"
         if "," in text:
-            return "write the decimal point as “.” and no thousands mark"
+            return "a number with “.” as its decimal point and no thousands mark"
         return f"{cls.name} is a number such as {cls._example()}"
 
     @classmethod

@@ -185,7 +185,7 @@ SPOILED: list[tuple[str, object, str, object, str]] = [
     ("entries[2].unit", "kg", "entries[2].unit", "kg", "a unit of length"),
     ("entries[2].typed[1]", ["3.9950"], "entries[2].typed[1]", "a list of 1", "2 readings"),
     ("entries[2].typed", [], "entries[2].typed", "a list of 0", "2 rows"),
-    ("entries[2].typed[1][0]", "3,995", "entries[2].typed[1][0]", "3,995", "written in in, mm"),
+    ("entries[2].typed[1][0]", "3,995", "entries[2].typed[1][0]", "3,995", "decimal point"),
     ("entries[2].typed[1][0]", "", "entries[2].typed[1][0]", "", "nothing typed"),
     ("entries[2].typed[1][0]", 3.995, "entries[2].typed[1][0]", 3.995, "text or null"),
     ("entries[2].corrections[0].by", "XY", "entries[2].corrections[0].by", "XY", "known person"),
@@ -540,7 +540,7 @@ def test_the_schema_lets_through_what_is_read_as_each_kind_and_nothing_else():
                 taken(other)
 
 
-@pytest.mark.parametrize("unit", ["1e-6/K", "1e-6/°F"])
+@pytest.mark.parametrize("unit", ["µm/(m·K)", "µin/(in·°F)"])
 def test_a_coefficient_of_expansion_comes_back_in_its_unit(unit):
     document = small_job.document()
     job = jobfile.loads(small_job.as_bytes(document))

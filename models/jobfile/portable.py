@@ -185,7 +185,7 @@ def _at(document: Any, place: str) -> object:  # noqa: ANN401  (any JSON documen
 
 def _plain(part: Any) -> Any:  # noqa: ANN401  (any part of a job, and its form in JSON)
     if isinstance(part, units.Quantity):
-        return _written(part)
+        return part.written
     if isinstance(part, msgspec.Struct):
         return _plain_struct(part)
     if isinstance(part, tuple):
@@ -208,8 +208,3 @@ def _plain_struct(part: msgspec.Struct) -> dict[str, Any]:
     return plain
 
 
-def _written(quantity: units.Quantity) -> str:
-    unit = quantity.units[quantity.unit]
-    # After a number, "1e-6/K" would read as more digits of it; another name of it does not.
-    symbol = unit.aliases[0] if unit.symbol[:1].isdigit() else unit.symbol
-    return f"{quantity.typed} {symbol}".strip()

@@ -348,7 +348,7 @@ def a_job(number: str = NUMBER) -> Job:
                 range="0 to 1 mm",
                 calibration=Calibration(done_on="2031-01-10", due_on="2032-01-10"),
             ),
-            Instrument(tag="BG-2", kind="bore gauge", expansion=Expansion.read("11.5", "1e-6/K")),
+            Instrument(tag="BG-2", kind="bore gauge", expansion=Expansion.read("11.5", "µm/(m·K)")),
         ),
         components=(Component(serial="C-1", name="wheel", item="w1", drawing="RD-101"),),
         plans=(a_plan(), a_plan("B", "new limit")),
