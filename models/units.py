@@ -41,7 +41,7 @@ __all__ = [
 # Beyond 2**53 a whole number is no longer exact in every reader of JSON.
 _GREATEST_WHOLE = 2**53 - 1
 _NUMBER = r"[+\-−]?(?:\d+(?:\.\d*)?|\.\d+)"
-_WRITTEN = re.compile(rf"\s*(?P<number>{_NUMBER})\s*(?P<unit>[^\d\s].*?)?\s*\Z")
+_WRITTEN = re.compile(rf"\s*(?P<number>{_NUMBER})\s*(?P<unit>[^\d\s].*?)?\s*\Z", re.ASCII)
 
 
 class UnreadableNumberError(ValueError):
