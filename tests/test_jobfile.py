@@ -562,3 +562,29 @@ def test_defaults_are_left_out_of_a_file_but_not_what_tells_it_from_others():
     assert "customer" not in written
     assert (written["form"], written["edition"]) == ("thirdjournal job", 1)
     assert isinstance(jobfile.loads(GOOD), Job)
+
+
+GROWTH = {"value": "0.0008 in", "speed": "9000 r/min", "origin": small_job.ORIGIN}
+
+
+def test_a_designers_growth_and_the_shafts_yield_strength_come_back_as_written():
+    document = small_job.document()
+    plan = document["plans"][0]
+    plan["steps"][0]["items"][0]["lands"][0]["growth"] = GROWTH
+    plan["shaft"]["yield_strength"] = "95 ksi"
+
+    job = jobfile.loads(jobfile.dumps(jobfile.loads(small_job.as_bytes(document))))
+
+    (land,) = job.plan.steps[0].items[0].lands
+    assert (land.growth.value.written, land.growth.speed.written) == ("0.0008 in", "9000 r/min")
+    assert job.plan.shaft.yield_strength.written == "95 ksi"
+
+
+@pytest.mark.parametrize(("name", "none"), [("value", "0 in"), ("speed", "-9000 r/min")])
+def test_a_growth_of_nothing_is_refused(name, none):
+    document = small_job.document()
+    (land,) = document["plans"][0]["steps"][0]["items"][0]["lands"]
+    land["growth"] = GROWTH | {name: none}
+
+    with pytest.raises(JobFileError, match="more than 0"):
+        jobfile.loads(small_job.as_bytes(document))

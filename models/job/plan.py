@@ -23,6 +23,7 @@ from models.units import (
 __all__ = [
     "AxialPlace",
     "CoolingLimits",
+    "Growth",
     "Item",
     "ItemKind",
     "Land",
@@ -81,6 +82,14 @@ class TemperatureLimit(Frozen, frozen=True, kw_only=True):
     origin: Origin
 
 
+class Growth(Frozen, frozen=True, kw_only=True):
+    """Interference that a land loses at a speed, on diameter, as its designer says."""
+
+    value: Length
+    speed: Speed
+    origin: Origin
+
+
 class Rotor(Frozen, frozen=True, kw_only=True):
     """The machine's rotating part, and how places on it are named."""
 
@@ -120,6 +129,7 @@ class Shaft(Frozen, frozen=True, kw_only=True):
     steps: tuple[ShaftStep, ...]
     bore: Length | None = None
     roughness: Length | None = None
+    yield_strength: Pressure | None = None
 
 
 class Station(Frozen, frozen=True, kw_only=True):
@@ -160,6 +170,7 @@ class Land(Frozen, frozen=True, kw_only=True):
     hub_outer_diameter: Length
     least_interference: LengthLimit
     greatest_interference: LengthLimit
+    growth: Growth | None = None
 
 
 class AxialPlace(Frozen, frozen=True, kw_only=True):

@@ -28,7 +28,7 @@ from models.job import (
     Step,
 )
 from models.jobfile.faults import MISSING, Fault, Words
-from models.units import Angle, Length, UnreadableNumberError
+from models.units import Angle, Length, Quantity, UnreadableNumberError
 
 __all__ = ["faults"]
 
@@ -168,9 +168,9 @@ def _shaft(place: str, shaft: Shaft) -> Iterator[Fault]:
             yield Fault(f"{place}.steps[{index}].start", after.start.written, expected)
 
 
-def _positive(place: str, length: Length) -> Iterator[Fault]:
-    if length.whole <= 0:
-        yield Fault(place, length.written, "more than 0")
+def _positive(place: str, quantity: Quantity) -> Iterator[Fault]:
+    if quantity.whole <= 0:
+        yield Fault(place, quantity.written, "more than 0")
 
 
 def _step(place: str, step: Step, seen: set[str]) -> Iterator[Fault]:
@@ -200,6 +200,9 @@ def _land(place: str, land: Land) -> Iterator[Fault]:
     if greatest.whole < least.whole:
         expected = f"not less than the least, {least.written}"
         yield Fault(f"{place}.greatest_interference.value", greatest.written, expected)
+    if land.growth is not None:
+        yield from _positive(f"{place}.growth.value", land.growth.value)
+        yield from _positive(f"{place}.growth.speed", land.growth.speed)
 
 
 class _EntryChecks:
