@@ -5,13 +5,16 @@ from models.assess.build import Assessment, Standing, assess, live_entries
 from models.assess.heat import Heat, land_gauge
 from models.assess.runout import StationChange, StationRunout, SurveyRunout
 from models.assess.sizes import LandFit, Sizes
+from models.assess.strength import FitStrength, LandStrength
 
 __all__ = [
     "Assessment",
     "Attempt",
+    "FitStrength",
     "Heat",
     "ItemView",
     "LandFit",
+    "LandStrength",
     "Sizes",
     "Standing",
     "StationChange",

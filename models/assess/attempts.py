@@ -16,6 +16,9 @@ from models.assess.runout import (
     where_the_bend_sits,
 )
 from models.assess.sizes import LandFit, expansion_of, land_fit
+from models.assess.strength import FitStrength
+from models.assess.strength_findings import strength_findings
+from models.assess.strength_work import fit_strength
 from models.engineering.bow import KinkFit
 from models.engineering.bow_shape import side_to_side_bow
 from models.job import (
@@ -73,6 +76,7 @@ class ItemView:
     item: Item
     serial: str | None
     fits: tuple[LandFit, ...]
+    strength: FitStrength | None
     heat: Heat | None
     mount: Mount | None
     axial: tuple[AxialMeasured, ...]
@@ -229,6 +233,7 @@ def _item_view(
         item=item,
         serial=serials.get(item.key, held[-1] if held else None),
         fits=fits,
+        strength=fit_strength(job.plan, item, fits),
         heat=item_heat(job, item, fits, heatings) if item.kind == "hot" else None,
         mount=mounts[-1] if mounts else None,
         axial=tuple(
@@ -244,6 +249,8 @@ def _item_view(
 def _findings(job: Job, attempt: Attempt) -> Iterable[Finding]:
     for view in attempt.items:
         yield from _size_findings(job, attempt, view)
+        about = _subject(attempt, item=view.item.key)
+        yield from strength_findings(job.plan, view.item, view.strength, about)
         yield from _heat_findings(job, attempt, view)
         yield from _mount_findings(job, attempt, view)
     if _cooling_matters(attempt):

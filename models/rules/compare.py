@@ -8,11 +8,23 @@ acceptance it does not.
 
 from models.rules.rule import Verdict
 
-__all__ = ["LENGTH_STEP", "TEMPERATURE_STEP", "at_least", "at_most", "between", "steps"]
+__all__ = [
+    "LENGTH_STEP",
+    "PRESSURE_STEP",
+    "TEMPERATURE_STEP",
+    "TORQUE_STEP",
+    "at_least",
+    "at_most",
+    "between",
+    "steps",
+]
 
 # The record stores whole nanometres and thousandths of a kelvin; ten of each absorb the arithmetic.
 LENGTH_STEP = 10e-9
 TEMPERATURE_STEP = 10e-3
+# Coarse enough to absorb the arithmetic of a formula, far finer than anything that is known.
+PRESSURE_STEP = 1e3
+TORQUE_STEP = 10e-3
 
 
 def steps(difference: float, resolution: float) -> int:

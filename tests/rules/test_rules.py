@@ -22,6 +22,7 @@ from models.rules.facts import (
     SurveyFacts,
 )
 from models.rules.rule import Subject, Verdict
+from tests.rules import strength_cases
 
 IN, OUT, DOUBT, UNKNOWN = Verdict.WITHIN, Verdict.OUTSIDE, Verdict.CANNOT_TELL, Verdict.NOT_JUDGED
 UM = 1e-6
@@ -100,6 +101,7 @@ GOOD: dict[type, Any] = {
     ),
     OrderFacts: OrderFacts(entry="Mounted", out_of_order=""),
     ProgressFacts: ProgressFacts(steps_due=2, steps_waiting=()),
+    **strength_cases.GOOD,
 }
 
 
@@ -241,6 +243,7 @@ CASES = [
     Case("every-step-settled", "within", {}, IN),
     Case("every-step-settled", "waiting", {"steps_waiting": ("Impeller 2",)}, UNKNOWN),
     Case("every-step-settled", "unknown", {"steps_due": None}, UNKNOWN),
+    *(Case(*row) for row in strength_cases.CASES),
 ]  # fmt: skip
 
 # Rules that compare a number with a limit, and so need a case exactly on it.
@@ -270,7 +273,8 @@ def test_rule_has_cases_for_all_that_can_happen(judged: Any) -> None:
     if judged.id not in _NEVER_STOPS:
         assert OUT in verdicts
     limits = {"limit", "closure_allowed", "target_temperature", "side_to_side_allowed",
-              "axial_tolerance", "least_allowed", "due_on"}  # fmt: skip
+              "axial_tolerance", "least_allowed", "due_on", "hub_yield_strength",
+              "shaft_yield_strength", "interference_at_trip", "torque_to_carry"}  # fmt: skip
     if limits & set(judged.inputs):
         assert judged.id in _COMPARING
 

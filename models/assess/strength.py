@@ -1,0 +1,177 @@
+"""What a measured fit grips, holds and is stressed by, at rest and at speed, and what it means.
+
+Grip, holding and release rest on the least measured interference, less what smoothing takes; stress
+on the greatest, of which smoothing is not taken. Both at the reference temperature of 20 °C.
+"""
+
+import math
+from dataclasses import dataclass
+
+from models.engineering.fit_stress import HubStresses, ShaftStresses
+from models.job import Item
+from models.units import UnitSet
+
+__all__ = ["FitStrength", "LandAtSpeed", "LandStrength", "Release", "Strength"]
+
+
+@dataclass(frozen=True)
+class Strength:
+    """A yield strength, and where it comes from."""
+
+    value: float
+    origin: str
+    by_plan: bool
+
+
+@dataclass(frozen=True)
+class LandAtSpeed:
+    """What is left of a land's least interference and pressure at a speed.
+
+    Two uniform discs bound the truth of a wheel: one as wide as the whole part, which opens most,
+    and the hub alone, which opens least. `by_designer` is the plan's own figure, if it has one.
+    """
+
+    name: str
+    speed: float
+    as_whole_disc: float
+    as_hub_alone: float
+    by_designer: float | None
+    least_pressure: float
+    greatest_pressure: float
+    pressure_by_designer: float | None
+
+
+@dataclass(frozen=True)
+class Release:
+    """The speeds at which a land opens, in rad/s; None where the designer gave no growth."""
+
+    as_whole_disc: float
+    as_hub_alone: float
+    by_designer: float | None
+
+
+@dataclass(frozen=True)
+class LandStrength:
+    """One land: its pressure, its stress and what speed leaves of it."""
+
+    key: str
+    least_interference: float
+    greatest_interference: float
+    smoothing_loss: float
+    least_pressure: float
+    greatest_pressure: float
+    pressure_uncertainty: float | None
+    interference_uncertainty: float | None
+    hub: HubStresses
+    shaft: ShaftStresses
+    hub_margin: float | None
+    shaft_margin: float | None
+    at_speed: tuple[LandAtSpeed, ...]
+    release: Release
+
+    @property
+    def hub_stress(self) -> float:
+        """The equivalent stress (von Mises) at the hub's bore, where it yields first, in Pa."""
+        return self.hub.bore.von_mises
+
+    @property
+    def shaft_stress(self) -> float:
+        """The greatest equivalent stress (von Mises) in the shaft, in Pa."""
+        return self.shaft.bore.von_mises if self.shaft.bore else self.shaft.seat.von_mises
+
+    def at(self, name: str) -> LandAtSpeed | None:
+        """Find what is left at a speed by its name."""
+        return next((one for one in self.at_speed if one.name == name), None)
+
+
+@dataclass(frozen=True, eq=False)
+class FitStrength:
+    """What a part's fit does, over all of its lands."""
+
+    item: Item
+    lands: tuple[LandStrength, ...]
+    friction: float
+    friction_source: str
+    smoothing_source: str
+    holding_torque: float
+    holding_force: float
+    holding_torque_uncertainty: float | None
+    holding_torque_at_continuous: float | None
+    torque_to_carry: float | None
+    hub_yield: Strength | None
+    shaft_yield: Strength | None
+    trip_speed: float | None
+    units: UnitSet
+
+    @property
+    def holding_factor(self) -> float | None:
+        """How many times the torque to carry friction holds at rest; no safety for a keyed part."""
+        if self.torque_to_carry is None:
+            return None
+        if self.torque_to_carry == 0.0:
+            return math.inf
+        return self.holding_torque / abs(self.torque_to_carry)
+
+    @property
+    def release_speed(self) -> float | None:
+        """The speed at which the first land opens, as its designer says; None if one is missing."""
+        speeds = [land.release.by_designer for land in self.lands]
+        known = [speed for speed in speeds if speed is not None]
+        return min(known) if len(known) == len(speeds) else None
+
+    @property
+    def release_estimate(self) -> tuple[float, float]:
+        """Between which speeds the first land opens if its parts were uniform discs; not judged."""
+        return (
+            min(land.release.as_whole_disc for land in self.lands),
+            min(land.release.as_hub_alone for land in self.lands),
+        )
+
+    @property
+    def release_over_trip(self) -> float | None:
+        """The release speed over the trip speed, by the designer's figure alone."""
+        if self.release_speed is None or not self.trip_speed:
+            return None
+        return self.release_speed / self.trip_speed
+
+    @property
+    def means(self) -> str:
+        """What all of it means, in one sentence."""
+        parts = [self._grip_words(), self._stress_words(), self._speed_words()]
+        return "; ".join(part for part in parts if part) + "."
+
+    def _grip_words(self) -> str:
+        least = min(land.least_pressure for land in self.lands)
+        words = (
+            f"It grips with at least {self.units.both(least, 'pressure')} and friction holds "
+            f"{self.units.both(self.holding_torque, 'torque')}"
+        )
+        if self.torque_to_carry is not None:
+            words += (
+                f" where {self.units.show(abs(self.torque_to_carry), 'torque')} are to be carried"
+            )
+        return words + (", though its key carries first" if self.item.keyed else "")
+
+    def _stress_words(self) -> str:
+        margins = [land.hub_margin for land in self.lands if land.hub_margin is not None]
+        if not margins or self.hub_yield is None:
+            stress = max(land.hub_stress for land in self.lands)
+            return f"the bore is stressed to {self.units.both(stress, 'pressure')}"
+        share = 100.0 / min(margins)
+        whose = "its yield strength in the plan"
+        if not self.hub_yield.by_plan:
+            whose = "the least yield strength published for its material"
+        return f"the bore comes to {share:.0f} % of {whose}"
+
+    def _speed_words(self) -> str:
+        trip = f" (trip {self.units.show(self.trip_speed, 'speed')})" if self.trip_speed else ""
+        if self.release_speed is not None:
+            return f"it opens at {self._speed(self.release_speed)} by its designer's growth{trip}"
+        low, high = self.release_estimate
+        return (
+            f"as a uniform disc it would open between {self._speed(low)} and "
+            f"{self._speed(high)}{trip}, an estimate that is not judged"
+        )
+
+    def _speed(self, speed: float) -> str:
+        return "no speed" if math.isinf(speed) else self.units.show(speed, "speed")
