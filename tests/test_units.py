@@ -34,6 +34,8 @@ from models.units import (
 )
 
 UREG = pint.UnitRegistry(autoconvert_offset_to_baseunit=True)
+# The library keeps the gauss of another system of units; 1 G answers to 100 µT by definition.
+UREG.define("shop_gauss = 1e-4 tesla")
 
 # Our symbol, the independent library's name, and the SI unit of the kind there.
 SAME = [
@@ -59,7 +61,7 @@ SAME = [
     (Duration, "d", "day", "s"),
     (Expansion, "µm/(m·K)", "micrometer/meter/kelvin", "1/kelvin"),
     (Expansion, "µin/(in·°F)", "microinch/inch/delta_degF", "1/kelvin"),
-    (FieldStrength, "gauss", "tesla/10000", "T"), (FieldStrength, "mT", "mT", "T"),
+    (FieldStrength, "gauss", "shop_gauss", "T"), (FieldStrength, "mT", "mT", "T"),
     (FieldStrength, "µT", "uT", "T"),
 ]  # fmt: skip
 
