@@ -60,6 +60,8 @@ class JobsPresenter(QObject):
     """The serial's last figures are asked for, in a sentence."""
     figures_refused = Signal(str)
     """What was typed does not belong to that rotor; carries a sentence."""
+    file_read = Signal(object)
+    """A job file has been read whole; carries its job, which is not yet in the record."""
     opened = Signal(str)
     """A job has been laid on the desks; carries its number."""
 
@@ -189,28 +191,30 @@ class JobsPresenter(QObject):
 
     # -- files
 
-    def read_file(self, path: Path) -> Job | None:
-        """Read a job file; one that cannot be taken is said in its own sentence, and not kept.
+    def read_file(self, path: Path) -> None:
+        """Read a job file beside the window; one that cannot be taken is said, and not kept.
 
         Parameters
         ----------
         path : Path
             The file.
-
-        Returns
-        -------
-        Job or None
-            The job, None where the file was refused.
         """
-        try:
-            return jobfile.read(path)
-        except jobfile.JobFileError as trouble:
-            why = f"{trouble} Nothing of it was kept; correct the file and bring it in again."
+        self._shop.background.run(
+            lambda: jobfile.read(path),
+            words=f"reading {path.name}",
+            done=self.file_read.emit,
+            failed=lambda error: self._file_refused(path, error),
+        )
+
+    def _file_refused(self, path: Path, error: Exception) -> None:
+        if isinstance(error, jobfile.JobFileError):
+            why = f"{error} Nothing of it was kept; correct the file and bring it in again."
             self._shop.said.emit(Said(what=f"{path.name} is not taken.", way_out=why))
-        except OSError as trouble:
-            why = f"{trouble.strerror or trouble}. Check the file and the right to read it."
+        elif isinstance(error, OSError):
+            why = f"{error.strerror or error}. Check the file and the right to read it."
             self._shop.said.emit(Said(what=f"{path.name} cannot be read.", way_out=why))
-        return None
+        else:
+            raise error
 
     def bringer(self, job: Job) -> Person | None:
         """Give who brings a job in: whoever is signed in, if they are one of its people.
@@ -308,7 +312,7 @@ def _worked_out(plain: ShelfRow, view: Assessment) -> ShelfRow:
         name=f"{rotor.name} (invented)" if rotor.invented else rotor.name,
         waits=waits_for(view),
         is_open=view.progress.current is not None,
-        picture=replace(picture, stations=()),
+        picture=replace(picture, stations=(), drive_end_name=""),
         verdict=job_pictures.verdict_kind(view.verdict),
         searched=" ".join(words).casefold(),
     )

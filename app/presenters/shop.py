@@ -99,6 +99,8 @@ class ShopPresenter(QObject):
         self._is_read = True
         numbers = [row.number for row in rows]
         self._views = {key: view for key, view in self._views.items() if key in numbers}
+        if self._number not in numbers:
+            self.choose_job("")
         self.shelf_changed.emit()
         # The one on the desks first: somebody is looking at it.
         for number in sorted(numbers, key=lambda one: one != self._number):
@@ -152,7 +154,8 @@ class ShopPresenter(QObject):
         if number == self._number:
             return
         self._number = number
-        if number and number not in self._views:
+        # Before the shelf is read nobody knows whether there is such a job; it is read with it.
+        if self._is_read and number and number not in self._views:
             self._work_out(number)
         self.job_changed.emit()
         self.shelf_changed.emit()

@@ -1,0 +1,189 @@
+"""Wiring: the record, its acts, the threads, the presenters and the window."""
+
+from __future__ import annotations
+
+import sys
+from collections.abc import Callable
+from pathlib import Path
+
+from PySide6.QtWidgets import QApplication, QWidget
+
+from app.frame.look import Look
+from app.last_resort import LastResort, show_dialog
+from app.presenters.background import Background
+from app.presenters.jobs import JobsPresenter
+from app.presenters.shop import ShopPresenter
+from app.presenters.writing import Writer
+from app.settings import Settings, shop_folder
+from app.style.theme import apply_theme
+from app.style.tokens import load_fonts
+from app.window import BENCH, Window
+from models.acts import Acts
+from models.record.errors import (
+    DiskFaultError,
+    DiskFullError,
+    LockedRecordError,
+    ReadOnlyError,
+    RecordError,
+)
+from models.record.store import Store
+
+__all__ = ["SURROUNDINGS", "Opened", "run"]
+
+SURROUNDINGS = (LockedRecordError, DiskFullError, DiskFaultError, ReadOnlyError)
+"""Trouble that may be over when the same act is tried again."""
+
+
+class Opened:
+    """A shop that is open in a window, and everything that has to be closed with it."""
+
+    def __init__(self, store: Store, settings: Settings) -> None:
+        self._store = store
+        self.settings = settings
+        self._acts = Acts(store)
+        self.writer = Writer(surroundings=SURROUNDINGS)
+        self.background = Background()
+        self.shop = ShopPresenter(self._acts, self.writer, self.background)
+        self.window = Window(self.shop, settings, make_bench=self._make_bench)
+        self._add_desks()
+
+    def _add_desks(self) -> None:
+        from app.pages.jobs import JobsPage
+
+        window, look = self.window, Look()
+        self.jobs = JobsPresenter(self.shop)
+        self.jobs.set_filter(self.settings.of_shop("filter", ""))
+        self.jobs.rows_changed.connect(
+            lambda: self.settings.keep_for_shop("filter", self.jobs.filter)
+        )
+        self.jobs.opened.connect(lambda _number: window.show_desk(BENCH))
+        window.add_desk("Jobs", JobsPage(self.jobs, look=look, ask_person=window.ask_person))
+        window.add_desk(BENCH, None)
+
+    def _make_bench(self, job: str, person: str, look: Look, parent: QWidget) -> QWidget:
+        return make_bench(self._acts, self.writer, job, person, look, parent)
+
+    def show(self, *, sign_in: str | None, job: str | None) -> None:
+        """Show the window, with who was signed in and what lay on the desks last.
+
+        Parameters
+        ----------
+        sign_in, job : str or None
+            Key and number that go before what is remembered.
+        """
+        self.shop.sign_in(sign_in or self.settings.of_shop("person"))
+        self.shop.choose_job(job or self.settings.of_shop("job"))
+        self.window.open()
+        self.shop.read_shelf()
+
+    def close(self) -> None:
+        """End the threads and give the record back."""
+        self.background.close()
+        self.writer.close()
+        self._store.close()
+
+
+def make_bench(
+    acts: Acts, writer: Writer, job: str, person: str, look: Look, parent: QWidget
+) -> QWidget:
+    """Make the bench for a job and a person.
+
+    Parameters
+    ----------
+    acts : Acts
+        The door to the record.
+    writer : Writer
+        The thread that writes.
+    job, person : str
+        Number of the job and key of who is signed in.
+    look : Look
+        The window's look.
+    parent : QWidget
+        The window.
+
+    Returns
+    -------
+    QWidget
+        The bench, or a sentence where there is nothing to do at it.
+    """
+    from app.pages.plain_desk import PlainDesk
+
+    if not job:
+        return PlainDesk("Choose a job first, at the Jobs desk.", look=look, parent=parent)
+    if not person:
+        words = "Say who is at the window first: press the words at the upper right."
+        return PlainDesk(words, look=look, parent=parent)
+    return PlainDesk(f"The bench for job {job} is not here yet.", look=look, parent=parent)
+
+
+def run(folder: Path, *, sign_in: str | None, job: str | None) -> int:
+    """Open a shop's record in a window, until it is closed.
+
+    Parameters
+    ----------
+    folder : Path
+        Folder of the record.
+    sign_in, job : str or None
+        Who is signed in and which job is on the desks; None takes what is remembered.
+
+    Returns
+    -------
+    int
+        Exit status of the window.
+
+    Raises
+    ------
+    RecordError
+        If the record cannot be opened; it has been said in a dialog by then.
+    """
+    application = QApplication.instance()
+    if not isinstance(application, QApplication):
+        application = QApplication(sys.argv[:1])
+    application.setApplicationName("Third Journal")
+    application.setStyle("Fusion")
+    settings = Settings(folder=folder)
+    load_fonts()
+    apply_theme(
+        application=application,
+        appearance=settings.appearance,
+        text_scale=settings.text_scale,
+    )
+    store = open_store(folder, tell=show_dialog)
+    last_resort = LastResort()
+    last_resort.install()
+    opened = Opened(store, settings)
+    try:
+        opened.show(sign_in=sign_in, job=job)
+        return application.exec()
+    finally:
+        opened.close()
+        last_resort.remove()
+
+
+def open_store(folder: Path, *, tell: Callable[[str], None]) -> Store:
+    """Open the record of a folder; the user's own folder is made where it is missing.
+
+    Parameters
+    ----------
+    folder : Path
+        Folder of the record.
+    tell : callable
+        Says a sentence to whoever sits at the screen.
+
+    Returns
+    -------
+    Store
+        The open record.
+
+    Raises
+    ------
+    RecordError
+        If it cannot be opened; it has been told by then.
+    """
+    if folder == shop_folder():
+        folder.mkdir(parents=True, exist_ok=True)
+    try:
+        return Store.open(folder)
+    except RecordError as trouble:
+        tell(str(trouble))
+        raise

@@ -1,0 +1,163 @@
+import pytest
+from PySide6.QtCore import Qt
+from PySide6.QtWidgets import QAbstractButton
+
+from app.settings import Settings
+from app.style.theme import Appearance
+from models.record.errors import DiskFullError
+from reports.palette import DARK
+from tests.app.open_shop import COMPRESSOR
+
+
+def key_named(window, name):
+    return next(one for one in window.findChildren(QAbstractButton) if one.accessibleName() == name)
+
+
+def press(qtbot, opened, key, modifier=Qt.KeyboardModifier.ControlModifier):
+    with qtbot.waitActive(opened.window):
+        opened.window.activateWindow()
+    qtbot.keyClick(opened.window, key, modifier)
+
+
+def test_only_desks_that_exist_stand_in_the_line(shop_folder, open_window):
+    opened = open_window(shop_folder)
+    names = [
+        one.accessibleName()
+        for one in opened.window.findChildren(QAbstractButton)
+        if one.accessibleName().endswith(" desk")
+    ]
+
+    assert names == [f"{name} desk" for name in opened.window.desks]
+    assert "Register desk" not in names
+    assert "History desk" not in names
+
+
+def test_control_and_a_figure_bring_a_desk_to_the_front(shop_folder, open_window, qtbot):
+    opened = open_window(shop_folder, job=COMPRESSOR, sign_in="AT")
+    for number, name in enumerate(opened.window.desks, start=1):
+        press(qtbot, opened, Qt.Key(Qt.Key.Key_0 + number))
+
+        assert opened.window.present_desk == name
+
+
+def test_the_line_says_who_is_signed_in_with_their_role(shop_folder, open_window):
+    opened = open_window(shop_folder, sign_in="BQ", job=COMPRESSOR)
+
+    assert key_named(opened.window, "Signed in: Brona Quillfeather, inspector").isVisible()
+
+
+def test_a_person_chosen_in_the_line_is_signed_in(shop_folder, open_window, qtbot, monkeypatch):
+    opened = open_window(shop_folder, job=COMPRESSOR)
+    asked = []
+    monkeypatch.setattr(
+        opened.window, "_ask", lambda people: asked.append([one.key for one in people]) or "AT"
+    )
+    qtbot.mouseClick(
+        key_named(opened.window, "Signed in: Who is at the window?"), Qt.MouseButton.LeftButton
+    )
+
+    assert asked == [["AT", "CV", "BQ", "DO", "ES"]]
+    assert opened.shop.person.name == "Ansel Tarrowby"
+
+
+def test_what_lay_on_the_desks_lies_there_the_next_time(shop_folder, open_window):
+    first = open_window(shop_folder, sign_in="AT", job=COMPRESSOR)
+    first.jobs.set_filter("All")
+    first.window.next_appearance()
+    first.window.grow_text(1)
+    first.window.close()
+    second = open_window(shop_folder)
+
+    assert second.shop.job_number == COMPRESSOR
+    assert second.shop.person_key == "AT"
+    assert second.jobs.filter == "All"
+    assert second.window.look.palette is DARK
+    assert second.window.look.text_scale == 1.1
+
+
+def test_a_job_that_is_remembered_but_gone_is_forgotten(shop_folder, open_window):
+    opened = open_window(shop_folder, job="gone")
+
+    assert opened.shop.job_number == ""
+    assert opened.window.message is None
+
+
+def test_the_look_goes_round_and_comes_back_to_light(shop_folder, open_window, qtbot):
+    opened = open_window(shop_folder)
+    seen = []
+    for _ in range(3):
+        press(qtbot, opened, Qt.Key.Key_L)
+        seen.append(opened.settings.appearance)
+
+    assert seen == [Appearance.DARK, Appearance.CONTRAST, Appearance.LIGHT]
+
+
+def test_text_grows_to_twice_and_no_further(shop_folder, open_window):
+    opened = open_window(shop_folder)
+    for _ in range(12):
+        opened.window.grow_text(1)
+    assert opened.window.look.text_scale == 2.0
+
+    opened.window.grow_text(0)
+    assert opened.window.look.text_scale == 1.0
+
+
+def test_trouble_with_the_disk_is_said_and_tried_again(shop_folder, open_window, qtbot, tmp_path):
+    opened = open_window(shop_folder)
+    outcomes = [DiskFullError(tmp_path / "shop.thirdjournal"), None]
+    done = []
+
+    def act():
+        error = outcomes.pop(0)
+        if error is not None:
+            raise error
+
+    opened.writer.write(act, done=done.append, refused=pytest.fail)
+    qtbot.waitUntil(lambda: opened.window.message is not None)
+    assert opened.window.message.what.startswith("The disk that holds")
+    assert done == []
+
+    qtbot.mouseClick(key_named(opened.window, "Try again"), Qt.MouseButton.LeftButton)
+    qtbot.waitUntil(lambda: done == [None])
+    assert opened.window.message is None
+
+
+def test_f6_carries_the_keyboard_from_area_to_area_and_back(shop_folder, open_window, qtbot):
+    opened = open_window(shop_folder)
+    with qtbot.waitActive(opened.window):
+        opened.window.activateWindow()
+    visited = []
+    for _ in range(3):
+        qtbot.keyClick(opened.window, Qt.Key.Key_F6)
+        visited.append(opened.window.focusWidget().accessibleName())
+
+    assert "Jobs desk" in visited
+    assert visited[0] == visited[2]
+    assert visited[0] != visited[1]
+
+
+def test_f9_is_far_and_close_again(shop_folder, open_window, qtbot):
+    opened = open_window(shop_folder)
+    press(qtbot, opened, Qt.Key.Key_F9, Qt.KeyboardModifier.NoModifier)
+    assert opened.window.look.far
+
+    press(qtbot, opened, Qt.Key.Key_F9, Qt.KeyboardModifier.NoModifier)
+    assert not opened.window.look.far
+
+
+def test_settings_of_two_shops_do_not_mix(tmp_path):
+    file = tmp_path / "window.ini"
+    for name in ("one", "two"):
+        Settings(folder=tmp_path / name, file=file).keep_for_shop("job", name)
+
+    assert Settings(folder=tmp_path / "one", file=file).of_shop("job") == "one"
+
+
+def test_settings_that_cannot_be_read_count_as_none(tmp_path):
+    file = tmp_path / "window.ini"
+    file.write_text("[look]\nappearance=purple\ntext_scale=huge\n", encoding="utf-8")
+    settings = Settings(folder=tmp_path, file=file)
+
+    assert settings.appearance is Appearance.LIGHT
+    assert settings.text_scale == 1.0
+    assert settings.geometry is None
