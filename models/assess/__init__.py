@@ -3,7 +3,9 @@
 from models.assess.attempts import Attempt, ItemView, finding_key
 from models.assess.build import Assessment, Standing, assess, live_entries
 from models.assess.heat import Heat, land_gauge
+from models.assess.lacks import lacks
 from models.assess.runout import StationChange, StationRunout, SurveyRunout
+from models.assess.shaft import ShaftView
 from models.assess.sizes import LandFit, Sizes
 from models.assess.strength import FitStrength, LandStrength
 
@@ -15,6 +17,7 @@ __all__ = [
     "ItemView",
     "LandFit",
     "LandStrength",
+    "ShaftView",
     "Sizes",
     "Standing",
     "StationChange",
@@ -22,6 +25,7 @@ __all__ = [
     "SurveyRunout",
     "assess",
     "finding_key",
+    "lacks",
     "land_gauge",
     "live_entries",
 ]

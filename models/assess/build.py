@@ -2,6 +2,7 @@
 
 from collections.abc import Iterable, Sequence
 from dataclasses import dataclass
+from functools import cached_property
 
 import msgspec
 
@@ -12,6 +13,7 @@ from models.assess.attempts import (
     points_open,
 )
 from models.assess.runout import SurveyRunout, read_survey
+from models.assess.shaft import ShaftView, shaft_view
 from models.job import (
     AnyEntry,
     AttemptOpened,
@@ -62,6 +64,11 @@ class Assessment:
     def attempt(self, step: str, number: int) -> Attempt | None:
         """Find one attempt."""
         return next((one for one in self.attempts_at(step) if one.number == number), None)
+
+    @cached_property
+    def shaft(self) -> ShaftView:
+        """The finished rotor on its journals, worked out when it is asked for: no rule needs it."""
+        return shaft_view(self.job.plan)
 
     @property
     def verdict(self) -> Verdict:

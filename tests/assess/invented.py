@@ -89,7 +89,8 @@ def with_material(
         moduli=[(20.0, modulus)],
         **more,
     )
-    monkeypatch.setattr(strength_work, "MATERIALS", {"own": own})
+    for module in ("shaft", "strength_work"):
+        monkeypatch.setattr(f"models.assess.{module}.MATERIALS", {"own": own})
 
 
 def fit(land: Land, least: float, greatest: float, unsure: float | None = None) -> LandFit:
