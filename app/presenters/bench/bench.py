@@ -26,6 +26,7 @@ from app.presenters.writing import Writer
 from models.acts import Acts, NotAllowedError, Recorded, new_id
 from models.assess import Assessment, Attempt, assess
 from models.job import (
+    AnyEntry,
     AttemptOpened,
     Mount,
     Question,
@@ -77,6 +78,8 @@ class BenchPresenter(QObject):
         self._measuring_again: NextAct | None = None
         self._door_opened_at: str | None = None
         self._written_at = ""
+        # The last link this window knows: an act judged on anything older is refused.
+        self._seen: int | None = None
         self._state = _empty(job_number)
         writer.failed.connect(self._on_trouble)
         self.reload()
@@ -107,6 +110,7 @@ class BenchPresenter(QObject):
 
     def _on_loaded(self, view: Assessment) -> None:
         self._view = view
+        self._seen = view.job.head.sequence if view.job.head else None
         self._reading = self._open_reading(view)
         self._removing = False
         self._rebuild_forms()
@@ -406,7 +410,7 @@ class BenchPresenter(QObject):
     def _write_made(self, made: Made) -> None:
         person = self._person
         for entry in made.entries:
-            self._write(partial(self._acts.record, self._number, entry, act_id=new_id()))
+            self._write(partial(self._record, entry, new_id()))
         for entry_id, reading in made.readings:
             self._write(
                 partial(
@@ -419,6 +423,10 @@ class BenchPresenter(QObject):
                 )
             )
         self.reload()
+
+    def _record(self, entry: AnyEntry, act_id: str) -> Recorded:
+        # Runs when its turn comes, so that it names the head as it is after the acts before it.
+        return self._acts.record(self._number, entry, act_id=act_id, head=self._seen)
 
     def _write(self, act: Callable[[], Recorded]) -> None:
         self._writer.write(act, done=self._note_written, refused=self._on_refused)
@@ -568,6 +576,7 @@ class BenchPresenter(QObject):
 
     def _note_written(self, recorded: Recorded) -> None:
         self._written_at = recorded.at[11:19]
+        self._seen = recorded.sequence
 
     def _on_refused(self, error: Exception) -> None:
         if isinstance(error, NotAllowedError):
