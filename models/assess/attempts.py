@@ -2,10 +2,11 @@
 
 from collections.abc import Iterable, Sequence
 from dataclasses import dataclass, replace
-from functools import lru_cache
+from functools import cached_property, lru_cache
 
 import msgspec
 
+from models.assess.bend import Bend, bend_of
 from models.assess.heat import Heat, heat_facts, item_heat
 from models.assess.questions import open_questions
 from models.assess.runout import (
@@ -32,6 +33,7 @@ from models.job import (
     Item,
     Job,
     Mount,
+    Plan,
     Removal,
     RunoutSurvey,
     Settled,
@@ -94,6 +96,7 @@ class ItemView:
 class Attempt:
     """One attempt, with all that is known of it and every finding."""
 
+    plan: Plan
     step: Step
     number: int
     opened: AttemptOpened
@@ -111,6 +114,18 @@ class Attempt:
     signatures: tuple[Signature, ...]
     decisions: tuple[Decision, ...]
     findings: tuple[Finding, ...]
+
+    @cached_property
+    def bend(self) -> Bend:
+        """What its surveys tell about the bow, worked out when asked for: no rule needs it."""
+        return bend_of(
+            self.plan,
+            self.step.key,
+            kink=self.kink,
+            changes=self.changes,
+            judged=self.judged,
+            drift=self.drift,
+        )
 
     @property
     def worst(self) -> Verdict:
@@ -192,6 +207,7 @@ def _assess_attempt(
     bare = read_survey(job, bare_shaft) if bare_shaft else None
     settled = [one for one in entries if isinstance(one, Settled)]
     attempt = Attempt(
+        plan=job.plan,
         step=step,
         number=opened.place.attempt or 1,
         opened=opened,

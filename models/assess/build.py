@@ -14,6 +14,8 @@ from models.assess.attempts import (
 )
 from models.assess.runout import SurveyRunout, read_survey
 from models.assess.shaft import ShaftView, shaft_view
+from models.assess.stand import StandRepeatability, stand_repeatability
+from models.engineering.high_speed import Reason, reasons_for_high_speed_balance
 from models.job import (
     AnyEntry,
     AttemptOpened,
@@ -69,6 +71,31 @@ class Assessment:
     def shaft(self) -> ShaftView:
         """The finished rotor on its journals, worked out when it is asked for: no rule needs it."""
         return shaft_view(self.job.plan)
+
+    @cached_property
+    def stand(self) -> StandRepeatability | None:
+        """What the stand repeats, from surveys between which nothing was touched."""
+        return stand_repeatability(self.job.plan, live_entries(self.job), self.surveys)
+
+    @cached_property
+    def reasons_for_speed(self) -> tuple[Reason, ...]:
+        """What speaks for a balance at speed; none without a maximum continuous speed."""
+        speed = self.job.plan.rotor.maximum_continuous_speed
+        if speed is None or speed.si <= 0.0:
+            return ()
+        stands = [
+            one
+            for one in self.attempts
+            if one.judged is not None and (one.settled is None or one.settled.outcome != "removed")
+        ]
+        bow = stands[-1].bend.of_rotor if stands else None
+        critical = self.shaft.critical
+        return reasons_for_high_speed_balance(
+            maximum_continuous_speed=speed.si,
+            first_critical_speed=critical.speed if critical else None,
+            span_over_diameter=self.shaft.span_over_diameter,
+            bow_over_permissible=bow.ratio if bow else None,
+        )
 
     @property
     def verdict(self) -> Verdict:

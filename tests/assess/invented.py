@@ -8,8 +8,18 @@ import sample_data
 from models.assess import FitStrength, LandFit, strength_work
 from models.engineering.materials import own_material
 from models.engineering.sizes import Interference
-from models.job import Item, Land, LengthLimit, Origin, Outline, Plan
-from models.units import Length, Speed
+from models.job import (
+    Item,
+    Land,
+    LengthLimit,
+    Origin,
+    Outline,
+    Plan,
+    ShaftStep,
+    Station,
+    Step,
+)
+from models.units import Length, Mass, Speed
 
 __all__ = ["ORIGIN", "a_land", "a_plan", "an_item", "fit", "mm", "rpm", "strength", "with_material"]
 
@@ -104,3 +114,54 @@ def strength(plan: Plan, item: Item, *fits: LandFit) -> FitStrength:
     found = strength_work.fit_strength(plan, item, fits)
     assert found is not None
     return found
+
+
+def on_a_shaft(
+    *,
+    steps: list[tuple[float, float, float]],
+    parts: Any = (),
+    first: float = 0.0,
+    second: float = 1.0,
+    between: tuple[float, ...] = (),
+    **rotor: Any,
+) -> Plan:
+    """Give a plan with a shaft of steps (start, end, diameter) and parts (position, mass), in m.
+
+    Each part goes on in a step of its own; stations S1, S2 … lie between the journals.
+    """
+    plan = a_plan(rotor=rotor)
+    journals = [(plan.first_journal, first), (plan.second_journal, second)]
+    stations = [
+        Station(key=key, name=key, position=mm(1e3 * place), kind="journal")
+        for key, place in journals
+    ]
+    stations += [
+        Station(key=f"S{number}", name=f"S{number}", position=mm(1e3 * place))
+        for number, place in enumerate(between, start=1)
+    ]
+    items = [_part(number, *one) for number, one in enumerate(parts, start=1)]
+    stack = [Step(key=f"step-{item.key}", title=item.name, items=(item,)) for item in items]
+    return msgspec.structs.replace(
+        plan,
+        stations=tuple(stations),
+        steps=tuple(stack) or (Step(key="step-none", title="Nothing", items=()),),
+        shaft=msgspec.structs.replace(
+            plan.shaft,
+            steps=tuple(
+                ShaftStep(start=mm(1e3 * start), end=mm(1e3 * end), diameter=mm(1e3 * diameter))
+                for start, end, diameter in steps
+            ),
+        ),
+    )
+
+
+def _part(number: int, position: float, mass: float | None) -> Item:
+    item = an_item(a_land(50.0, 80.0), mass=None if mass is None else Mass.from_si(mass, "kg", 6))
+    start, end = mm(1e3 * position - 10.0), mm(1e3 * position + 10.0)
+    return msgspec.structs.replace(
+        item,
+        key=f"part-{number}",
+        name=f"Part {number}",
+        outline=msgspec.structs.replace(item.outline, start=start, end=end),
+        lands=tuple(msgspec.structs.replace(land, start=start, end=end) for land in item.lands),
+    )

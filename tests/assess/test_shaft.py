@@ -6,45 +6,12 @@ import pytest
 import sample_data
 from models.assess import assess
 from models.assess.shaft import masses_on, shaft_view
-from models.job import ShaftStep
-from models.units import Mass, Power
-from tests.assess.invented import a_land, a_plan, an_item, mm, rpm, with_material
+from models.units import Power
+from tests.assess.invented import a_land, an_item, on_a_shaft, rpm, with_material
 from tests.published.printed import printed
 from tests.published.shaft import CRITICAL_SPEED, SHEAR
 
 JOBS = {"pump": sample_data.pump(), "compressor": sample_data.compressor()}
-
-
-def on_a_shaft(*, steps, parts=(), first=0.0, second=1.0, **rotor):
-    """Give a plan with a shaft of steps (start, end, diameter in m) and parts (position, mass)."""
-    plan = a_plan(rotor=rotor)
-    places = {plan.first_journal: first, plan.second_journal: second}
-    stations = tuple(
-        msgspec.structs.replace(station, position=mm(1e3 * places[station.key]))
-        for station in plan.stations
-        if station.key in places
-    )
-    items = tuple(at(position, mass) for position, mass in parts)
-    return msgspec.structs.replace(
-        plan,
-        stations=stations,
-        steps=(msgspec.structs.replace(plan.steps[0], items=items),),
-        shaft=msgspec.structs.replace(
-            plan.shaft,
-            steps=tuple(
-                ShaftStep(start=mm(1e3 * start), end=mm(1e3 * end), diameter=mm(1e3 * diameter))
-                for start, end, diameter in steps
-            ),
-        ),
-    )
-
-
-def at(position, mass):
-    item = an_item(a_land(50.0, 80.0), mass=None if mass is None else Mass.from_si(mass, "kg", 6))
-    outline = msgspec.structs.replace(
-        item.outline, start=mm(1e3 * position - 10.0), end=mm(1e3 * position + 10.0)
-    )
-    return msgspec.structs.replace(item, outline=outline)
 
 
 def of_row(monkeypatch, row):
@@ -111,7 +78,7 @@ def test_a_mass_that_the_plan_lacks_is_estimated_and_said(monkeypatch):
     (part,) = view.parts
     assert part.mass == printed("0.4901")
     assert part.calculated
-    assert "masses estimated from the outline: wheel" in view.sentences[0]
+    assert "masses estimated from the outline: part-1" in view.sentences[0]
 
 
 def test_a_part_of_no_known_mass_or_material_is_named(monkeypatch):
@@ -122,8 +89,8 @@ def test_a_part_of_no_known_mass_or_material_is_named(monkeypatch):
     unknown = msgspec.structs.replace(item, material=None)
     plan = msgspec.structs.replace(plan, steps=(msgspec.structs.replace(step, items=(unknown,)),))
 
-    assert masses_on(plan).without == ("wheel",)
-    assert "no mass known: wheel" in shaft_view(plan).sentences[0]
+    assert masses_on(plan).without == ("part-1",)
+    assert "no mass known: part-1" in shaft_view(plan).sentences[0]
 
 
 @pytest.mark.parametrize(("diameter", "again"), [(0.2, False), (0.1999, True)])
