@@ -1,0 +1,1 @@
+"""The technician's desk: one thing to do now, with the rotor above and the verdict beside it."""
