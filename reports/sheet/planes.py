@@ -5,6 +5,7 @@ from __future__ import annotations
 from collections.abc import Sequence
 from itertools import pairwise
 
+from models.units import Length
 from reports.palette import Colour
 from reports.sheet.elements import (
     Anchor,
@@ -396,11 +397,12 @@ def _scale_bar(
 
 
 def _bar_length(greatest: float, length_unit: LengthUnit) -> tuple[float, tuple[str, str]]:
-    unit = 0.0000254 if length_unit is LengthUnit.INCH else 0.000001
-    # Steps of a hundredth of a unit, so that a strong magnification still finds a round length.
-    amount = step_not_above(value=greatest / (0.01 * unit)) * 0.01 * unit
-    micrometres = f"{amount * 1e6:.3g} µm"
-    if length_unit is LengthUnit.MILLIMETRE:
-        return amount, (micrometres, f"{amount / 0.0254:.1g} in")
-    inches = f"{amount / 0.0254:.6f}".rstrip("0")
-    return amount, (f"{inches} in", micrometres)
+    inches = length_unit is LengthUnit.INCH
+    # A hundredth of the finest step, so that a strong magnification still finds a round length.
+    unit = Length.read("0.00001", "in").si if inches else Length.read("0.01", "µm").si
+    amount = step_not_above(value=greatest / unit) * unit
+    in_micrometres = f"{Length.in_unit(amount, 'µm'):.3g} µm"
+    in_inches = Length.in_unit(amount, "in")
+    if inches:
+        return amount, (f"{in_inches:.6f}".rstrip("0") + " in", in_micrometres)
+    return amount, (in_micrometres, f"{in_inches:.2g} in")

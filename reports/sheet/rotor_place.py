@@ -98,14 +98,24 @@ class Shown:
         return self._placed(points, lift, 1.0)
 
     def _placed(self, points: tuple[Point, ...], lift: float, side: float) -> tuple[Point, ...]:
+        # A silhouette still closes at the axis while its part is lifted.
         return tuple(
-            (self.axis.x(position), self.base + side * self.axis.scale * (radius + lift))
+            (
+                self.axis.x(position),
+                self.base + side * self.axis.scale * (radius + lift if radius > 0.0 else 0.0),
+            )
             for position, radius in points
         )
 
     def halves(self) -> tuple[Callable[[tuple[Point, ...]], tuple[Point, ...]], ...]:
         """Give the way of placing points for each half that is drawn."""
         return (self.upper,) if self.view is View.HALF else (self.upper, self.lower)
+
+    def box_of(self, part: PartOutline) -> Box:
+        """Give the place that the upper half of a part takes."""
+        left, right = self.axis.x(part.start), self.axis.x(part.end)
+        seat = self.base - self.axis.scale * part.bore_diameter / 2.0
+        return Box(left, self.top_of(part), right, seat)
 
     def top_of(self, part: PartOutline) -> float:
         """Give the height of a part's rim on the sheet in sheet units [-]."""

@@ -7,7 +7,13 @@ from reports.sheet.elements import Anchor, Box, Item, Line, Polyline, Text
 from reports.sheet.labels import Label, note, thinned
 from reports.sheet.lines import ACTIVE_GUIDE, SEEN_EDGE
 from reports.sheet.medium import Size
-from reports.sheet.pictures import LIFT_MAGNIFICATION, PartOutline, PartState, RotorPicture
+from reports.sheet.pictures import (
+    LIFT_MAGNIFICATION,
+    Facing,
+    PartOutline,
+    PartState,
+    RotorPicture,
+)
 from reports.sheet.rotor_place import Shown, upright
 from reports.sheet.scale import scale_bar_for
 from reports.typeface import Weight
@@ -42,6 +48,7 @@ def rotor_words(*, picture: RotorPicture, shown: Shown) -> tuple[Item, ...]:
         for part in sorted(picture.parts, key=lambda part: part.start)
         if part.number and not part.label
     ]
+    taken += [shown.box_of(part) for part in picture.parts]
     kept = thinned(labels=numbers, medium=shown.medium, taken=taken)
     return (*items, *(label.text for label in kept))
 
@@ -86,7 +93,8 @@ def _leader(part: PartOutline, picture: RotorPicture, shown: Shown, taken: list[
     medium = shown.medium
     size = medium.size(Size.NOTE)
     current = part.state is PartState.CURRENT
-    x = shown.axis.x(part.start + 0.62 * (part.end - part.start))
+    share = 0.74 if part.facing is Facing.DRIVE_END else 0.26
+    x = shown.axis.x(part.start + share * (part.end - part.start))
     highest = min(shown.top_of(other) for other in picture.parts)
     row = max(shown.place.top + 0.5 * size, highest - 0.9 * size)
     words = part.label

@@ -5,6 +5,7 @@ from __future__ import annotations
 import math
 from dataclasses import dataclass
 
+from models.units import Length
 from reports.sheet.pictures import LengthUnit
 
 __all__ = [
@@ -277,9 +278,10 @@ def scale_bar_for(
     >>> scale_bar_for(scale=600.0, greatest_width=90.0, length_unit=LengthUnit.MILLIMETRE)
     (0.1, '100 mm = 3.94 in')
     """
-    unit = 0.0254 if length_unit is LengthUnit.INCH else 0.001
+    other = LengthUnit.MILLIMETRE if length_unit is LengthUnit.INCH else LengthUnit.INCH
+    unit = Length.read("1", length_unit.value).si
     count = step_not_above(value=greatest_width / scale / unit)
-    length = round(count * unit, 9)
-    if length_unit is LengthUnit.INCH:
-        return length, f"{count} in = {length * 1000.0:.4g} mm"
-    return length, f"{count} mm = {length / 0.0254:.3g} in"
+    length = Length.read(str(count), length_unit.value).si
+    digits = 4 if other is LengthUnit.MILLIMETRE else 3
+    beside = f"{Length.in_unit(length, other.value):.{digits}g} {other.value}"
+    return length, f"{count} {length_unit.value} = {beside}"

@@ -279,3 +279,25 @@ def test_the_name_being_read_and_the_journals_stay_where_stations_crowd():
 def test_the_invented_rotor_is_as_long_as_its_last_step():
     # By hand: 62 in.
     assert invented.rotor().length == pytest.approx(1.5748)
+
+
+def test_a_number_that_would_lie_on_a_taller_neighbour_is_left_out():
+    tall = part(key="a", start=0.5, end=0.6, outer_diameter=0.5, number="1")
+    low = part(key="b", start=0.6, end=0.61, outer_diameter=0.2, number="2")
+
+    words = [item.text for item in drawn(tall, low).items if isinstance(item, Text)]
+
+    assert "1" in words
+    assert "2" not in words
+
+
+def test_the_outside_of_a_lifted_part_still_closes_at_the_axis():
+    hot = part(state=PartState.CURRENT, lifted_gap=0.0002)
+    layer = drawn(hot, view=View.SECTION)
+    seated = drawn(part(state=PartState.CURRENT), view=View.SECTION)
+
+    below, before = (outlines(one, OUTLINE_CURRENT)[-1] for one in (layer, seated))
+
+    assert below.points[0] == before.points[0]
+    # By hand: 0.0002 m × 50 × 500 to the metre.
+    assert below.points[1][1] - before.points[1][1] == pytest.approx(5.0)
