@@ -3,6 +3,7 @@
 from collections import Counter
 from typing import Any
 
+from app.worked_out import worked_out
 from models.assess import Assessment, Standing
 from models.rules.rule import Verdict
 
@@ -18,7 +19,7 @@ _COUNTED = {
 
 
 def as_data(view: Assessment) -> dict[str, Any]:
-    """Give every finding as plain data: inputs and computed values in SI, temperatures in °C."""
+    """Give findings and calculations as plain data, in SI, temperatures in °C."""
     job = view.job
     return {
         "job": job.number,
@@ -27,6 +28,7 @@ def as_data(view: Assessment) -> dict[str, Any]:
         "verdict": view.verdict.value,
         "next": view.next.words,
         "findings": [_one(standing) for standing in view.findings],
+        "worked_out": worked_out(view),
     }
 
 
