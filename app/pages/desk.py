@@ -7,7 +7,15 @@ from typing import Protocol, runtime_checkable
 
 from PySide6.QtCore import QRectF, QSize, Qt, Signal
 from PySide6.QtGui import QKeyEvent, QPaintEvent, QPalette
-from PySide6.QtWidgets import QFrame, QLabel, QLineEdit, QScrollArea, QSizePolicy, QWidget
+from PySide6.QtWidgets import (
+    QFrame,
+    QLabel,
+    QLineEdit,
+    QScrollArea,
+    QScrollBar,
+    QSizePolicy,
+    QWidget,
+)
 
 from app.drawing.view import SheetView
 from app.frame.key import Key
@@ -28,6 +36,7 @@ __all__ = [
     "desk_key",
     "desk_look",
     "dress_all",
+    "dress_bar",
 ]
 
 _TO_DESK = DESK.size(Size.TEXT) / BENCH_1280.size(Size.TEXT)
@@ -287,6 +296,26 @@ class DeskSheet(SheetView):
         return QSize(320, 60)
 
 
+def dress_bar(bar: QScrollBar, look: Look) -> None:
+    """Make a scroll bar flat: a plain bar in a plain groove.
+
+    Parameters
+    ----------
+    bar : QScrollBar
+        The bar.
+    look : Look
+        Gives its colours.
+    """
+    groove, handle = look.colour(Colour.PAPER).name(), look.colour(Colour.BEFORE).name()
+    bar.setStyleSheet(
+        f"QScrollBar:vertical {{ background: {groove}; width: 14px; border: none; }}"
+        f"QScrollBar::handle:vertical {{ background: {handle}; min-height: 32px;"
+        " margin: 2px 4px; border: none; }"
+        "QScrollBar::add-line, QScrollBar::sub-line { height: 0px; }"
+        f"QScrollBar::add-page, QScrollBar::sub-page {{ background: {groove}; }}"
+    )
+
+
 class DeskScroll(QScrollArea):
     """A column longer than the window, moved by wheel, by bar, or by what has the keyboard."""
 
@@ -300,6 +329,7 @@ class DeskScroll(QScrollArea):
 
     def dress(self, look: Look) -> None:
         """Take over the ground."""
+        dress_bar(self.verticalScrollBar(), look)
         palette = QPalette(self.palette())
         palette.setColor(QPalette.ColorRole.Window, look.colour(Colour.PAPER))
         self.setPalette(palette)

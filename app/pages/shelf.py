@@ -30,6 +30,7 @@ from app.frame.lettering import draw_at, draw_lines, fitted, wrapped
 from app.frame.look import Look
 from app.frame.plain import draw_focus, flat_painter
 from app.frame.shapes import draw_verdict_shape
+from app.pages.desk import dress_bar
 from app.presenters.jobs import ShelfRow
 from app.viewmodels.rows import ROW_ROLE, Column, RowsModel
 from reports.palette import Colour
@@ -46,8 +47,8 @@ ROW_HEIGHT = 96
 """Height of a job's row before the text is scaled [px]."""
 
 _MARGIN = 24
-_NAMES_SHARE = 0.25
-_WORDS_SHARE = 0.32
+_NAMES_SHARE = 0.28
+_WORDS_SHARE = 0.31
 Index = QModelIndex | QPersistentModelIndex
 
 
@@ -82,7 +83,7 @@ class _Rows(QStyledItemDelegate):
         free = room.width() - 2.0 * _MARGIN
         names, words = free * _NAMES_SHARE, free * _WORDS_SHARE
         self._paint_names(painter, QRectF(left, room.top(), names, room.height()), row)
-        middle = QRectF(left + names, room.top() + 4.0, free - names - words, room.height() - 8.0)
+        middle = QRectF(left + names, room.top() + 4.0, free - names - words, room.height() - 14.0)
         self._paint_rotor(painter, middle, row)
         words_room = QRectF(room.right() - _MARGIN - words, room.top(), words, room.height())
         self._paint_waits(painter, words_room, row)
@@ -208,6 +209,7 @@ class ShelfView(QListView):
     def dress(self, look: Look) -> None:
         """Take over colours and sizes."""
         self.look = look
+        dress_bar(self.verticalScrollBar(), look)
         palette = QPalette(self.palette())
         palette.setColor(QPalette.ColorRole.Base, look.colour(Colour.PAPER))
         self.setPalette(palette)

@@ -23,6 +23,7 @@ from app.frame.lettering import draw_at, draw_struck, line_step, wrapped
 from app.frame.look import Look
 from app.frame.plain import draw_focus, flat_painter
 from app.frame.shapes import draw_verdict_shape
+from app.pages.desk import dress_bar
 from app.viewmodels.rows import SHAPE_ROLE, STRUCK_ROLE, Column, RowsModel
 from reports.palette import Colour
 from reports.sheet.medium import LineWidth, Size
@@ -56,7 +57,8 @@ class _Cells(QStyledItemDelegate):
     def _lines(self, index: Index, width: float) -> list[str]:
         text = index.data(Qt.ItemDataRole.DisplayRole) or ""
         font = self._font(index.column())
-        room = max(width - 2.0 * _PAD - self._indent(index), 24.0)
+        before = self._table.pad(index.column()) + self._indent(index)
+        room = max(width - _PAD - before, 24.0)
         return [line for part in text.split("\n") for line in wrapped(part, font, width=room)]
 
     def sizeHint(self, option: QStyleOptionViewItem, index: Index) -> QSize:
@@ -92,14 +94,16 @@ class _Cells(QStyledItemDelegate):
         kind = index.data(SHAPE_ROLE)
         if kind is not None:
             size = look.size(Size.TEXT)
-            centre = QPointF(room.left() + _PAD + size / 2.0, room.top() + 5.0 + step / 2.0)
+            pad = self._table.pad(index.column())
+            centre = QPointF(room.left() + pad + size / 2.0, room.top() + 5.0 + step / 2.0)
             # Qt hands an enumeration of words back as its word.
             draw_verdict_shape(painter, centre, size, VerdictKind(kind), look)
         lines = self._lines(index, room.width())
         right = self._table.model_of_rows.columns[index.column()].right
         base = room.top() + 5.0 + step * 0.77
         align = Qt.AlignmentFlag.AlignRight if right else Qt.AlignmentFlag.AlignLeft
-        left = room.right() - _PAD if right else room.left() + _PAD + self._indent(index)
+        before = self._table.pad(index.column()) + self._indent(index)
+        left = room.right() - _PAD if right else room.left() + before
         for line in lines:
             if index.data(STRUCK_ROLE) and line:
                 draw_struck(painter, QPointF(left, base), line, align=align)
@@ -135,7 +139,8 @@ class _Heads(QHeaderView):
             place = QPointF(rect.right() - _PAD, base)
             draw_at(painter, place, column.title, align=Qt.AlignmentFlag.AlignRight)
         else:
-            draw_at(painter, QPointF(rect.left() + _PAD, base), column.title)
+            pad = self._table.pad(logicalIndex)
+            draw_at(painter, QPointF(rect.left() + pad, base), column.title)
         thin = look.line(LineWidth.NARROW)
         line = QRectF(rect.left(), rect.bottom() + 1.0 - thin, rect.width(), thin)
         painter.fillRect(line, look.colour(Colour.INK2))
@@ -157,11 +162,13 @@ class DeskTable(QTableView):
         name: str,
         look: Look,
         grows: bool = False,
+        edge: int = 24,
         parent: QWidget | None = None,
     ) -> None:
         super().__init__(parent)
         self.look = look
         self._grows = grows
+        self.edge = edge
         self.model_of_rows: RowsModel[Any] = RowsModel(columns, self)
         self.setAccessibleName(name)
         self.setFrameShape(QFrame.Shape.NoFrame)
@@ -184,6 +191,10 @@ class DeskTable(QTableView):
         )
         self.dress(look)
 
+    def pad(self, column: int) -> int:
+        """Give the room before a column's words; the first one keeps the desk's margin [px]."""
+        return self.edge if column == 0 else _PAD
+
     def set_rows(self, rows: Sequence[Any]) -> None:
         """Show other rows.
 
@@ -203,6 +214,7 @@ class DeskTable(QTableView):
     def dress(self, look: Look) -> None:
         """Take over colours and sizes."""
         self.look = look
+        dress_bar(self.verticalScrollBar(), look)
         palette = QPalette(self.palette())
         palette.setColor(QPalette.ColorRole.Base, look.colour(Colour.PAPER))
         self.setPalette(palette)
