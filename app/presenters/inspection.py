@@ -1,0 +1,474 @@
+"""What an inspector has to look at, decide and sign, in the job on the desks."""
+
+from __future__ import annotations
+
+from collections.abc import Iterator
+from dataclasses import dataclass
+from datetime import date
+from typing import Literal, TypedDict, get_args
+
+from PySide6.QtCore import QObject, Signal
+
+from app.presenters.attempt_picture import AttemptPicture, attempt_picture, attempt_sentence
+from app.presenters.reasons import Reason, reasons_of
+from app.presenters.shop import Said, ShopPresenter
+from app.presenters.wording import day_and_time, in_words, place_words
+from models.acts import new_id
+from models.assess import Assessment, Attempt, Standing, finding_key
+from models.job import Decision, Entry, Instrument, Job, Place, Role, Signature
+from models.rules.rule import Verdict
+from models.units import unit_set
+from reports.job_pictures import verdict_kind
+from reports.sheet.pictures import VerdictKind
+
+__all__ = [
+    "DISPOSITIONS",
+    "AmendmentRow",
+    "AttemptRow",
+    "FindingRow",
+    "InspectionPresenter",
+    "InstrumentRow",
+    "PointRow",
+]
+
+Disposition = Literal[
+    "rework", "repair", "use as is under concession", "scrap", "read again", "accept reading"
+]
+DISPOSITIONS: tuple[str, ...] = get_args(Disposition)
+"""How a finding may be decided."""
+
+Meaning = Literal["performed", "inspected", "witnessed", "decided"]
+_DAYS_BEFORE_DUE = 30
+_MEANS: dict[str, str] = {
+    "performed": "you did the work as it is recorded",
+    "inspected": "you have read the record of it and agree with its verdicts",
+    "witnessed": "you were present, or have read its record in place of that",
+    "decided": "you have decided that work goes on as recorded",
+}
+_MEANING_OF: dict[str, Meaning] = {
+    "technician": "performed",
+    "inspector": "inspected",
+    "witness": "witnessed",
+    "engineer": "decided",
+}
+
+
+class _Common(TypedDict):
+    id: str
+    place: Place
+    by: str
+    done_at: str
+    entered_at: str
+    plan: str
+
+
+@dataclass(frozen=True, kw_only=True)
+class FindingRow:
+    """A finding that is not within its limits and that nothing has answered."""
+
+    key: str
+    kind: VerdictKind
+    phrase: str
+    where: str
+    sentence: str
+    reasons: tuple[Reason, ...]
+    step: str | None = None
+    attempt: int | None = None
+
+
+@dataclass(frozen=True, kw_only=True)
+class PointRow:
+    """A signature that a settled step waits for."""
+
+    step: str
+    attempt: int
+    where: str
+    kind: str
+    role: Role
+    meaning: Meaning
+    what: str
+    holds: bool
+
+
+@dataclass(frozen=True, kw_only=True)
+class AmendmentRow:
+    """Something recorded that was replaced later; both stay."""
+
+    where: str
+    was: str
+    now: str
+    reason: str
+    by: str
+    at: str
+
+
+@dataclass(frozen=True, kw_only=True)
+class InstrumentRow:
+    """An instrument and the day its calibration falls due."""
+
+    tag: str
+    kind: str
+    due: str
+    words: str
+    verdict: VerdictKind
+
+
+@dataclass(frozen=True, kw_only=True)
+class AttemptRow:
+    """An attempt that can be laid beside another."""
+
+    step: str
+    attempt: int
+    title: str
+    sentence: str
+    kind: VerdictKind
+
+
+class InspectionPresenter(QObject):
+    """Lists what waits; records decisions and signatures through the one door."""
+
+    changed = Signal()
+    """Something else waits now."""
+    recorded = Signal(str)
+    """A decision or a signature is on the disk; carries a sentence."""
+
+    def __init__(self, shop: ShopPresenter, parent: QObject | None = None) -> None:
+        super().__init__(parent)
+        self._shop = shop
+        shop.job_changed.connect(self.changed)
+        shop.person_changed.connect(self.changed)
+
+    @property
+    def view(self) -> Assessment | None:
+        """The job on the desks, worked out."""
+        return self._shop.view
+
+    @property
+    def empty_words(self) -> str:
+        """What to say where there is nothing to inspect."""
+        if self._shop.job_number:
+            return f"working: job {self._shop.job_number} is being worked out"
+        return "No job lies on the desks. Choose one at the Jobs desk."
+
+    @property
+    def heading(self) -> str:
+        """Rotor and how many things wait."""
+        if self.view is None:
+            return ""
+        rotor = self.view.job.plan.rotor
+        return f"{rotor.serial}{' (invented)' if rotor.invented else ''}, inspection"
+
+    @property
+    def summary(self) -> str:
+        """One sentence: what waits here."""
+        findings, points = len(self.findings), len(self.points)
+        if not findings and not points:
+            return "Nothing waits for you."
+        parts = [_many(findings, "finding")] if findings else []
+        parts += [_many(points, "signature")] if points else []
+        verb = "waits" if findings + points == 1 else "wait"
+        return f"{' and '.join(parts)} {verb} for somebody."
+
+    # -- findings
+
+    @property
+    def findings(self) -> tuple[FindingRow, ...]:
+        """Every finding that is not within and not answered, worst first."""
+        view = self.view
+        if view is None:
+            return ()
+        waiting = [
+            one
+            for one in view.findings
+            if one.answered_by is None and one.finding.verdict is not Verdict.WITHIN
+        ]
+        waiting.sort(key=lambda one: -one.finding.verdict.severity)
+        return tuple(_finding_row(view.job, one) for one in waiting)
+
+    def decide(self, row: FindingRow, disposition: str, words: str) -> None:
+        """Record a decision about a finding in the name of who is signed in.
+
+        Parameters
+        ----------
+        row : FindingRow
+            The finding.
+        disposition : str
+            One of `DISPOSITIONS`.
+        words : str
+            Why.
+        """
+        if not words.strip():
+            self._shop.said.emit(
+                Said(what="A decision says why.", way_out="Type the reason first.")
+            )
+            return
+        if row.step is None:
+            self._shop.said.emit(
+                Said(
+                    what="This finding is not about one attempt.",
+                    way_out="It is answered by going on with the build, not by a decision.",
+                )
+            )
+            return
+        chosen = next((one for one in get_args(Disposition) if one == disposition), None)
+        if chosen is None:
+            self._shop.said.emit(Said(what="A decision names what is to be done."))
+            return
+        common = self._common(row.step, row.attempt)
+        if common is None:
+            return
+        entry = Decision(**common, about=row.key, disposition=chosen, words=words.strip())
+        self._shop.record(
+            entry, done=lambda _: self.recorded.emit(f"Decided: {chosen}, {row.where}.")
+        )
+
+    # -- points
+
+    @property
+    def points(self) -> tuple[PointRow, ...]:
+        """The signatures that settled steps wait for."""
+        view = self.view
+        return tuple(_points(view)) if view is not None else ()
+
+    def signing_words(self, row: PointRow) -> str:
+        """Say whose name is about to stand under what, and what it means.
+
+        Parameters
+        ----------
+        row : PointRow
+            The signature that is waited for.
+
+        Returns
+        -------
+        str
+            Two sentences.
+        """
+        person = self._shop.person
+        if person is None:
+            return "Nobody is signed in. Say who is at the window first, at the upper right."
+        return (
+            f"“{person.name}, {person.role}” is about to stand under {row.where}: {row.what}. "
+            f"It says “{row.meaning}”: {_MEANS[row.meaning]}."
+        )
+
+    def sign(self, row: PointRow) -> None:
+        """Put the name of who is signed in under an attempt.
+
+        Parameters
+        ----------
+        row : PointRow
+            The signature that is waited for.
+        """
+        person = self._shop.person
+        common = self._common(row.step, row.attempt)
+        if common is None or person is None:
+            return
+        entry = Signature(**common, role=person.role, meaning=row.meaning, covers=row.what)
+        self._shop.record(
+            entry,
+            done=lambda _: self.recorded.emit(f"{person.name} has signed {row.where}."),
+        )
+
+    def _common(self, step: str, attempt: int | None) -> _Common | None:
+        job, person = self._shop.job, self._shop.person
+        if job is None or person is None:
+            self._shop.said.emit(
+                Said(
+                    what="Nobody of this job is signed in.",
+                    way_out="Say who is at the window first, at the upper right.",
+                )
+            )
+            return None
+        now = self._shop.acts.now()
+        return {
+            "id": new_id(),
+            "place": Place(kind="attempt", step=step, attempt=attempt),
+            "by": person.key,
+            "done_at": now,
+            "entered_at": now,
+            "plan": job.plan.revision,
+        }
+
+    # -- amendments and instruments
+
+    @property
+    def amendments(self) -> tuple[AmendmentRow, ...]:
+        """What was replaced, the latest first."""
+        view = self.view
+        rows = list(_amendments(view.job)) if view is not None else []
+        return tuple(sorted(rows, key=lambda row: row.at, reverse=True))
+
+    @property
+    def instruments(self) -> tuple[InstrumentRow, ...]:
+        """The job's instruments, the one due first at the top."""
+        view = self.view
+        if view is None:
+            return ()
+        today = date.fromisoformat(self._shop.acts.now()[:10])
+        known = sorted(
+            view.job.instruments,
+            key=lambda one: one.calibration.due_on if one.calibration is not None else "",
+        )
+        return tuple(_instrument_row(one, today) for one in known)
+
+    # -- side by side
+
+    @property
+    def attempts(self) -> tuple[AttemptRow, ...]:
+        """The attempts that were surveyed, in the order of the work."""
+        view = self.view
+        if view is None:
+            return ()
+        return tuple(
+            AttemptRow(
+                step=one.step.key,
+                attempt=one.number,
+                title=_attempt_title(view, one),
+                sentence=in_words(view.job, attempt_sentence(one)),
+                kind=verdict_kind(one.verdict_of("runout-changed")),
+            )
+            for one in view.attempts
+            if one.judged is not None
+        )
+
+    def first_pair(self) -> tuple[int, int]:
+        """Choose which two attempts lie side by side first.
+
+        Returns
+        -------
+        tuple of int
+            Places in `attempts`: a step's first remount, else the last two.
+        """
+        rows = self.attempts
+        for place in range(1, len(rows)):
+            if rows[place].step == rows[place - 1].step:
+                return place - 1, place
+        return max(len(rows) - 2, 0), max(len(rows) - 1, 0)
+
+    def picture(self, row: AttemptRow) -> AttemptPicture | None:
+        """Draw an attempt.
+
+        Parameters
+        ----------
+        row : AttemptRow
+            The attempt.
+
+        Returns
+        -------
+        AttemptPicture or None
+            None where the job no longer has it.
+        """
+        view = self.view
+        found = view.attempt(row.step, row.attempt) if view is not None else None
+        return attempt_picture(view, found) if view is not None and found is not None else None
+
+
+def _many(number: int, what: str) -> str:
+    return f"1 {what}" if number == 1 else f"{number} {what}s"
+
+
+def _finding_row(job: Job, standing: Standing) -> FindingRow:
+    finding = standing.finding
+    subject = finding.subject
+    return FindingRow(
+        key=finding_key(finding),
+        kind=verdict_kind(finding.verdict),
+        phrase=finding.phrase,
+        where=place_words(job, subject),
+        sentence=in_words(job, finding.message),
+        reasons=reasons_of(finding, unit_set(job.plan.rotor.units)),
+        step=subject.step,
+        attempt=subject.attempt,
+    )
+
+
+def _attempt_title(view: Assessment, attempt: Attempt) -> str:
+    number = view.job.plan.step_number(attempt.step.key)
+    return f"step {number}, {attempt.step.title}, attempt {attempt.number}"
+
+
+def _points(view: Assessment) -> Iterator[PointRow]:
+    for step in view.job.plan.steps:
+        attempts = view.attempts_at(step.key)
+        last = attempts[-1] if attempts else None
+        if last is None or last.settled is None or last.settled.outcome == "removed":
+            continue
+        given = {(one.role, one.meaning) for one in last.signatures}
+        where = _attempt_title(view, last)
+        wanted: list[tuple[str, Role, str]] = [("hold", "technician", "the work of this step")]
+        wanted += [(one.kind, one.role, one.what) for one in step.points]
+        for kind, role, what in wanted:
+            meaning = _MEANING_OF[role]
+            signed = any(said == meaning and by == role for by, said in given)
+            if not signed:
+                yield PointRow(
+                    step=step.key,
+                    attempt=last.number,
+                    where=where,
+                    kind=kind,
+                    role=role,
+                    meaning=meaning,
+                    what=what,
+                    holds=kind == "hold",
+                )
+
+
+def _amendments(job: Job) -> Iterator[AmendmentRow]:
+    names = {one.key: one.name for one in job.people}
+    by_id = {one.id: one for one in job.entries}
+    for entry in job.entries:
+        for one in getattr(entry, "corrections", ()):
+            yield AmendmentRow(
+                where=f"{_entry_words(job, entry)}: {_mark_words(entry, one.where)}",
+                was=one.was,
+                now=one.now,
+                reason=one.reason,
+                by=names.get(one.by, one.by),
+                at=day_and_time(one.at),
+            )
+        replaced = by_id.get(entry.supersedes or "")
+        if replaced is not None:
+            yield AmendmentRow(
+                where=_entry_words(job, entry),
+                was=f"entered {day_and_time(replaced.entered_at)}",
+                now=f"entered {day_and_time(entry.entered_at)}",
+                reason=entry.reason or "",
+                by=names.get(entry.by, entry.by),
+                at=day_and_time(entry.entered_at),
+            )
+
+
+def _entry_words(job: Job, entry: Entry) -> str:
+    place = entry.place
+    if place.step is None:
+        return f"{entry.title}, {place.kind}"
+    number = job.plan.step_number(place.step)
+    return f"{entry.title}, step {number}, attempt {place.attempt}"
+
+
+def _mark_words(entry: Entry, where: tuple[str, ...]) -> str:
+    angles = getattr(entry, "angles", ())
+    if len(where) == 2 and where[1].isdigit() and int(where[1]) < len(angles):
+        return f"{where[0]} at {angles[int(where[1])].written}"
+    return ", ".join(where)
+
+
+def _instrument_row(one: Instrument, today: date) -> InstrumentRow:
+    if one.calibration is None:
+        return InstrumentRow(
+            tag=one.tag,
+            kind=one.kind,
+            due="",
+            words="No calibration is recorded.",
+            verdict=VerdictKind.NOT_JUDGED,
+        )
+    days = (date.fromisoformat(one.calibration.due_on) - today).days
+    verdict, words = VerdictKind.WITHIN, f"in {_many(days, 'day')}"
+    if days < 0:
+        ago = f"{_many(-days, 'day')} ago"
+        verdict, words = VerdictKind.STOP, f"{ago}; do not use it until it is calibrated"
+    elif days <= _DAYS_BEFORE_DUE:
+        verdict, words = VerdictKind.LOOK, f"{words if days else 'today'}; send it soon"
+    return InstrumentRow(
+        tag=one.tag, kind=one.kind, due=one.calibration.due_on, words=words, verdict=verdict
+    )
