@@ -11,8 +11,11 @@ from PySide6.QtWidgets import QApplication, QWidget
 from app.frame.look import Look
 from app.last_resort import LastResort, show_dialog
 from app.presenters.background import Background
+from app.presenters.inspection import InspectionPresenter
 from app.presenters.jobs import JobsPresenter
+from app.presenters.plan import PlanPresenter
 from app.presenters.shop import ShopPresenter
+from app.presenters.story import StoryPresenter
 from app.presenters.writing import Writer
 from app.settings import Settings, shop_folder
 from app.style.theme import apply_theme
@@ -48,7 +51,10 @@ class Opened:
         self._add_desks()
 
     def _add_desks(self) -> None:
+        from app.pages.inspection import InspectionPage
         from app.pages.jobs import JobsPage
+        from app.pages.plan import PlanPage
+        from app.pages.story import StoryPage
 
         window, look = self.window, Look()
         self.jobs = JobsPresenter(self.shop)
@@ -58,7 +64,11 @@ class Opened:
         )
         self.jobs.opened.connect(lambda _number: window.show_desk(BENCH))
         window.add_desk("Jobs", JobsPage(self.jobs, look=look, ask_person=window.ask_person))
+        window.add_desk("Plan", PlanPage(PlanPresenter(self.shop), look=look))
         window.add_desk(BENCH, None)
+        inspection = InspectionPresenter(self.shop)
+        window.add_desk("Inspection", InspectionPage(inspection, look=look))
+        window.add_desk("Witness", StoryPage(StoryPresenter(self.shop), look=look))
 
     def _make_bench(self, job: str, person: str, look: Look, parent: QWidget) -> QWidget:
         return make_bench(self._acts, self.writer, job, person, look, parent)
