@@ -7,6 +7,7 @@ from PySide6.QtGui import QResizeEvent
 from PySide6.QtWidgets import QWidget
 
 from app.entry.question_line import Question, QuestionLine, ReasonKeys
+from app.frame.lettering import wrapped
 from app.frame.look import Look
 from app.frame.plain import PlainWidget
 from app.pages.bench.keep_words import KeepWords
@@ -14,6 +15,8 @@ from app.pages.bench.shown import question_of
 from app.presenters.bench.state import ReadingTask, Task
 
 __all__ = ["Beside"]
+
+_SHAPE = 36.0
 
 
 class Beside(PlainWidget):
@@ -85,11 +88,25 @@ class Beside(PlainWidget):
         self.done.emit()
         return True
 
-    def wanted_height(self) -> int:
-        """Give the height of what stands here, 0 for nothing [px]."""
-        if self._asked is not None:
-            return self.question.sizeHint().height()
-        return 0 if self.reasons.isHidden() else self.reasons.sizeHint().height()
+    def wanted_height(self, width: float) -> int:
+        """Give the height of what stands here, 0 for nothing.
+
+        Parameters
+        ----------
+        width : float
+            The room there will be [px].
+
+        Returns
+        -------
+        int
+            Sentence and keys, or keys alone [px].
+        """
+        if self._asked is None:
+            return 0 if self.reasons.isHidden() else self.reasons.sizeHint().height()
+        words = f"{self._asked.mark}: {self._asked.sentence}"
+        font = self._look.note_font()
+        lines = len(wrapped(words, font, width=width - _SHAPE, most=2))
+        return round(lines * font.pixelSize() * 1.25 + self._look.touch + 8)
 
     def resizeEvent(self, event: QResizeEvent) -> None:
         """Give each of the three the whole room."""

@@ -3,7 +3,8 @@
 from __future__ import annotations
 
 import math
-from dataclasses import dataclass
+from collections.abc import Sequence
+from dataclasses import dataclass, replace
 
 from app.pages.bench.places import Frame, Places
 from app.presenters.bench.state import BenchState
@@ -11,6 +12,7 @@ from reports.sheet.along import along_the_rotor, axis_for, magnification_along
 from reports.sheet.dial import dial
 from reports.sheet.elements import Box, Layer, Sheet, sheet_of
 from reports.sheet.labels import note
+from reports.sheet.medium import Medium
 from reports.sheet.pictures import DialPicture, RangePicture, Turning
 from reports.sheet.ranges import fit_bar, fit_bar_height
 from reports.sheet.scale import magnification_text
@@ -18,6 +20,9 @@ from reports.sheet.scale import magnification_text
 __all__ = ["Magnification", "along_sheet", "dial_sheet", "ranges_height", "ranges_sheet"]
 
 _ALONE = 2000
+# The figure's own shares of its width: names at the left, and the ruled part.
+_NAMES_SHARE, _PLOT_SHARE = 0.25, 0.6
+_MARGINS = (0.18, 0.3, 0.45, 0.6, 0.8, 1.0, 1.4)
 
 
 @dataclass(slots=True)
@@ -139,21 +144,31 @@ def dial_sheet(
         scale = axis_for(picture=state.rotor, layout=places.layout).scale
         if places.has_planes:
             wanted = enlarged.held or _chosen(state, places, enlarged)
+    # Beside an open question the dial needs the room of its second line more than the words.
+    shown = replace(picture, caption=picture.caption[:1]) if places.beside.height() else picture
+    medium = _fitting(shown.caption, width - 2.0 * side, frame.medium)
     layer = dial(
-        picture=picture,
+        picture=shown,
         place=Box(side, above, width - side, height - above),
-        medium=frame.medium,
+        medium=medium,
         scale=scale,
         magnification=wanted,
     )
     return sheet_of(
         width=width,
         height=height,
-        medium=frame.medium,
+        medium=medium,
         layers=[layer],
         title=f"Dial of {picture.key}",
         description=picture.tells,
     )
+
+
+def _fitting(lines: Sequence[str], room: float, medium: Medium) -> Medium:
+    """Hold type so small that no line under the dial leaves its column."""
+    longest = max((_width(text, medium) for text in lines), default=0.0)
+    share = min(room / longest, 1.0) if longest else 1.0
+    return replace(medium, sizes={use: size * share for use, size in medium.sizes.items()})
 
 
 def ranges_height(picture: RangePicture, frame: Frame) -> float:
@@ -166,7 +181,8 @@ def ranges_sheet(picture: RangePicture, frame: Frame, places: Places) -> Sheet:
     """Draw values against their limits."""
     width = places.ranges.width() / frame.growth
     height = places.ranges.height() / frame.growth
-    layer = fit_bar(picture=picture, place=Box(0.0, 2.0, width, height - 4.0), medium=frame.medium)
+    place = Box(0.0, 2.0, width, height - 4.0)
+    layer = fit_bar(picture=_with_room(picture, place, frame), place=place, medium=frame.medium)
     bars = ". ".join(f"{bar.name}: {bar.text}, {bar.verdict.value}" for bar in picture.bars)
     return sheet_of(
         width=width,
@@ -176,3 +192,28 @@ def ranges_sheet(picture: RangePicture, frame: Frame, places: Places) -> Sheet:
         title="Values against limits",
         description=bars,
     )
+
+
+def _with_room(picture: RangePicture, place: Box, frame: Frame) -> RangePicture:
+    """Widen the scale until the words at both limits have room beside their lines."""
+    lower, upper = picture.lower, picture.upper
+    if lower is None or upper is None or picture.start is not None or picture.end is not None:
+        return picture
+    ends = [lower, upper]
+    for bar in picture.bars:
+        ends += [bar.least - bar.uncertainty, bar.greatest + bar.uncertainty]
+    least, span = min(ends), max(ends) - min(ends)
+    wide = [_width(text, frame.medium) for text in (picture.lower_text, picture.upper_text)]
+    plot, left = _PLOT_SHARE * place.width, _NAMES_SHARE * place.width
+    shown = picture
+    for margin in _MARGINS:
+        start, whole = least - margin * span, (1.0 + 2.0 * margin) * span
+        shown = replace(picture, start=start, end=start + whole)
+        low, high = (left + plot * (limit - start) / whole for limit in (lower, upper))
+        if low - wide[0] >= place.left and high + wide[1] <= place.right:
+            break
+    return shown
+
+
+def _width(text: str, medium: Medium) -> float:
+    return note(x=0.0, y=0.0, text=text, medium=medium).box(medium).width + 8.0

@@ -28,7 +28,7 @@ class Figures:
         self._cell = entry.cell
         self._form = form
         self.keypad = Keypad(look=look, parent=parent)
-        self.keypad.setObjectName("keypad")
+        self.keypad.setObjectName("figures")
         self.keypad.hide()
         self.keypad.written.connect(self._write)
         self.keypad.sign_changed.connect(self._change_sign)

@@ -2,6 +2,8 @@
 
 from __future__ import annotations
 
+from itertools import pairwise
+
 from PySide6.QtCore import QRect, Signal
 from PySide6.QtGui import QKeySequence, QResizeEvent, QShortcut
 from PySide6.QtWidgets import QApplication, QLineEdit, QWidget
@@ -11,6 +13,7 @@ from app.entry.fields_form import FieldsForm
 from app.frame.key import Key
 from app.frame.look import Look
 from app.frame.plain import PlainWidget
+from app.pages.bench.scroll_bars import flatten_scroll_bars
 from app.pages.bench.shown import field_of
 from app.pages.bench.task_words import TaskWords
 from app.presenters.bench.state import Field, FormTask
@@ -22,18 +25,32 @@ _MOST_WORDS = 0.46
 
 
 class FormEntry(PlainWidget):
-    """The left columns while a form is filled. Ctrl+Enter takes it from any field."""
+    """The left columns while a form is filled. Ctrl+Enter takes it from any field.
+
+    Parameters
+    ----------
+    take_parent : QWidget or None
+        What holds the key that takes the form, where it stands elsewhere.
+    """
 
     filled = Signal(dict)
 
-    def __init__(self, *, look: Look | None = None, parent: QWidget | None = None) -> None:
+    def __init__(
+        self,
+        *,
+        look: Look | None = None,
+        parent: QWidget | None = None,
+        take_parent: QWidget | None = None,
+    ) -> None:
         super().__init__(name="Form", look=look, parent=parent)
         self._task: FormTask | None = None
         self._fields: list[FormField] = []
         self.words = TaskWords(look=self._look, parent=self)
         self.form = FieldsForm(look=self._look, parent=self)
         self.form.setObjectName("form")
-        self.take = Key("", hint="Ctrl+Enter", size=Size.LEAD, look=self._look, parent=self)
+        self.take = Key(
+            "", hint="Ctrl+Enter", size=Size.LEAD, look=self._look, parent=take_parent or self
+        )
         self.take.setObjectName("take")
         self.take.clicked.connect(self._take)
         self.form.finished.connect(self.take.setFocus)
@@ -74,12 +91,13 @@ class FormEntry(PlainWidget):
         for name, text in typed.items():
             if name in asked:
                 self.form.set_answer(name, text)
-        last: QWidget = self.form
+        # New rows come last of all in the window, behind the foot, unless they are told otherwise.
+        controls: list[QWidget] = []
         for field in self._fields:
             row = self.form.row(field.name)
-            QWidget.setTabOrder(last, row)
-            last = row
-        QWidget.setTabOrder(last, self.take)
+            controls += [*row.findChildren(QLineEdit), *row.findChildren(Key)]
+        for before, after in pairwise([*controls, self.take]):
+            QWidget.setTabOrder(before, after)
         if had_keyboard and self.isVisible():
             self.setFocus()
 
@@ -122,7 +140,7 @@ class FormEntry(PlainWidget):
         return next(iter(focused + empty + lines), None)
 
     def resizeEvent(self, event: QResizeEvent) -> None:
-        """Put words, form and key below each other."""
+        """Put words and form below each other."""
         super().resizeEvent(event)
         self._lay_out()
 
@@ -132,14 +150,11 @@ class FormEntry(PlainWidget):
 
     def _lay_out(self) -> None:
         width, height = self.width(), self.height()
-        key = round(self._look.between(narrow=64.0, wide=80.0))
         words = min(self.words.heightForWidth(width), round(height * _MOST_WORDS))
         self.words.setGeometry(QRect(0, 0, width, words))
-        top = words + 8
-        bottom = height - 8 - key
-        self.form.setGeometry(QRect(0, top, width, max(bottom - top - 8, 44)))
-        wide = min(max(self.take.sizeHint().width() + 48, round(width * 0.42)), width)
-        self.take.setGeometry(QRect(width - wide, bottom, wide, key))
+        top = words + 4
+        self.form.setGeometry(QRect(0, top, width, max(height - top - 2, 44)))
+        flatten_scroll_bars(self.form, self._look)
 
 
 def _shape(field: Field) -> tuple[object, ...]:

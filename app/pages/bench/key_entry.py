@@ -22,7 +22,8 @@ from reports.sheet.pictures import GapPicture
 __all__ = ["BigKeys", "DropClock", "KeyEntry"]
 
 _GAP = 16
-_MOST_WORDS = 0.36
+_MOST_WORDS = 0.37
+_DOOR_SHARE = 0.27
 
 
 class BigKeys(PlainWidget):
@@ -193,18 +194,22 @@ class KeyEntry(PlainWidget):
             self.countdown.tick()
         self.door.setVisible(not self.countdown.counting)
         self.door.raise_()
+        # Enter must not say "seated" while the furnace is still shut.
+        self.setFocusProxy(self.door if not self.countdown.counting else self.keys)
 
     def _open_door(self) -> None:
         """Let the clock run at once; the moment is written afterwards."""
         if self.countdown is not None:
             self.countdown.open_door()
         self.door.hide()
+        self.setFocusProxy(self.keys)
         self._lay_out()
         self.keys.setFocus()
         self.door_opened.emit()
 
     def _end_countdown(self) -> None:
         self.door.hide()
+        self.setFocusProxy(self.keys)
         if self.countdown is not None:
             self.countdown.halt()
             self.countdown.hide()
@@ -229,17 +234,16 @@ class KeyEntry(PlainWidget):
         width, height = self.width(), self.height()
         key = round(self._look.between(narrow=80.0, wide=96.0))
         bottom = height - 8 - (key if self.keys.keys else 0)
-        self.keys.setGeometry(QRect(0, bottom, width, key))
+        door = 0 if self.door.isHidden() else round(width * _DOOR_SHARE)
+        self.door.setGeometry(QRect(0, bottom, door, key))
+        left = door + (_GAP if door else 0)
+        self.keys.setGeometry(QRect(left, bottom, width - left, key))
         if self.countdown is None:
             self.words.setGeometry(QRect(0, 0, width, bottom - 8))
             return
-        door = 0 if self.door.isHidden() else min(self.door.sizeHint().width() + 32, width // 3)
-        room = width - door - (_GAP if door else 0)
-        words = min(self.words.heightForWidth(room), round(height * _MOST_WORDS))
-        words = max(words, key + 12 if door else 0)
-        self.words.setGeometry(QRect(0, 0, room, words))
-        self.door.setGeometry(QRect(width - door, 8, door, key))
-        self.countdown.setGeometry(QRect(0, words, width, height - 8 - words))
+        words = min(self.words.heightForWidth(width), round(height * _MOST_WORDS))
+        self.words.setGeometry(QRect(0, 0, width, words))
+        self.countdown.setGeometry(QRect(0, words + 8, width, height - 16 - words))
 
 
 def _closing(gap: GapPicture, drop: Drop) -> Callable[[float], GapPicture]:

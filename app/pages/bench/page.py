@@ -202,7 +202,7 @@ class BenchPage(PlainWidget):
 
     def _make_entries(self, clock: Callable[[], float]) -> None:
         self.reading = ReadingEntry(self._presenter, look=self._look, parent=self)
-        self.form = FormEntry(look=self._look, parent=self)
+        self.form = FormEntry(look=self._look, parent=self, take_parent=self)
         self.act = KeyEntry(clock=clock, look=self._look, parent=self)
         self.beside = Beside(look=self._look, parent=self)
 
@@ -277,7 +277,8 @@ class BenchPage(PlainWidget):
         before, self._state = self._state, state
         self.title.set_title(title_line(state.title))
         self.setAccessibleDescription(state.words)
-        self._show_verdict(state, None if before is None else before.verdict)
+        self.beside.show_task(state.task)
+        self._show_verdict(state)
         self._show_task(state.task)
         keys = foot_keys(state.keys, takes_figures=isinstance(state.task, _TAKES_FIGURES))
         self.foot.set_keys(keys)
@@ -291,9 +292,11 @@ class BenchPage(PlainWidget):
 
     def _show_task(self, task: Task) -> None:
         entry = self._entry_of(task)
+        closed = self.band.isHidden()
         for other in (self.reading, self.form, self.act):
-            other.setVisible(other is entry)
-        self.beside.show_task(task)
+            other.setVisible(other is entry and closed)
+        self.form.take.setVisible(entry is self.form and closed)
+        self.verdict.setVisible(closed)
         _SHOW[type(task)](self, task)
 
     def _entry_of(self, task: Task) -> ReadingEntry | FormEntry | KeyEntry:
@@ -322,19 +325,22 @@ class BenchPage(PlainWidget):
         self.form.put_away()
         self.act.show_task(task)
 
-    def _show_verdict(self, state: BenchState, before: object) -> None:
-        if state.verdict != before:
-            self.verdict.set_verdict(shown_verdict(state.verdict))
-            self.badge.set_kind(self.verdict.verdict)
-            if self.reasons.isVisible():
-                self.reasons.show_reasons(state.verdict.phrase, state.verdict.reasons)
+    def _show_verdict(self, state: BenchState) -> None:
+        shown = shown_verdict(state.verdict, short=not self.beside.isHidden())
+        if shown != self.verdict.verdict:
+            self.verdict.set_verdict(shown)
+            self.badge.set_kind(shown)
+        if self.reasons.isVisible():
+            self.reasons.show_reasons(state.verdict.phrase, state.verdict.reasons)
         closing = state.verdict.is_final and state.verdict != self._band_put_away
         if closing:
             words = next_words(state.task)
             self.band.set_verdict(banded_verdict(state.verdict), next_words=words)
         else:
             self._band_put_away = state.verdict if state.verdict.is_final else None
-        self.band.setVisible(closing)
+        if closing is self.band.isHidden():
+            self.band.setVisible(closing)
+            self._wanted = None
 
     # -- where it lies
 
@@ -351,7 +357,8 @@ class BenchPage(PlainWidget):
             dial=getattr(task, "dial", None) is not None,
             ranges_height=0.0 if ranges is None else ranges_height(ranges, self._frame),
             wide_entry=not isinstance(task, ReadingTask),
-            question_height=self.beside.wanted_height() / self._frame.growth,
+            question_height=self.beside.wanted_height(self.width() * 0.46) / self._frame.growth,
+            key_height=self._frame.between(64, 80) if isinstance(task, FormTask) else 0.0,
             keypad=self._figures.keypad_wanted and isinstance(task, _TAKES_FIGURES),
             planes_opened=self._opened["planes"],
             dial_opened=self._opened["dial"],
@@ -371,6 +378,7 @@ class BenchPage(PlainWidget):
             (self.form, places.entry),
             (self.act, places.entry),
             (self.beside, places.beside),
+            (self.form.take, places.take),
             (self.verdict, places.verdict),
             (self.title, places.title),
             (self.foot, places.keys),
@@ -378,7 +386,7 @@ class BenchPage(PlainWidget):
             (self._figures.keypad, places.keypad),
         ):
             part.setGeometry(place)
-        self.dial.setVisible(places.has_dial)
+        self.dial.setVisible(places.has_dial and self.band.isHidden())
         self.ranges.setVisible(not places.ranges.isEmpty())
         self.band.setGeometry(
             places.band.adjusted(places.title.x() + self._margin(), 4, -self._margin(), 0)
@@ -482,7 +490,7 @@ class BenchPage(PlainWidget):
     def _go_on(self) -> None:
         state = self._presenter.state
         self._band_put_away = state.verdict
-        self.band.hide()
+        self.show_state()
         self._back_to_entry()
         single: tuple[Key, ...] = getattr(state.task, "keys", ())
         if len(single) == 1:
@@ -598,10 +606,9 @@ class BenchPage(PlainWidget):
         painter.fillRect(self.rect(), look.colour(Colour.PAPER))
         wide, thin = round(look.line(LineWidth.WIDE)), round(look.line(LineWidth.NARROW))
         painter.fillRect(QRect(0, band.top(), self.width(), wide), look.colour(Colour.INK2))
-        for place in self._places.dividers:
-            painter.fillRect(
-                QRect(place, band.top(), max(thin, 1), band.height()), look.colour(Colour.HAIR)
-            )
+        for edge in self._places.dividers if self.band.isHidden() else ():
+            line = QRect(edge.left(), edge.top() + wide, max(thin, 1), edge.height() - wide)
+            painter.fillRect(line, look.colour(Colour.HAIR))
         painter.end()
 
 

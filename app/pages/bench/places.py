@@ -53,6 +53,8 @@ class Wanted:
         Whether the entry also takes the dial's place.
     question_height : float
         Height of what stands beside the ladder, 0 for nothing [px].
+    key_height : float
+        Height of the key that takes a form, 0 for none [px].
     keypad : bool
         Whether the keypad is shown.
     planes_opened, dial_opened : bool
@@ -65,6 +67,7 @@ class Wanted:
     ranges_height: float = 0.0
     wide_entry: bool = False
     question_height: float = 0.0
+    key_height: float = 0.0
     keypad: bool = False
     planes_opened: bool = False
     dial_opened: bool = False
@@ -169,13 +172,13 @@ class Places:
     ----------
     layout : AlongLayout
         The rows of the drawing along the rotor.
-    along, ranges, entry, dial, verdict, beside, keypad, badge, title, keys, folded : QRect
-        Each area on the page; `beside` lies right of the ladder, `folded` holds the keys that open
-        what large type has folded.
+    along, ranges, entry, dial, verdict, beside, take, keypad, badge, title, keys, folded : QRect
+        Each area on the page; `beside` lies right of the ladder, `take` below the verdict, and
+        `folded` holds the keys that open what large type has folded.
     band : QRect
         The whole middle.
-    dividers : tuple of int
-        Where upright lines part the columns of the middle [px].
+    dividers : tuple of QRect
+        The columns' edges: upright lines without width.
     has_planes, has_dial, folds_planes, folds_dial : bool
         What is shown, and what only opens by key.
     """
@@ -188,12 +191,13 @@ class Places:
     dial: QRect
     verdict: QRect
     beside: QRect
+    take: QRect
     keypad: QRect
     badge: QRect
     title: QRect
     keys: QRect
     folded: QRect
-    dividers: tuple[int, ...]
+    dividers: tuple[QRect, ...]
     has_planes: bool
     has_dial: bool
     folds_planes: bool
@@ -231,7 +235,8 @@ def places_of(frame: Frame, wanted: Wanted) -> Places:
     top = layout.height + wanted.ranges_height
     split = frame.across(768, 1160)
     columns = _columns(frame, wanted, dial=dial)
-    lower = foot_top - (wanted.question_height + 12 if wanted.question_height else 0)
+    below = max(wanted.question_height, wanted.key_height)
+    lower = foot_top - (below + 12 if below else 0)
     first, second = columns.dividers[0], columns.dividers[-1]
     empty = QRect()
     return Places(
@@ -247,12 +252,20 @@ def places_of(frame: Frame, wanted: Wanted) -> Places:
         beside=frame.rect(first + 16, lower + 4, frame.width - margin, foot_top - 8)
         if wanted.question_height
         else empty,
+        take=frame.rect(second + 16, lower + 4, frame.width - margin, foot_top - 8)
+        if wanted.key_height
+        else empty,
         keypad=frame.rect(first + 1, top + 1, frame.width, lower) if wanted.keypad else empty,
         badge=_badge(frame, layout, margin),
         title=frame.rect(0, foot_top, split, frame.height),
         keys=frame.rect(split, foot_top, frame.width, frame.height),
-        folded=frame.rect(margin, 68, margin + 116 * max(frame.text_scale * 0.8, 1), 164),
-        dividers=tuple(round(place * frame.growth) for place in columns.dividers),
+        folded=frame.rect(
+            frame.width - margin - layout.gutter_right + 8, 8, frame.width - margin, 104
+        ),
+        dividers=tuple(
+            frame.rect(edge, top, edge, foot_top if wanted.wide_entry or edge == first else lower)
+            for edge in columns.dividers
+        ),
         has_planes=planes,
         has_dial=dial,
         folds_planes=folds_planes and middle_row,
@@ -299,7 +312,7 @@ def _layout(frame: Frame, *, planes: bool, changes: bool, room: float) -> AlongL
     changes_height = circle + between(27, 31) * scale if changes else between(4, 6)
     gaps = (between(3, 4), between(2, 6) if planes else 0.0, between(5, 8))
     top = 4.0 if far else between(6, 8)
-    bottom = between(2, 0)
+    bottom = frame.medium.space
     height = top + rotor_height + names_height + planes_height + changes_height
     height += sum(gaps) + bottom
     if planes and changes:

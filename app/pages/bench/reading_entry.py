@@ -26,6 +26,7 @@ _PROMPT = (100.0, 116.0)
 _CELL = (130.0, 160.0)
 _LADDER = 99.0
 _GREATEST_GROWTH = 1.3
+_MOST_OF_LADDER = 0.34
 
 _Told = TypeVar("_Told")
 
@@ -128,9 +129,9 @@ class ReadingEntry(PlainWidget):
         prompt = self._look.between(narrow=_PROMPT[0], wide=_PROMPT[1])
         cell = self._look.between(narrow=_CELL[0], wide=_CELL[1])
         ladder = max(self.ladder.sizeHint().height(), _LADDER)
-        asked = prompt + cell + ladder
-        growth = min((self.height() - 6.0) / asked, _GREATEST_GROWTH)
-        widths = [round(share * growth) for share in (prompt, cell, ladder)]
+        ladder = min(ladder, self.height() * _MOST_OF_LADDER)
+        growth = min((self.height() - ladder - 8.0) / (prompt + cell), _GREATEST_GROWTH)
+        widths = [round(share) for share in (prompt * growth, cell * growth, ladder)]
         top = 2
         self.prompt.setGeometry(QRect(0, top, self.width(), widths[0]))
         top += widths[0]

@@ -10,6 +10,7 @@ from app.frame.key import Key
 from app.frame.lettering import draw_at
 from app.frame.look import Look
 from app.frame.plain import PlainWidget, draw_focus, flat_painter
+from app.pages.bench.scroll_bars import flatten_scroll_bars
 from reports.palette import Colour
 from reports.sheet.medium import Size
 from reports.typeface import Weight
@@ -86,6 +87,7 @@ class ReasonsPanel(PlainWidget):
         palette.setColor(QPalette.ColorRole.Highlight, self._look.colour(Colour.ACCENT))
         palette.setColor(QPalette.ColorRole.HighlightedText, self._look.colour(Colour.PAPER))
         self._text.setPalette(palette)
+        flatten_scroll_bars(self._text, self._look)
         self._lay_out()
 
     def resizeEvent(self, event: QResizeEvent) -> None:

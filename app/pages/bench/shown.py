@@ -103,13 +103,13 @@ def question_of(task: ReadingTask) -> Question | None:
     )
 
 
-def shown_verdict(verdict: BenchVerdict) -> ShownVerdict:
-    """Give the verdict as it stands beside the entry."""
+def shown_verdict(verdict: BenchVerdict, *, short: bool = False) -> ShownVerdict:
+    """Give the verdict as it stands beside the entry; short, it keeps its first sentence alone."""
     facts = (*(f"{name}: {value}" for name, value in verdict.facts), verdict.so_far)
     return ShownVerdict(
         kind=verdict_kind(verdict.verdict),
         phrase=verdict.phrase,
-        sentences=verdict.sentences,
+        sentences=verdict.sentences[:1] if short else verdict.sentences,
         facts=tuple(fact for fact in facts if fact),
     )
 

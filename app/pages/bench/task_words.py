@@ -20,7 +20,7 @@ __all__ = ["TaskWords"]
 _TOP = 10.0
 _BETWEEN = 0.32
 _HEADING_STEP = 1.12
-_SMALLEST = 0.6
+_SMALLEST = 0.42
 
 
 @dataclass(frozen=True, slots=True)

@@ -100,7 +100,9 @@ def partly_read(live=None):
 
 
 def signed(text):
-    return text.replace("-", "−")
+    """A reading as a whole number of the indicator's last digit, with its sign."""
+    figure = round(float(text) / 0.0001)
+    return f"{figure:+d}".replace("-", "−") if figure else "0"
 
 
 def upper_half(live=None, *, number=1, whole=False):
@@ -165,7 +167,7 @@ def reading_task(live=None, **more):
         unit="in",
         other_unit="µm",
         rungs=tuple(rungs),
-        caption="readings in inches, indicator DI-07, + towards the indicator",
+        caption="readings in 0.0001 in, indicator DI-07, + towards the indicator",
         dial=dial(live),
     )
     return replace(task, **more)
@@ -249,7 +251,7 @@ def runout(live=None, verdict=LOOK, **more):
 def questioned():
     task = reading_task()
     rungs = list(task.rungs)
-    rungs[4] = replace(rungs[4], value="0.0076", questioned=True)
+    rungs[4] = replace(rungs[4], value="+76", questioned=True)
     question = QuestionShown("25.4 times its neighbours: 0.0003 in?", "0.0003")
     return runout(rungs=tuple(rungs), question=question)
 
@@ -257,7 +259,7 @@ def questioned():
 def correcting():
     task = reading_task()
     rungs = [replace(one, active=False) for one in task.rungs]
-    rungs[3] = replace(rungs[3], active=True, struck=("0.0050",))
+    rungs[3] = replace(rungs[3], active=True, struck=("+50",))
     return runout(
         mark="135°",
         rungs=tuple(rungs),
@@ -269,10 +271,10 @@ def correcting():
 
 def closing():
     task = reading_task()
-    rungs = [replace(one, active=False, value=one.value or "0.0002") for one in task.rungs]
+    rungs = [replace(one, active=False, value=one.value or "+2") for one in task.rungs]
     rungs[-1] = replace(rungs[-1], active=True, value="")
     return runout(
-        mark="0° again",
+        mark="0°",
         rungs=tuple(rungs),
         is_closing=True,
         lines=("the first mark again, to close the circle",),
@@ -327,7 +329,7 @@ def sizes():
 
 def fit():
     item = attempt().items[0]
-    findings = {one.subject.land: one for one in attempt().of("interference-in-limits")}
+    findings = {one.subject.land: one for one in attempt().of("interference-within")}
     rows = [(f"land {one.land.key}", one, findings.get(one.land.key)) for one in item.fits]
     task = KeyTask(
         "Is this fit as planned?",
@@ -345,7 +347,7 @@ def fit():
     verdict = BenchVerdict(
         Verdict.WITHIN,
         "Within limits",
-        ("Both lands lie between 0.0056 and 0.0072 in.",),
+        ("Interference 0.0070 to 0.0073 in, allowed 0.0060 to 0.0090 in.",),
         reasons=LOOK.reasons,
     )
     return other_stage(Stage.FIT, task, verdict, words="Decide about the fit.")

@@ -7,6 +7,7 @@ from PySide6.QtWidgets import QApplication, QVBoxLayout, QWidget
 from app.frame.desks import DesksLine
 from app.frame.look import Look
 from app.pages.bench.page import BenchPage
+from app.style.theme import qt_palette
 from reports.palette import CONTRAST, DARK, LIGHT
 from tests.app.pages.bench_scenes import SCENES
 from tests.app.pages.fake_bench import FakeBench
@@ -18,6 +19,7 @@ SIZES = {"1280": (1280, 800), "1920": (1920, 1080)}
 
 def in_a_window(qtbot, scene, size, look, *, prepare=None):
     window = QWidget()
+    window.setPalette(qt_palette(palette=look.palette))
     qtbot.addWidget(window)
     column = QVBoxLayout(window)
     column.setContentsMargins(0, 0, 0, 0)
