@@ -20,7 +20,7 @@ from app.presenters.writing import Writer
 from app.settings import Settings, shop_folder
 from app.style.theme import apply_theme
 from app.style.tokens import load_fonts
-from app.window import BENCH, Window
+from app.window import BENCH, Bench, Window
 from models.acts import Acts
 from models.record.errors import (
     DiskFaultError,
@@ -70,8 +70,19 @@ class Opened:
         window.add_desk("Inspection", InspectionPage(inspection, look=look))
         window.add_desk("Witness", StoryPage(StoryPresenter(self.shop), look=look))
 
-    def _make_bench(self, job: str, person: str, look: Look, parent: QWidget) -> QWidget:
-        return make_bench(self._acts, self.writer, job, person, look, parent)
+    def _make_bench(self, job: str, person: str, look: Look, parent: QWidget) -> Bench:
+        from app.pages.bench.page import BenchPage
+        from app.presenters.bench.bench import BenchPresenter
+
+        presenter = BenchPresenter(self._acts, self.writer, job, person)
+        page = BenchPage(presenter, look, parent=parent)
+        presenter.setParent(page)
+        page.foot.pressed.connect(self._leave)
+        return Bench(page=page, person=person, sign_in=presenter.sign_in, reload=presenter.reload)
+
+    def _leave(self, key: str) -> None:
+        if key == "leave":
+            self.window.leave_bench()
 
     def show(self, *, sign_in: str | None, job: str | None) -> None:
         """Show the window, with who was signed in and what lay on the desks last.
@@ -91,39 +102,6 @@ class Opened:
         self.background.close()
         self.writer.close()
         self._store.close()
-
-
-def make_bench(
-    acts: Acts, writer: Writer, job: str, person: str, look: Look, parent: QWidget
-) -> QWidget:
-    """Make the bench for a job and a person.
-
-    Parameters
-    ----------
-    acts : Acts
-        The door to the record.
-    writer : Writer
-        The thread that writes.
-    job, person : str
-        Number of the job and key of who is signed in.
-    look : Look
-        The window's look.
-    parent : QWidget
-        The window.
-
-    Returns
-    -------
-    QWidget
-        The bench, or a sentence where there is nothing to do at it.
-    """
-    from app.pages.plain_desk import PlainDesk
-
-    if not job:
-        return PlainDesk("Choose a job first, at the Jobs desk.", look=look, parent=parent)
-    if not person:
-        words = "Say who is at the window first: press the words at the upper right."
-        return PlainDesk(words, look=look, parent=parent)
-    return PlainDesk(f"The bench for job {job} is not here yet.", look=look, parent=parent)
 
 
 def run(folder: Path, *, sign_in: str | None, job: str | None) -> int:

@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 from collections.abc import Callable
+from dataclasses import dataclass
 from functools import partial
 
 from PySide6.QtCore import Qt
@@ -14,18 +15,45 @@ from app.frame.look import Look
 from app.frame.messages import Message, MessageStrip
 from app.pages.desk import DeskPage
 from app.pages.people import PeopleDialog
+from app.pages.plain_desk import PlainDesk
 from app.presenters.shop import Said, ShopPresenter
 from app.presenters.wording import person_words
 from app.settings import Settings
 from app.style.theme import TEXT_SCALES, Appearance, apply_theme, palette_for
 from models.job import Person
 
-__all__ = ["BENCH", "MakeBench", "Window"]
+__all__ = ["BENCH", "Bench", "MakeBench", "Window"]
 
 BENCH = "Bench"
-"""The desk that is made anew for every job and person."""
+"""The desk that is made for every job anew, once somebody opens it there."""
 
-MakeBench = Callable[[str, str, Look, QWidget], QWidget]
+
+@dataclass(kw_only=True)
+class Bench:
+    """The bench of one job, as the window needs it.
+
+    Attributes
+    ----------
+    page : QWidget
+        What is shown.
+    person : str
+        Key of who acts at it.
+    sign_in : callable
+        Lets another person act at it; nothing typed is lost.
+    reload : callable
+        Reads the job again, once something was recorded at another desk.
+    desk_acts : int
+        How many acts the other desks had recorded when it was read [-].
+    """
+
+    page: QWidget
+    person: str
+    sign_in: Callable[[str], None]
+    reload: Callable[[], None]
+    desk_acts: int = 0
+
+
+MakeBench = Callable[[str, str, Look, QWidget], Bench]
 """Makes the bench for a job and a person, with a look, inside a parent."""
 
 _LEAST_SIZE = (1280, 800)
@@ -49,8 +77,10 @@ class Window(QWidget):
         self._make_bench = make_bench
         self._ask = ask_person or self.ask_person
         self._far = False
-        self._bench: QWidget | None = None
-        self._bench_for = ("", "")
+        # A bench is kept while the window stands: what was typed at it is found again.
+        self._benches: dict[str, Bench] = {}
+        self._trouble: Exception | None = None
+        self._last_in: dict[QWidget, QWidget] = {}
         self._pages: dict[str, QWidget] = {}
         self._look = self._wanted_look()
         self.setWindowTitle("Third Journal")
@@ -70,6 +100,7 @@ class Window(QWidget):
         shop.writer.written.connect(self._trouble_is_over)
         shop.person_changed.connect(self._person_changed)
         shop.job_changed.connect(self._job_changed)
+        shop.shelf_changed.connect(self._shelf_changed)
 
     # -- desks
 
@@ -84,7 +115,8 @@ class Window(QWidget):
             The desk.
         """
         if page is None:
-            page = QWidget(self)
+            self._closed_bench = PlainDesk("", look=self._look, parent=self)
+            page = self._closed_bench
         self._pages[name] = page
         self._stack.addWidget(page)
 
@@ -102,7 +134,7 @@ class Window(QWidget):
             self.restoreGeometry(self._settings.geometry)
         first = next(iter(self._pages))
         kept = self._settings.of_shop("desk", first)
-        self.show_desk(kept if kept in self._pages and self._shop.job_number else first)
+        self.show_desk(kept if kept in self._pages else first)
         self.show()
 
     @property
@@ -145,23 +177,51 @@ class Window(QWidget):
             if isinstance(page, DeskPage):
                 page.refresh()
             page.setFocus()
+        self._show_trouble()
         self._settings.keep_for_shop("desk", name)
 
     def _show_bench(self) -> None:
-        wanted = (self._shop.job_number, self._shop.person_key)
-        if self._bench is None or wanted != self._bench_for:
-            self._drop_bench()
-            self._bench = self._make_bench(*wanted, self._look, self)
-            self._bench_for = wanted
-            self._stack.addWidget(self._bench)
-        self._stack.setCurrentWidget(self._bench)
-        self._bench.setFocus()
+        words = self._why_closed()
+        if words:
+            self._closed_bench.words.say(words)
+            self._stack.setCurrentWidget(self._closed_bench)
+            return
+        job, person = self._shop.job_number, self._shop.person_key
+        bench = self._benches.get(job)
+        if bench is None:
+            bench = self._make_bench(job, person, self._look, self)
+            bench.desk_acts = self._shop.desk_acts
+            self._benches[job] = bench
+            self._stack.addWidget(bench.page)
+        if bench.person != person:
+            bench.person = person
+            bench.sign_in(person)
+        if bench.desk_acts != self._shop.desk_acts:
+            bench.desk_acts = self._shop.desk_acts
+            bench.reload()
+        self._stack.setCurrentWidget(bench.page)
 
-    def _drop_bench(self) -> None:
-        if self._bench is not None:
-            self._stack.removeWidget(self._bench)
-            self._bench.deleteLater()
-            self._bench = None
+    def _why_closed(self) -> str:
+        """Say why nobody can work at the bench now; nothing where somebody can."""
+        shop = self._shop
+        if not shop.is_read:
+            return "working: reading the shelf"
+        if not shop.job_number:
+            return "Choose a job first, at the Jobs desk."
+        if shop.job is None:
+            return f"working: job {shop.job_number} is being read"
+        if shop.person is None:
+            return "Say who is at the window first: press the words at the upper right."
+        return ""
+
+    def leave_bench(self) -> None:
+        """Sign out: the desk is locked, the record is not."""
+        self._shop.sign_in("")
+        self.show_desk(next(iter(self._pages)))
+
+    def _shelf_changed(self) -> None:
+        if self.present_desk == BENCH and self._stack.currentWidget() is self._closed_bench:
+            self._show_bench()
 
     def _job_changed(self) -> None:
         rotor = self._shop.job.plan.rotor.serial if self._shop.job is not None else ""
@@ -230,21 +290,32 @@ class Window(QWidget):
         self._strip.set_message(shown)
 
     def _say_trouble(self, error: Exception) -> None:
-        self._strip.set_message(
-            Message(
-                what=str(error),
-                way_out="What waits to be written is kept here.",
-                key="Try again",
+        self._trouble = error
+        self._show_trouble()
+
+    def _show_trouble(self) -> None:
+        """Say what keeps the record from being written; the bench says it in its own place."""
+        at_bench = self.present_desk == BENCH and not self._why_closed()
+        said = self._strip.message is not None and self._strip.message.trouble
+        if self._trouble is not None and not at_bench:
+            self._strip.set_message(
+                Message(
+                    what=str(self._trouble),
+                    way_out="What waits to be written is kept here.",
+                    key="Try again",
+                )
             )
-        )
+        elif said:
+            self._strip.set_message(None)
 
     def _way_out(self) -> None:
-        self._strip.set_message(None)
+        self._trouble = None
+        self._show_trouble()
         self._shop.writer.try_again()
 
     def _trouble_is_over(self) -> None:
-        if self._strip.message is not None and self._strip.message.trouble:
-            self._strip.set_message(None)
+        self._trouble = None
+        self._show_trouble()
 
     # -- look
 
@@ -267,7 +338,8 @@ class Window(QWidget):
                 appearance=self._settings.appearance,
                 text_scale=self._settings.text_scale,
             )
-        for part in (self._line, self._strip, *self._pages.values(), self._bench):
+        benches = [bench.page for bench in self._benches.values()]
+        for part in (self._line, self._strip, *self._pages.values(), *benches):
             set_look = getattr(part, "set_look", None)
             if set_look is not None:
                 set_look(self._look)
@@ -324,17 +396,23 @@ class Window(QWidget):
         areas = [part for part in (self._stack.currentWidget(), self._line, self._strip) if part]
         areas = [part for part in areas if part.isVisible()]
         here: QWidget | None = self.focusWidget()
-        inside = [
-            place
-            for place, part in enumerate(areas)
-            if here is not None and part.isAncestorOf(here)
-        ]
+        inside = -1
+        for place, part in enumerate(areas):
+            if here is not None and part.isAncestorOf(here):
+                inside = place
+                self._last_in[part] = here
         for step in range(1, len(areas) + 1):
-            area = areas[((inside[0] if inside else -1) + step) % len(areas)]
-            target = _first_control(area)
+            target = self._entrance(areas[(inside + step) % len(areas)])
             if target is not None:
                 target.setFocus(Qt.FocusReason.ShortcutFocusReason)
                 return
+
+    def _entrance(self, area: QWidget) -> QWidget | None:
+        """Find where the keyboard goes in an area: where it was last, or its first control."""
+        last = self._last_in.get(area)
+        if last is not None and last.isVisible() and last.isEnabled():
+            return last
+        return _first_control(area)
 
     # -- the window itself
 

@@ -91,6 +91,7 @@ class InspectionPage(DeskPage):
         self._stack.addWidget(self._make_whole())
         presenter.changed.connect(self.refresh)
         presenter.recorded.connect(self._say_recorded)
+        self.setFocusProxy(self.leaves)
         self.refresh()
 
     def _make_empty(self) -> QWidget:

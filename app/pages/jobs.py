@@ -59,6 +59,7 @@ class JobsPage(DeskPage):
         presenter.file_read.connect(self._take)
         presenter.opened.connect(lambda _number: self._close_question())
         self._close_question()
+        self.setFocusProxy(self.shelf)
         self.refresh()
 
     def _make_head(self) -> QWidget:

@@ -8,6 +8,7 @@ from PySide6.QtWidgets import QHBoxLayout, QStackedWidget, QVBoxLayout, QWidget
 from app.frame.key import Key
 from app.frame.look import Look
 from app.pages.desk import Rule, desk_key
+from app.pages.table import DeskTable
 
 __all__ = ["Leaves"]
 
@@ -65,7 +66,10 @@ class Leaves(QWidget):
         """
         for word, key in self._keys.items():
             key.setChecked(word == name)
-        self._stack.setCurrentWidget(self._leaves[name])
+        leaf = self._leaves[name]
+        self._stack.setCurrentWidget(leaf)
+        tables = [leaf] if isinstance(leaf, DeskTable) else leaf.findChildren(DeskTable)
+        self.setFocusProxy(tables[0] if tables else self._keys[name])
         self.turned.emit(name)
 
     @property

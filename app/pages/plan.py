@@ -66,6 +66,7 @@ class PlanPage(DeskPage):
         self._stack.addWidget(self._make_empty())
         self._stack.addWidget(self._make_plan())
         presenter.changed.connect(self.refresh)
+        self.setFocusProxy(self.leaves)
         self.refresh()
 
     def _make_empty(self) -> QWidget:

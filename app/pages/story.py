@@ -57,6 +57,7 @@ class StoryPage(DeskPage):
         self._stack.addWidget(empty)
         self._stack.addWidget(self._make_story())
         presenter.changed.connect(self.refresh)
+        self.setFocusProxy(self.chapters)
         self.refresh()
 
     def _make_story(self) -> QWidget:

@@ -56,6 +56,7 @@ class ShopPresenter(QObject):
         self._number = ""
         self._person = ""
         self._stale = False
+        self._desk_acts = 0
         writer.written.connect(self._mark_stale)
 
     # -- the shelf
@@ -203,6 +204,11 @@ class ShopPresenter(QObject):
 
     # -- acts
 
+    @property
+    def desk_acts(self) -> int:
+        """How many acts have been recorded away from the bench in this window [-]."""
+        return self._desk_acts
+
     def record(self, entry: AnyEntry, *, done: Callable[[Recorded], None]) -> None:
         """Record an entry of the job on the desks; what is not allowed is said in its own words.
 
@@ -216,6 +222,7 @@ class ShopPresenter(QObject):
         number = self._number
 
         def written(recorded: Any) -> None:  # noqa: ANN401  (the Writer hands back anything)
+            self._desk_acts += 1
             done(recorded)
             self.refresh()
 

@@ -2,8 +2,10 @@ import pytest
 from PySide6.QtCore import Qt
 from PySide6.QtWidgets import QAbstractButton
 
+from app.pages.bench.page import BenchPage
 from app.settings import Settings
 from app.style.theme import Appearance
+from models.job import Note, Place
 from models.record.errors import DiskFullError
 from reports.palette import DARK
 from tests.app.open_shop import COMPRESSOR
@@ -161,3 +163,120 @@ def test_settings_that_cannot_be_read_count_as_none(tmp_path):
     assert settings.appearance is Appearance.LIGHT
     assert settings.text_scale == 1.0
     assert settings.geometry is None
+
+
+def stage(opened):
+    """Give what stands below the line of desks."""
+    return opened.window._stack.currentWidget()
+
+
+def test_the_bench_of_the_job_opens_for_whoever_is_signed_in(shop_folder, open_window):
+    opened = open_window(shop_folder, sign_in="AT", job=COMPRESSOR)
+    opened.window.show_desk("Bench")
+    opened.settle()
+
+    assert isinstance(stage(opened), BenchPage)
+    assert stage(opened)._presenter.view.job.number == COMPRESSOR
+
+
+def test_the_bench_stays_closed_until_somebody_is_signed_in(shop_folder, open_window):
+    opened = open_window(shop_folder, job=COMPRESSOR)
+    opened.window.show_desk("Bench")
+    assert stage(opened).words.text().startswith("Say who is at the window first")
+
+    opened.shop.sign_in("AT")
+    opened.settle()
+    assert isinstance(stage(opened), BenchPage)
+
+
+def test_the_bench_stays_closed_until_a_job_is_chosen(shop_folder, open_window):
+    opened = open_window(shop_folder)
+    opened.window.show_desk("Bench")
+
+    assert stage(opened).words.text() == "Choose a job first, at the Jobs desk."
+
+
+def test_a_bench_that_was_open_last_opens_again_once_its_job_is_read(shop_folder, open_window):
+    first = open_window(shop_folder, sign_in="AT", job=COMPRESSOR)
+    first.window.show_desk("Bench")
+    first.settle()
+    first.window.close()
+    second = open_window(shop_folder, settle=False)
+    assert stage(second).words.text() == "working: reading the shelf"
+
+    second.settle()
+    assert second.window.present_desk == "Bench"
+    assert isinstance(stage(second), BenchPage)
+
+
+def test_leaving_the_bench_signs_out_and_goes_to_the_shelf(shop_folder, open_window):
+    opened = open_window(shop_folder, sign_in="AT", job=COMPRESSOR)
+    opened.window.show_desk("Bench")
+    opened.settle()
+    stage(opened).foot.pressed.emit("leave")
+
+    assert opened.window.present_desk == "Jobs"
+    assert opened.shop.person is None
+
+
+def test_another_person_takes_the_same_bench_over(shop_folder, open_window):
+    opened = open_window(shop_folder, sign_in="AT", job=COMPRESSOR)
+    opened.window.show_desk("Bench")
+    opened.settle()
+    before = stage(opened)
+    opened.shop.sign_in("CV")
+
+    assert stage(opened) is before
+    assert before._presenter._person == "CV"
+
+
+def test_trouble_is_said_once_by_the_bench_or_by_the_strip(
+    shop_folder, open_window, qtbot, tmp_path
+):
+    opened = open_window(shop_folder, sign_in="AT", job=COMPRESSOR)
+    opened.window.show_desk("Bench")
+    opened.settle()
+    healed = []
+
+    def act():
+        if not healed:
+            raise DiskFullError(tmp_path / "shop.thirdjournal")
+
+    opened.writer.write(act, done=lambda _: None, refused=pytest.fail)
+    qtbot.waitUntil(lambda: opened.writer.is_halted)
+    assert opened.window.message is None
+    assert stage(opened).message.message is not None
+
+    opened.window.show_desk("Jobs")
+    assert opened.window.message.what.startswith("The disk that holds")
+
+    healed.append(True)
+    qtbot.mouseClick(key_named(opened.window._strip, "Try again"), Qt.MouseButton.LeftButton)
+    qtbot.waitUntil(lambda: opened.writer.is_idle)
+    assert opened.window.message is None
+
+
+def test_what_an_inspector_records_is_read_by_the_bench_before_it_goes_on(
+    shop_folder, open_window, qtbot
+):
+    opened = open_window(shop_folder, sign_in="AT", job=COMPRESSOR)
+    opened.window.show_desk("Bench")
+    opened.settle()
+    presenter = stage(opened)._presenter
+    before = presenter.view.job.head.sequence
+    opened.window.show_desk("Inspection")
+    note = Note(
+        id="seen-1",
+        place=Place(kind="bare shaft"),
+        by="BQ",
+        done_at=opened.shop.acts.now(),
+        entered_at=opened.shop.acts.now(),
+        plan="B",
+        words="Looked at the shaft.",
+    )
+    opened.shop.record(note, done=lambda _: None)
+    opened.settle()
+    opened.window.show_desk("Bench")
+    opened.settle()
+
+    assert presenter.view.job.head.sequence == before + 1
