@@ -139,6 +139,21 @@ class FormEntry(PlainWidget):
         empty = [line for line in lines if not line.text()]
         return next(iter(focused + empty + lines), None)
 
+    def asked_height(self, width: int) -> int:
+        """Give the height in which every field is seen at once.
+
+        Parameters
+        ----------
+        width : int
+            The room there is [px].
+
+        Returns
+        -------
+        int
+            Words and rows [px].
+        """
+        return self.words.heightForWidth(width) + self.form.sizeHint().height() + 8
+
     def resizeEvent(self, event: QResizeEvent) -> None:
         """Put words and form below each other."""
         super().resizeEvent(event)

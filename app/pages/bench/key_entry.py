@@ -221,6 +221,27 @@ class KeyEntry(PlainWidget):
         self._drop = None
         self._end_countdown()
 
+    def asked_height(self, width: int) -> int:
+        """Give the height in which words, clock and keys are seen at their full size.
+
+        Parameters
+        ----------
+        width : int
+            The room there is [px].
+
+        Returns
+        -------
+        int
+            Words, clock and keys [px].
+        """
+        words = self.words.heightForWidth(width)
+        if self.countdown is not None:
+            return words + self.countdown.sizeHint().height()
+        return words + (self._key_height() + 16 if self.keys.keys else 0)
+
+    def _key_height(self) -> int:
+        return round(self._look.between(narrow=80.0, wide=96.0))
+
     def resizeEvent(self, event: QResizeEvent) -> None:
         """Put words, clock and keys in their places."""
         super().resizeEvent(event)
@@ -232,7 +253,7 @@ class KeyEntry(PlainWidget):
 
     def _lay_out(self) -> None:
         width, height = self.width(), self.height()
-        key = round(self._look.between(narrow=80.0, wide=96.0))
+        key = self._key_height()
         bottom = height - 8 - (key if self.keys.keys else 0)
         door = 0 if self.door.isHidden() else round(width * _DOOR_SHARE)
         self.door.setGeometry(QRect(0, bottom, door, key))

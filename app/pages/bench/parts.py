@@ -169,11 +169,16 @@ class BenchParts(PlainWidget):
             ranges_height=0.0 if ranges is None else ranges_height(ranges, self._frame),
             wide_entry=not isinstance(task, ReadingTask),
             question_height=self.beside.wanted_height(self.width() * 0.46) / self._frame.growth,
+            entry_height=self._entry_of(task).asked_height(self._usual_width())
+            / self._frame.growth,
             key_height=self._frame.between(64, 80) if isinstance(task, FormTask) else 0.0,
             keypad=self._figures.keypad_wanted and isinstance(task, TAKES_FIGURES),
             planes_opened=self._opened["planes"],
             dial_opened=self._opened["dial"],
         )
+
+    def _usual_width(self) -> int:
+        return round(self._frame.across(924, 1380) * self._frame.growth)
 
     def _arrange(self) -> None:
         wanted = self._what_is_wanted()

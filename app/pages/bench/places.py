@@ -53,6 +53,8 @@ class Wanted:
         Whether the entry also takes the dial's place.
     question_height : float
         Height of what stands beside the ladder, 0 for nothing [px].
+    entry_height : float
+        Height below which the entry would have to squeeze or scroll, 0 where it fits itself [px].
     key_height : float
         Height of the key that takes a form, 0 for none [px].
     keypad : bool
@@ -67,6 +69,7 @@ class Wanted:
     ranges_height: float = 0.0
     wide_entry: bool = False
     question_height: float = 0.0
+    entry_height: float = 0.0
     key_height: float = 0.0
     keypad: bool = False
     planes_opened: bool = False
@@ -232,6 +235,9 @@ def places_of(frame: Frame, wanted: Wanted) -> Places:
     margin, foot = frame.between(24, 32), frame.between(80, 96)
     foot_top = frame.height - foot
     layout = _layout(frame, planes=planes, changes=changes, room=foot_top)
+    if layout.height + wanted.ranges_height + wanted.entry_height > foot_top:
+        planes = changes = False
+        layout = _layout(frame, planes=planes, changes=changes, room=foot_top)
     top = layout.height + wanted.ranges_height
     split = frame.across(768, 1160)
     columns = _columns(frame, wanted, dial=dial)

@@ -116,6 +116,10 @@ class ReadingEntry(PlainWidget):
         if self._shown is not None and self.cell.state in (CellState.TROUBLE, CellState.WRITING):
             self.cell.ask(asked_of(self._shown))
 
+    def asked_height(self, width: int) -> int:
+        """Ask for nothing: mark, cell and ladder fit themselves to whatever room there is."""
+        return 0
+
     def resizeEvent(self, event: QResizeEvent) -> None:
         """Share the height between mark, cell and ladder."""
         super().resizeEvent(event)

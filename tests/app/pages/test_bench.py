@@ -611,3 +611,14 @@ def test_a_key_typed_is_shown_within_a_frame(bench):
 
     # Median of a few, since the machine is shared: 60 frames a second leave 16 ms.
     assert sorted(times)[len(times) // 2] < 0.016
+
+
+def test_a_long_form_takes_the_room_of_planes_and_changes_and_a_short_one_leaves_it(bench):
+    state = scenes.heat()
+    above = scenes.upper_half(whole=True)
+    page = bench(replace(state, **above))
+    assert page.drawing.sheet().height < 200
+    short = replace(state.task, fields=state.task.fields[:1], cautions=())
+    page.fake.show(replace(state, task=short, **above))
+
+    assert page.drawing.sheet().height > 300
