@@ -10,7 +10,13 @@ from PySide6.QtWidgets import QApplication, QWidget
 
 from app.frame.look import Look
 from app.last_resort import LastResort, show_dialog
+from app.pages.bench.page import BenchPage
+from app.pages.inspection import InspectionPage
+from app.pages.jobs import JobsPage
+from app.pages.plan import PlanPage
+from app.pages.story import StoryPage
 from app.presenters.background import Background
+from app.presenters.bench.bench import BenchPresenter
 from app.presenters.inspection import InspectionPresenter
 from app.presenters.jobs import JobsPresenter
 from app.presenters.plan import PlanPresenter
@@ -51,11 +57,6 @@ class Opened:
         self._add_desks()
 
     def _add_desks(self) -> None:
-        from app.pages.inspection import InspectionPage
-        from app.pages.jobs import JobsPage
-        from app.pages.plan import PlanPage
-        from app.pages.story import StoryPage
-
         window, look = self.window, Look()
         self.jobs = JobsPresenter(self.shop)
         self.jobs.set_filter(self.settings.of_shop("filter", ""))
@@ -71,9 +72,6 @@ class Opened:
         window.add_desk("Witness", StoryPage(StoryPresenter(self.shop), look=look))
 
     def _make_bench(self, job: str, person: str, look: Look, parent: QWidget) -> Bench:
-        from app.pages.bench.page import BenchPage
-        from app.presenters.bench.bench import BenchPresenter
-
         presenter = BenchPresenter(self._acts, self.writer, job, person)
         page = BenchPage(presenter, look, parent=parent)
         presenter.setParent(page)

@@ -80,6 +80,8 @@ class Window(QWidget):
         # A bench is kept while the window stands: what was typed at it is found again.
         self._benches: dict[str, Bench] = {}
         self._trouble: Exception | None = None
+        self._closing = False
+        self._close_anyway = False
         self._last_in: dict[QWidget, QWidget] = {}
         self._pages: dict[str, QWidget] = {}
         self._look = self._wanted_look()
@@ -98,6 +100,7 @@ class Window(QWidget):
         shop.background.working.connect(self._say_working)
         shop.writer.failed.connect(self._say_trouble)
         shop.writer.written.connect(self._trouble_is_over)
+        shop.writer.idle.connect(self._written_out)
         shop.person_changed.connect(self._person_changed)
         shop.job_changed.connect(self._job_changed)
         shop.shelf_changed.connect(self._shelf_changed)
@@ -310,6 +313,7 @@ class Window(QWidget):
 
     def _way_out(self) -> None:
         self._trouble = None
+        self._close_anyway = False
         self._show_trouble()
         self._shop.writer.try_again()
 
@@ -424,9 +428,28 @@ class Window(QWidget):
 
     def closeEvent(self, event: QCloseEvent) -> None:
         """Keep how the window stood; what waits to be written is written first."""
+        writer = self._shop.writer
+        if not writer.is_idle and not self._close_anyway:
+            event.ignore()
+            self._closing = True
+            if writer.is_halted:
+                self._close_anyway = True
+                self._strip.set_message(
+                    Message(
+                        what="Something is not on the disk yet.",
+                        way_out="Try again; or close once more, and it is lost.",
+                        key="Try again",
+                    )
+                )
+            return
         self._settings.keep_geometry(self.saveGeometry())
         self._settings.write()
         super().closeEvent(event)
+
+    def _written_out(self) -> None:
+        if self._closing:
+            self._closing = False
+            self.close()
 
 
 def _first_control(area: QWidget) -> QWidget | None:

@@ -1,6 +1,11 @@
-import pytest
+import sys
 
-from app import start
+import pytest
+from PySide6.QtCore import QTimer
+from PySide6.QtWidgets import QApplication
+
+from app import last_resort, settings, start
+from app.window import Window
 from models.record.errors import FolderMissingError, NotARecordError
 from models.record.store import FILE_NAME
 
@@ -30,3 +35,25 @@ def test_the_users_own_folder_is_made_where_it_is_missing(tmp_path, monkeypatch)
     start.open_store(tmp_path / "own" / "shop", tell=pytest.fail).close()
 
     assert (tmp_path / "own" / "shop" / FILE_NAME).is_file()
+
+
+def test_the_window_opens_on_the_shop_and_closes_with_nothing_left_open(
+    qapp, shop_folder, tmp_path, monkeypatch
+):
+    monkeypatch.setattr(settings, "settings_file", lambda: tmp_path / "window.ini")
+    monkeypatch.setattr(last_resort, "log_file", lambda: tmp_path / "errors.log")
+    before, seen = sys.excepthook, []
+
+    def close_it():
+        (window,) = [one for one in QApplication.topLevelWidgets() if isinstance(one, Window)]
+        seen.append((window.isVisible(), window.present_desk))
+        window.close()
+
+    QTimer.singleShot(300, close_it)
+    status = start.run(shop_folder, sign_in="AT", job="26-0417")
+
+    assert status == 0
+    assert seen == [(True, "Jobs")]
+    assert sys.excepthook is before
+    assert (tmp_path / "window.ini").is_file()
+    assert not (tmp_path / "errors.log").exists()

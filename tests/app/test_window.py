@@ -1,3 +1,5 @@
+import threading
+
 import pytest
 from PySide6.QtCore import Qt
 from PySide6.QtWidgets import QAbstractButton
@@ -280,3 +282,38 @@ def test_what_an_inspector_records_is_read_by_the_bench_before_it_goes_on(
     opened.settle()
 
     assert presenter.view.job.head.sequence == before + 1
+
+
+def test_closing_waits_until_everything_is_on_the_disk(shop_folder, open_window, qtbot):
+    opened = open_window(shop_folder)
+    go_on, written = threading.Event(), []
+    for number in range(3):
+        opened.writer.write(
+            lambda: go_on.wait(10),
+            done=lambda _, number=number: written.append(number),
+            refused=pytest.fail,
+        )
+    opened.window.close()
+    assert opened.window.isVisible()
+
+    go_on.set()
+    qtbot.waitUntil(lambda: not opened.window.isVisible())
+    assert written == [0, 1, 2]
+
+
+def test_what_cannot_be_written_is_lost_only_by_closing_twice(
+    shop_folder, open_window, qtbot, tmp_path
+):
+    opened = open_window(shop_folder)
+
+    def act():
+        raise DiskFullError(tmp_path / "shop.thirdjournal")
+
+    opened.writer.write(act, done=lambda _: None, refused=pytest.fail)
+    qtbot.waitUntil(lambda: opened.writer.is_halted)
+    opened.window.close()
+    assert opened.window.isVisible()
+    assert opened.window.message.way_out == "Try again; or close once more, and it is lost."
+
+    opened.window.close()
+    assert not opened.window.isVisible()
