@@ -37,7 +37,11 @@ FINDINGS, POINTS, AMENDMENTS, INSTRUMENTS, BESIDE = (
 
 _FINDING_COLUMNS = (
     Column[FindingRow](
-        title="verdict", text=lambda row: row.phrase, shape=lambda row: row.kind, strong=True
+        title="verdict",
+        text=lambda row: row.phrase,
+        shape=lambda row: row.kind,
+        strong=True,
+        share=1.25,
     ),
     Column[FindingRow](title="where", text=lambda row: row.where, share=1.5),
     Column[FindingRow](title="finding", text=lambda row: row.sentence, share=2.6),

@@ -49,10 +49,14 @@ class Leaves(QWidget):
         key = desk_key(name, look=self._look, parent=self)
         key.setCheckable(True)
         key.clicked.connect(lambda: self.turn_to(name))
+        self._row.insertWidget(len(self._keys), key)
+        self._stack.addWidget(leaf)
+        # All keys come first, then whichever leaf is shown.
+        if self._keys:
+            QWidget.setTabOrder(list(self._keys.values())[-1], key)
+        QWidget.setTabOrder(key, leaf)
         self._keys[name] = key
         self._leaves[name] = leaf
-        self._row.insertWidget(len(self._keys) - 1, key)
-        self._stack.addWidget(leaf)
         if len(self._keys) == 1:
             self.turn_to(name)
 

@@ -4,15 +4,18 @@ from __future__ import annotations
 
 from collections.abc import Sequence
 
+from PySide6.QtCore import QRectF
+from PySide6.QtGui import QPaintEvent
 from PySide6.QtWidgets import QDialog, QHBoxLayout, QVBoxLayout, QWidget
 
 from app.frame.look import Look
+from app.frame.plain import flat_painter
 from app.pages.desk import Words, desk_key, desk_look
 from app.pages.table import DeskTable
 from app.viewmodels.rows import Column
 from models.job import Person
 from reports.palette import Colour
-from reports.sheet.medium import Size
+from reports.sheet.medium import DESK, LineWidth, Size
 from reports.typeface import Weight
 
 __all__ = ["PeopleDialog"]
@@ -40,6 +43,7 @@ class PeopleDialog(QDialog):
         self.setAccessibleName("Who is at the window")
         self.chosen = ""
         dress = desk_look(look)
+        self._look = dress
         column = QVBoxLayout(self)
         column.setContentsMargins(24, 20, 24, 20)
         column.setSpacing(12)
@@ -51,6 +55,7 @@ class PeopleDialog(QDialog):
                 Column(title="acts for", text=lambda one: one.employer or "the shop", share=1.6),
             ],
             name="People",
+            edge=8,
             look=dress,
         )
         self.table.set_rows(tuple(people))
@@ -67,10 +72,21 @@ class PeopleDialog(QDialog):
         row.addWidget(take)
         row.addWidget(leave)
         column.addLayout(row)
-        self.resize(680, 440)
+        grown = dress.size(Size.TEXT) / DESK.size(Size.TEXT)
+        self.resize(round(min(680 * grown, 1180)), round(min(480 * grown, 740)))
         keys = [one.key for one in people]
         self.table.selectRow(keys.index(present) if present in keys else 0)
         self.table.setFocus()
+
+    def paintEvent(self, event: QPaintEvent) -> None:
+        """Part the dialog from what lies behind it, also where no window frame does."""
+        super().paintEvent(event)
+        painter = flat_painter(self)
+        wide = self._look.line(LineWidth.WIDE)
+        painter.setPen(self._look.pen(Colour.INK, LineWidth.WIDE))
+        frame = QRectF(self.rect())
+        painter.drawRect(frame.adjusted(wide / 2, wide / 2, -wide / 2, -wide / 2))
+        painter.end()
 
     def _take(self, person: Person | None) -> None:
         if person is not None:

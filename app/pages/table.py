@@ -19,7 +19,7 @@ from PySide6.QtWidgets import (
     QWidget,
 )
 
-from app.frame.lettering import draw_at, draw_struck, line_step, wrapped
+from app.frame.lettering import draw_at, draw_struck, fitted, line_step, wrapped
 from app.frame.look import Look
 from app.frame.plain import draw_focus, flat_painter
 from app.frame.shapes import draw_verdict_shape
@@ -132,7 +132,8 @@ class _Heads(QHeaderView):
         column = self._table.model_of_rows.columns[logicalIndex]
         painter.save()
         painter.fillRect(rect, look.colour(Colour.PAPER))
-        painter.setFont(look.note_font())
+        free = rect.width() - self._table.pad(logicalIndex) - 2.0
+        painter.setFont(fitted(look.note_font(), [column.title], width=free))
         painter.setPen(look.colour(Colour.INK2))
         base = rect.bottom() - look.size(Size.NOTE) * 0.45
         if column.right:

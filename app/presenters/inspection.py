@@ -246,6 +246,11 @@ class InspectionPresenter(QObject):
         person = self._shop.person
         if person is None:
             return "Nobody is signed in. Say who is at the window first, at the upper right."
+        if person.role != row.role:
+            return (
+                f"This waits for the {row.role}. {person.name} is signed in as {person.role}, and "
+                "that name will not be taken here."
+            )
         return (
             f"“{person.name}, {person.role}” is about to stand under {row.where}: {row.what}. "
             f"It says “{row.meaning}”: {_MEANS[row.meaning]}."

@@ -163,9 +163,13 @@ def test_signing_puts_the_name_in_the_record(inspection, shop, qtbot):
     )
 
 
-def test_whoever_may_not_sign_is_told_why(inspection, shop):
+def test_whoever_may_not_sign_is_told_why_before_and_after(inspection, shop):
     shop.presenter.sign_in("CV")
     shown(shop, without_signature(compressor(), "impeller-3", 1, "inspected"))
+    assert inspection.signing_words(inspection.points[0]) == (
+        "This waits for the inspector. Cathal Vintergaard is signed in as technician, and that "
+        "name will not be taken here."
+    )
     before = len(shop.acts.read(COMPRESSOR).entries)
     inspection.sign(inspection.points[0])
     shop.settle()
