@@ -223,7 +223,7 @@ class BenchPage(BenchParts):
     def _trouble(self, what: str, where: str, way_out: str) -> None:
         self._troubled = True
         if isinstance(self._presenter.state.task, ReadingTask):
-            self.reading.cell.refuse(what=what, where=where, way_out=way_out)
+            self.reading.trouble(what=what, where=where, way_out=way_out)
             return
         self.message.set_message(Message(what=what, where=where, way_out=way_out, key="Try again"))
         self._place_message()

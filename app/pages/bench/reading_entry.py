@@ -54,6 +54,7 @@ class ReadingEntry(PlainWidget):
         super().__init__(name="Readings", look=look, parent=parent)
         self._reader = reader
         self._place: object = None
+        self._half = ""
         self._shown: ReadingTask | None = None
         self.prompt = PromptBlock(Prompt(mark=""), look=self._look, parent=self)
         self.prompt.setObjectName("prompt")
@@ -111,10 +112,25 @@ class ReadingEntry(PlainWidget):
             self.cell.ask(asked_of(self._shown))
             self.cell.write(text)
 
+    def trouble(self, *, what: str, where: str, way_out: str) -> None:
+        """Say in the cell that a reading could not be written.
+
+        Parameters
+        ----------
+        what, where, way_out : str
+            What went wrong, with what, and what to do.
+        """
+        # What is being typed by now belongs to the next mark, not to the reading that failed.
+        self._half = "" if self.cell.state is CellState.WRITING else self.cell.text
+        self.cell.refuse(what=what, where=where, way_out=way_out)
+
     def go_on(self) -> None:
         """Wait for a reading again after trouble; the presenter has what was in hand."""
         if self._shown is not None and self.cell.state in (CellState.TROUBLE, CellState.WRITING):
             self.cell.ask(asked_of(self._shown))
+            half, self._half = self._half, ""
+            if half:
+                self.cell.write(half)
 
     def asked_height(self, width: int) -> int:
         """Ask for nothing: mark, cell and ladder fit themselves to whatever room there is."""

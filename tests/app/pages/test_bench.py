@@ -622,3 +622,14 @@ def test_a_long_form_takes_the_room_of_planes_and_changes_and_a_short_one_leaves
     page.fake.show(replace(state, task=short, **above))
 
     assert page.drawing.sheet().height > 300
+
+
+def test_half_a_reading_outlives_trouble_with_the_one_before(bench):
+    page = bench(scenes.runout())
+    type_text(page, "0.00")
+    page.fake.troubled.emit("The record could not be written", "the disk is full", "Free room.")
+    press(page, Qt.Key.Key_F5)
+    page.fake.recovered.emit()
+
+    assert page.fake.acts == [("try_again",)]
+    assert part(page, "cell").text == "0.00"
