@@ -46,11 +46,16 @@ class _Half(QWidget):
         column.addLayout(row)
         self.sentence = Words(look=look, size=Size.TEXT)
         self.sentence.setAlignment(Qt.AlignmentFlag.AlignLeft | Qt.AlignmentFlag.AlignTop)
-        self.sentence.setMinimumHeight(round(look.size(Size.TEXT) * 2.8))
+        self.sentence.setMinimumHeight(round(look.size(Size.TEXT) * 4.2))
         column.addWidget(self.sentence)
         self.sheet = DeskSheet(look=look, parent=self)
         column.addWidget(self.sheet)
         column.addStretch(1)
+
+    def dress(self, look: Look) -> None:
+        """Take over colours and sizes."""
+        self._look = look
+        self.sentence.setMinimumHeight(round(look.size(Size.TEXT) * 4.2))
 
     def move_by(self, step: int) -> None:
         """Show an earlier or a later attempt."""
@@ -79,7 +84,8 @@ class _Half(QWidget):
         picture = self.picture()
         width = float(max(self.width() - 32, 360))
         if picture is not None:
-            sheet = attempt_sheet(picture, width=width, planes=_PLANES, beside=beside)
+            planes = self._look.between(narrow=_PLANES, wide=1.6 * _PLANES)
+            sheet = attempt_sheet(picture, width=width, planes=planes, beside=beside)
             self.sheet.setFixedHeight(round(sheet.height))
             self.sheet.show_sheet(sheet)
             self.sheet.show()

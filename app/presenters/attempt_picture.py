@@ -6,7 +6,14 @@ from models.assess import Assessment, Attempt
 from reports import job_pictures
 from reports.sheet.pictures import ChangeMark, Curve, PlaneCurve, RotorPicture, Turning
 
-__all__ = ["AttemptPicture", "attempt_picture", "attempt_sentence", "bare_picture", "counted"]
+__all__ = [
+    "AttemptPicture",
+    "attempt_picture",
+    "attempt_sentence",
+    "bare_picture",
+    "bend_sentence",
+    "counted",
+]
 
 
 @dataclass(frozen=True, kw_only=True)
@@ -123,3 +130,19 @@ def attempt_sentence(attempt: Attempt) -> str:
         moved, key=lambda one: (one.verdict.severity, tirs.get(one.subject.station or "", 0.0))
     )
     return worst.message
+
+
+def bend_sentence(attempt: Attempt) -> tuple[str, ...]:
+    """Say where the bend of an attempt sits.
+
+    Parameters
+    ----------
+    attempt : Attempt
+        One attempt.
+
+    Returns
+    -------
+    tuple of str
+        One sentence; none where no kink was looked for.
+    """
+    return attempt.bend.sentences[:1] if attempt.kink is not None else ()

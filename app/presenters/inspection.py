@@ -9,7 +9,12 @@ from typing import Literal, TypedDict, get_args
 
 from PySide6.QtCore import QObject, Signal
 
-from app.presenters.attempt_picture import AttemptPicture, attempt_picture, attempt_sentence
+from app.presenters.attempt_picture import (
+    AttemptPicture,
+    attempt_picture,
+    attempt_sentence,
+    bend_sentence,
+)
 from app.presenters.reasons import Reason, reasons_of
 from app.presenters.shop import Said, ShopPresenter
 from app.presenters.wording import day_and_time, in_words, place_words
@@ -329,7 +334,7 @@ class InspectionPresenter(QObject):
                 step=one.step.key,
                 attempt=one.number,
                 title=_attempt_title(view, one),
-                sentence=in_words(view.job, attempt_sentence(one)),
+                sentence=" ".join((attempt_sentence(one), *bend_sentence(one))),
                 kind=verdict_kind(one.verdict_of("runout-changed")),
             )
             for one in view.attempts

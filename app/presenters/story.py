@@ -11,6 +11,7 @@ from app.presenters.attempt_picture import (
     attempt_picture,
     attempt_sentence,
     bare_picture,
+    bend_sentence,
 )
 from app.presenters.shop import ShopPresenter
 from app.presenters.wording import day_and_time, in_words
@@ -144,6 +145,8 @@ def _chapter(view: Assessment, attempt: Attempt) -> Chapter:
     when = attempt.settled.done_at if attempt.settled is not None else attempt.opened.done_at
     words = {"removed": "came off again", "conceded": "settled under a concession"}
     sentences = [in_words(view.job, attempt_sentence(attempt))]
+    if outcome == "removed":
+        sentences += bend_sentence(attempt)
     sentences += _removal_sentences(attempt)
     judged = [one for one in attempt.findings if one.rule.id in ("runout-changed", "part-seated")]
     worst = attempt.verdict_of("runout-changed", "part-seated") if judged else None

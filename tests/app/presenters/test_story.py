@@ -48,7 +48,8 @@ def test_a_remount_says_what_moved_what_was_done_and_what_was_found(story):
 
     assert (chapter.kind, chapter.outcome) == (VerdictKind.STOP, "came off again")
     assert chapter.sentences[0].startswith("E1 changed 0.0013 in (34.1 µm) TIR at 210°")
-    assert "was taken off" in chapter.sentences[1]
+    assert "at the seat of Impeller, second stage (just mounted)" in chapter.sentences[1]
+    assert "was taken off" in chapter.sentences[2]
 
 
 def test_the_summary_counts_what_is_settled_and_what_came_off(story):
