@@ -179,7 +179,7 @@ class Window(QWidget):
             self._shop.refresh()
             if isinstance(page, DeskPage):
                 page.refresh()
-            page.setFocus()
+                page.entrance().setFocus()
         self._show_trouble()
         self._settings.keep_for_shop("desk", name)
 
@@ -288,8 +288,9 @@ class Window(QWidget):
         message = self._strip.message
         if message is not None and (message.trouble or not message.what.startswith("Working: ")):
             return
-        slow = words.startswith(("writing", "reading "))
-        shown = Message(what=f"Working: {words} …", trouble=False) if words and slow else None
+        # What is read in a blink is said on its desk; what is written to a file may take long.
+        slow = words.startswith("writing")
+        shown = Message(what=f"Working: {words} …", trouble=False) if slow else None
         self._strip.set_message(shown)
 
     def _say_trouble(self, error: Exception) -> None:

@@ -120,6 +120,13 @@ class DeskPage(QWidget):
     def refresh(self) -> None:
         """Show what is known now; called when the desk comes to the front."""
 
+    def entrance(self) -> QWidget:
+        """Give what has the keyboard when the desk comes to the front.
+
+        A focus proxy would do the same, but Qt's Tab then skips whatever stands before it.
+        """
+        return self
+
 
 def desk_key(words: str, *, look: Look, parent: QWidget | None = None) -> Key:
     """Make a key of a desk, with some room beside its words.

@@ -95,7 +95,6 @@ class InspectionPage(DeskPage):
         self._stack.addWidget(self._make_whole())
         presenter.changed.connect(self.refresh)
         presenter.recorded.connect(self._say_recorded)
-        self.setFocusProxy(self.leaves)
         self.refresh()
 
     def _make_empty(self) -> QWidget:
@@ -267,6 +266,10 @@ class InspectionPage(DeskPage):
         self._show_reasons(self.findings.present_row)
         self._show_signing(self.points.present_row)
         self.beside.refresh()
+
+    def entrance(self) -> QWidget:
+        """Give what the leaf in front begins with."""
+        return self.leaves.entrance()
 
     def look_changed(self) -> None:
         """Draw for the new width."""

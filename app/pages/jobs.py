@@ -59,7 +59,6 @@ class JobsPage(DeskPage):
         presenter.file_read.connect(self._take)
         presenter.opened.connect(lambda _number: self._close_question())
         self._close_question()
-        self.setFocusProxy(self.shelf)
         self.refresh()
 
     def _make_head(self) -> QWidget:
@@ -134,13 +133,13 @@ class JobsPage(DeskPage):
         row.setSpacing(12)
         self._open = desk_key("Open at the bench", look=self.look)
         self._open.clicked.connect(self._open_present)
-        bring = desk_key("Bring in a job file …", look=self.look)
-        bring.clicked.connect(self.bring_in)
+        self._bring = desk_key("Bring in a job file …", look=self.look)
+        self._bring.clicked.connect(self.bring_in)
         self._write = desk_key("Write job file …", look=self.look)
         self._write.clicked.connect(self.write_job_file)
         self._traveler = desk_key("Write traveler …", look=self.look)
         self._traveler.clicked.connect(self.write_traveler)
-        for key in (self._open, bring, self._write, self._traveler):
+        for key in (self._open, self._bring, self._write, self._traveler):
             row.addWidget(key)
         row.addStretch(1)
         self._count = Words(look=self.look, size=Size.NOTE, colour=Colour.INK2)
@@ -159,6 +158,10 @@ class JobsPage(DeskPage):
         for key in (self._open, self._write, self._traveler):
             key.setEnabled(bool(rows))
         self._count.say("1 job shown" if len(rows) == 1 else f"{len(rows)} jobs shown")
+
+    def entrance(self) -> QWidget:
+        """Give the shelf, or the key that brings a first job."""
+        return self.shelf if self.shelf.model_of_rows.rows else self._bring
 
     def _open_present(self) -> None:
         row = self.shelf.present_row
@@ -186,7 +189,7 @@ class JobsPage(DeskPage):
 
     def _close_question(self) -> None:
         self._question.hide()
-        self.shelf.setFocus()
+        self.entrance().setFocus()
 
     # -- files
 

@@ -70,16 +70,19 @@ class Leaves(QWidget):
         """
         for word, key in self._keys.items():
             key.setChecked(word == name)
-        leaf = self._leaves[name]
-        self._stack.setCurrentWidget(leaf)
-        tables = [leaf] if isinstance(leaf, DeskTable) else leaf.findChildren(DeskTable)
-        self.setFocusProxy(tables[0] if tables else self._keys[name])
+        self._stack.setCurrentWidget(self._leaves[name])
         self.turned.emit(name)
 
     @property
     def present(self) -> str:
         """Name of the leaf that is shown."""
         return next(word for word, key in self._keys.items() if key.isChecked())
+
+    def entrance(self) -> QWidget:
+        """Give the first table of the leaf that is shown, or its key where it has none."""
+        leaf = self._leaves[self.present]
+        tables = [leaf] if isinstance(leaf, DeskTable) else leaf.findChildren(DeskTable)
+        return tables[0] if tables else self._keys[self.present]
 
     def count(self, name: str, number: int) -> None:
         """Say on a leaf's key how many rows wait there.

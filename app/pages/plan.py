@@ -66,7 +66,6 @@ class PlanPage(DeskPage):
         self._stack.addWidget(self._make_empty())
         self._stack.addWidget(self._make_plan())
         presenter.changed.connect(self.refresh)
-        self.setFocusProxy(self.leaves)
         self.refresh()
 
     def _make_empty(self) -> QWidget:
@@ -122,6 +121,10 @@ class PlanPage(DeskPage):
         self.tables[LACKS].set_rows(presenter.lacks)
         self.leaves.count(LACKS, len(presenter.lacks))
         self._draw()
+
+    def entrance(self) -> QWidget:
+        """Give what the leaf in front begins with."""
+        return self.leaves.entrance()
 
     def _point_at(self, row: StepRow | None) -> None:
         step = row.step if row is not None else None

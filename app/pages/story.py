@@ -57,7 +57,6 @@ class StoryPage(DeskPage):
         self._stack.addWidget(empty)
         self._stack.addWidget(self._make_story())
         presenter.changed.connect(self.refresh)
-        self.setFocusProxy(self.chapters)
         self.refresh()
 
     def _make_story(self) -> QWidget:
@@ -116,6 +115,10 @@ class StoryPage(DeskPage):
         if chapters and self.chapters.present_row is None:
             self.chapters.selectRow(before if 0 <= before < len(chapters) else len(chapters) - 1)
         self._show_chapter(self.chapters.present_row)
+
+    def entrance(self) -> QWidget:
+        """Give the chapters."""
+        return self.chapters
 
     def _show_chapter(self, chapter: Chapter | None) -> None:
         if chapter is None:

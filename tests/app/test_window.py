@@ -317,3 +317,28 @@ def test_what_cannot_be_written_is_lost_only_by_closing_twice(
 
     opened.window.close()
     assert not opened.window.isVisible()
+
+
+@pytest.mark.parametrize(
+    ("desk", "reached"),
+    [
+        ("Jobs", {"Jobs", "Search the shelf", "Show: Settled", "Bring in a job file …"}),
+        ("Plan", {"Steps of the plan", "Stations", "Method and people", "What is lacking: 5"}),
+        ("Inspection", {"Findings", "What the verdict rests on", "Findings: 1", "Side by side"}),
+        ("Witness", {"Chapters of the story"}),
+    ],
+)
+def test_tab_alone_reaches_what_can_be_done_at_a_desk(
+    shop_folder, open_window, qtbot, desk, reached
+):
+    opened = open_window(shop_folder, sign_in="BQ", job=COMPRESSOR)
+    opened.window.show_desk(desk)
+    with qtbot.waitActive(opened.window):
+        opened.window.activateWindow()
+    found = set()
+    for _ in range(40):
+        found.add(opened.window.focusWidget().accessibleName())
+        qtbot.keyClick(opened.window.focusWidget(), Qt.Key.Key_Tab)
+
+    assert reached <= found
+    assert "Signed in: Brona Quillfeather, inspector" in found
