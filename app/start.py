@@ -8,6 +8,7 @@ from pathlib import Path
 
 from PySide6.QtWidgets import QApplication, QWidget
 
+from app.benches import Bench
 from app.frame.look import Look
 from app.last_resort import LastResort, show_dialog
 from app.pages.bench.page import BenchPage
@@ -26,7 +27,7 @@ from app.presenters.writing import Writer
 from app.settings import Settings, shop_folder
 from app.style.theme import apply_theme
 from app.style.tokens import load_fonts
-from app.window import BENCH, Bench, Window
+from app.window import BENCH, Window
 from models.acts import Acts
 from models.record.errors import (
     DiskFaultError,

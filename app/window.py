@@ -3,58 +3,29 @@
 from __future__ import annotations
 
 from collections.abc import Callable
-from dataclasses import dataclass
 from functools import partial
 
 from PySide6.QtCore import Qt
 from PySide6.QtGui import QCloseEvent, QGuiApplication, QKeySequence, QResizeEvent, QShortcut
 from PySide6.QtWidgets import QStackedWidget, QVBoxLayout, QWidget
 
+from app.benches import Benches, MakeBench
 from app.frame.desks import DesksLine
 from app.frame.look import Look
 from app.frame.messages import Message, MessageStrip
 from app.pages.desk import DeskPage
 from app.pages.people import PeopleDialog
-from app.pages.plain_desk import PlainDesk
 from app.presenters.shop import Said, ShopPresenter
 from app.presenters.wording import person_words
 from app.settings import Settings
 from app.style.theme import TEXT_SCALES, Appearance, apply_theme, palette_for
 from models.job import Person
 
-__all__ = ["BENCH", "Bench", "MakeBench", "Window"]
+__all__ = ["BENCH", "Window"]
 
 BENCH = "Bench"
 """The desk that is made for every job anew, once somebody opens it there."""
 
-
-@dataclass(kw_only=True)
-class Bench:
-    """The bench of one job, as the window needs it.
-
-    Attributes
-    ----------
-    page : QWidget
-        What is shown.
-    person : str
-        Key of who acts at it.
-    sign_in : callable
-        Lets another person act at it; nothing typed is lost.
-    reload : callable
-        Reads the job again, once something was recorded at another desk.
-    desk_acts : int
-        How many acts the other desks had recorded when it was read [-].
-    """
-
-    page: QWidget
-    person: str
-    sign_in: Callable[[str], None]
-    reload: Callable[[], None]
-    desk_acts: int = 0
-
-
-MakeBench = Callable[[str, str, Look, QWidget], Bench]
-"""Makes the bench for a job and a person, with a look, inside a parent."""
 
 _LEAST_SIZE = (1280, 800)
 _NOBODY = "Who is at the window?"
@@ -74,11 +45,8 @@ class Window(QWidget):
         super().__init__()
         self._shop = shop
         self._settings = settings
-        self._make_bench = make_bench
         self._ask = ask_person or self.ask_person
         self._far = False
-        # A bench is kept while the window stands: what was typed at it is found again.
-        self._benches: dict[str, Bench] = {}
         self._trouble: Exception | None = None
         self._closing = False
         self._close_anyway = False
@@ -94,6 +62,7 @@ class Window(QWidget):
         self._strip = MessageStrip(look=self._look, parent=self)
         self._strip.way_out_taken.connect(self._way_out)
         self._stack = QStackedWidget(self)
+        self._benches = Benches(shop, self._stack, make_bench=make_bench, window=self)
         self._column.addWidget(self._strip)
         self._column.addWidget(self._stack, 1)
         shop.said.connect(self._say)
@@ -118,8 +87,7 @@ class Window(QWidget):
             The desk.
         """
         if page is None:
-            self._closed_bench = PlainDesk("", look=self._look, parent=self)
-            page = self._closed_bench
+            page = self._benches.closed
         self._pages[name] = page
         self._stack.addWidget(page)
 
@@ -172,7 +140,7 @@ class Window(QWidget):
             return
         self._line.set_present(name)
         if name == BENCH:
-            self._show_bench()
+            self._benches.show(self._look)
         else:
             page = self._pages[name]
             self._stack.setCurrentWidget(page)
@@ -183,48 +151,14 @@ class Window(QWidget):
         self._show_trouble()
         self._settings.keep_for_shop("desk", name)
 
-    def _show_bench(self) -> None:
-        words = self._why_closed()
-        if words:
-            self._closed_bench.words.say(words)
-            self._stack.setCurrentWidget(self._closed_bench)
-            return
-        job, person = self._shop.job_number, self._shop.person_key
-        bench = self._benches.get(job)
-        if bench is None:
-            bench = self._make_bench(job, person, self._look, self)
-            bench.desk_acts = self._shop.desk_acts
-            self._benches[job] = bench
-            self._stack.addWidget(bench.page)
-        if bench.person != person:
-            bench.person = person
-            bench.sign_in(person)
-        if bench.desk_acts != self._shop.desk_acts:
-            bench.desk_acts = self._shop.desk_acts
-            bench.reload()
-        self._stack.setCurrentWidget(bench.page)
-
-    def _why_closed(self) -> str:
-        """Say why nobody can work at the bench now; nothing where somebody can."""
-        shop = self._shop
-        if not shop.is_read:
-            return "working: reading the shelf"
-        if not shop.job_number:
-            return "Choose a job first, at the Jobs desk."
-        if shop.job is None:
-            return f"working: job {shop.job_number} is being read"
-        if shop.person is None:
-            return "Say who is at the window first: press the words at the upper right."
-        return ""
-
     def leave_bench(self) -> None:
         """Sign out: the desk is locked, the record is not."""
         self._shop.sign_in("")
         self.show_desk(next(iter(self._pages)))
 
     def _shelf_changed(self) -> None:
-        if self.present_desk == BENCH and self._stack.currentWidget() is self._closed_bench:
-            self._show_bench()
+        if self.present_desk == BENCH and self._benches.is_closed:
+            self._benches.show(self._look)
 
     def _job_changed(self) -> None:
         rotor = self._shop.job.plan.rotor.serial if self._shop.job is not None else ""
@@ -241,7 +175,7 @@ class Window(QWidget):
         self._line.set_person(person_words(person) if person is not None else _NOBODY)
         self._settings.keep_for_shop("person", self._shop.person_key)
         if self.present_desk == BENCH:
-            self._show_bench()
+            self._benches.show(self._look)
 
     def _choose_person(self) -> None:
         if not self._shop.people:
@@ -299,7 +233,7 @@ class Window(QWidget):
 
     def _show_trouble(self) -> None:
         """Say what keeps the record from being written; the bench says it in its own place."""
-        at_bench = self.present_desk == BENCH and not self._why_closed()
+        at_bench = self.present_desk == BENCH and not self._benches.why_closed()
         said = self._strip.message is not None and self._strip.message.trouble
         if self._trouble is not None and not at_bench:
             self._strip.set_message(
@@ -343,8 +277,7 @@ class Window(QWidget):
                 appearance=self._settings.appearance,
                 text_scale=self._settings.text_scale,
             )
-        benches = [bench.page for bench in self._benches.values()]
-        for part in (self._line, self._strip, *self._pages.values(), *benches):
+        for part in (self._line, self._strip, *self._pages.values(), *self._benches.pages):
             set_look = getattr(part, "set_look", None)
             if set_look is not None:
                 set_look(self._look)

@@ -11,11 +11,10 @@ from app.pages.desk import DeskPage, FlatLine, Rule, Words, desk_key
 from app.pages.leaves import Leaves
 from app.pages.side_by_side import SideBySide
 from app.pages.table import DeskTable
-from app.presenters.inspection import (
-    DISPOSITIONS,
+from app.presenters.inspection import DISPOSITIONS, InspectionPresenter
+from app.presenters.inspection_rows import (
     AmendmentRow,
     FindingRow,
-    InspectionPresenter,
     InstrumentRow,
     PointRow,
 )

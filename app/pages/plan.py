@@ -10,7 +10,9 @@ from app.pages.desk import DeskPage, DeskSheet, Rule, Words
 from app.pages.drawings import rotor_sheet
 from app.pages.leaves import Leaves
 from app.pages.table import DeskTable
-from app.presenters.plan import LackRow, MethodRow, PlanPresenter, StationRow, StepRow
+from app.presenters.plan import PlanPresenter
+from app.presenters.plan_lacks import LackRow
+from app.presenters.plan_rows import MethodRow, StationRow, StepRow
 from app.viewmodels.rows import Column
 from reports.palette import Colour
 from reports.sheet.medium import Size

@@ -2,8 +2,6 @@
 
 from __future__ import annotations
 
-from collections.abc import Iterator
-from dataclasses import dataclass
 from datetime import date
 from typing import Literal, TypedDict, get_args
 
@@ -15,26 +13,27 @@ from app.presenters.attempt_picture import (
     attempt_sentence,
     bend_sentence,
 )
-from app.presenters.reasons import Reason, reasons_of
+from app.presenters.inspection_rows import (
+    AmendmentRow,
+    AttemptRow,
+    FindingRow,
+    InstrumentRow,
+    PointRow,
+    amendments_of,
+    attempt_title,
+    finding_row,
+    instrument_row,
+    many,
+    points_of,
+)
 from app.presenters.shop import Said, ShopPresenter
-from app.presenters.wording import day_and_time, in_words, place_words
 from models.acts import new_id
-from models.assess import Assessment, Attempt, Standing, finding_key
-from models.job import Decision, Entry, Instrument, Job, Place, Role, Signature
+from models.assess import Assessment
+from models.job import Decision, Place, Signature
 from models.rules.rule import Verdict
-from models.units import unit_set
 from reports.job_pictures import verdict_kind
-from reports.sheet.pictures import VerdictKind
 
-__all__ = [
-    "DISPOSITIONS",
-    "AmendmentRow",
-    "AttemptRow",
-    "FindingRow",
-    "InspectionPresenter",
-    "InstrumentRow",
-    "PointRow",
-]
+__all__ = ["DISPOSITIONS", "InspectionPresenter"]
 
 Disposition = Literal[
     "rework", "repair", "use as is under concession", "scrap", "read again", "accept reading"
@@ -42,19 +41,11 @@ Disposition = Literal[
 DISPOSITIONS: tuple[str, ...] = get_args(Disposition)
 """How a finding may be decided."""
 
-Meaning = Literal["performed", "inspected", "witnessed", "decided"]
-_DAYS_BEFORE_DUE = 30
 _MEANS: dict[str, str] = {
     "performed": "you did the work as it is recorded",
     "inspected": "you have read the record of it and agree with its verdicts",
     "witnessed": "you were present, or have read its record in place of that",
     "decided": "you have decided that work goes on as recorded",
-}
-_MEANING_OF: dict[str, Meaning] = {
-    "technician": "performed",
-    "inspector": "inspected",
-    "witness": "witnessed",
-    "engineer": "decided",
 }
 
 
@@ -65,68 +56,6 @@ class _Common(TypedDict):
     done_at: str
     entered_at: str
     plan: str
-
-
-@dataclass(frozen=True, kw_only=True)
-class FindingRow:
-    """A finding that is not within its limits and that nothing has answered."""
-
-    key: str
-    kind: VerdictKind
-    phrase: str
-    where: str
-    sentence: str
-    reasons: tuple[Reason, ...]
-    step: str | None = None
-    attempt: int | None = None
-
-
-@dataclass(frozen=True, kw_only=True)
-class PointRow:
-    """A signature that a settled step waits for."""
-
-    step: str
-    attempt: int
-    where: str
-    kind: str
-    role: Role
-    meaning: Meaning
-    what: str
-    holds: bool
-
-
-@dataclass(frozen=True, kw_only=True)
-class AmendmentRow:
-    """Something recorded that was replaced later; both stay."""
-
-    where: str
-    was: str
-    now: str
-    reason: str
-    by: str
-    at: str
-
-
-@dataclass(frozen=True, kw_only=True)
-class InstrumentRow:
-    """An instrument and the day its calibration falls due."""
-
-    tag: str
-    kind: str
-    due: str
-    words: str
-    verdict: VerdictKind
-
-
-@dataclass(frozen=True, kw_only=True)
-class AttemptRow:
-    """An attempt that can be laid beside another."""
-
-    step: str
-    attempt: int
-    title: str
-    sentence: str
-    kind: VerdictKind
 
 
 class InspectionPresenter(QObject):
@@ -169,8 +98,8 @@ class InspectionPresenter(QObject):
         findings, points = len(self.findings), len(self.points)
         if not findings and not points:
             return "Nothing waits for you."
-        parts = [_many(findings, "finding")] if findings else []
-        parts += [_many(points, "signature")] if points else []
+        parts = [many(findings, "finding")] if findings else []
+        parts += [many(points, "signature")] if points else []
         verb = "waits" if findings + points == 1 else "wait"
         return f"{' and '.join(parts)} {verb} for somebody."
 
@@ -188,7 +117,7 @@ class InspectionPresenter(QObject):
             if one.answered_by is None and one.finding.verdict is not Verdict.WITHIN
         ]
         waiting.sort(key=lambda one: -one.finding.verdict.severity)
-        return tuple(_finding_row(view.job, one) for one in waiting)
+        return tuple(finding_row(view.job, one) for one in waiting)
 
     def decide(self, row: FindingRow, disposition: str, words: str) -> None:
         """Record a decision about a finding in the name of who is signed in.
@@ -233,7 +162,7 @@ class InspectionPresenter(QObject):
     def points(self) -> tuple[PointRow, ...]:
         """The signatures that settled steps wait for."""
         view = self.view
-        return tuple(_points(view)) if view is not None else ()
+        return tuple(points_of(view)) if view is not None else ()
 
     def signing_words(self, row: PointRow) -> str:
         """Say whose name is about to stand under what, and what it means.
@@ -305,7 +234,7 @@ class InspectionPresenter(QObject):
     def amendments(self) -> tuple[AmendmentRow, ...]:
         """What was replaced, the latest first."""
         view = self.view
-        rows = list(_amendments(view.job)) if view is not None else []
+        rows = list(amendments_of(view.job)) if view is not None else []
         return tuple(sorted(rows, key=lambda row: row.at, reverse=True))
 
     @property
@@ -319,7 +248,7 @@ class InspectionPresenter(QObject):
             view.job.instruments,
             key=lambda one: one.calibration.due_on if one.calibration is not None else "",
         )
-        return tuple(_instrument_row(one, today) for one in known)
+        return tuple(instrument_row(one, today) for one in known)
 
     # -- side by side
 
@@ -333,7 +262,7 @@ class InspectionPresenter(QObject):
             AttemptRow(
                 step=one.step.key,
                 attempt=one.number,
-                title=_attempt_title(view, one),
+                title=attempt_title(view, one),
                 sentence=" ".join((attempt_sentence(one), *bend_sentence(one))),
                 kind=verdict_kind(one.verdict_of("runout-changed")),
             )
@@ -371,114 +300,3 @@ class InspectionPresenter(QObject):
         view = self.view
         found = view.attempt(row.step, row.attempt) if view is not None else None
         return attempt_picture(view, found) if view is not None and found is not None else None
-
-
-def _many(number: int, what: str) -> str:
-    return f"1 {what}" if number == 1 else f"{number} {what}s"
-
-
-def _finding_row(job: Job, standing: Standing) -> FindingRow:
-    finding = standing.finding
-    subject = finding.subject
-    return FindingRow(
-        key=finding_key(finding),
-        kind=verdict_kind(finding.verdict),
-        phrase=finding.phrase,
-        where=place_words(job, subject),
-        sentence=in_words(job, finding.message),
-        reasons=reasons_of(finding, unit_set(job.plan.rotor.units)),
-        step=subject.step,
-        attempt=subject.attempt,
-    )
-
-
-def _attempt_title(view: Assessment, attempt: Attempt) -> str:
-    number = view.job.plan.step_number(attempt.step.key)
-    return f"step {number}, {attempt.step.title}, attempt {attempt.number}"
-
-
-def _points(view: Assessment) -> Iterator[PointRow]:
-    for step in view.job.plan.steps:
-        attempts = view.attempts_at(step.key)
-        last = attempts[-1] if attempts else None
-        if last is None or last.settled is None or last.settled.outcome == "removed":
-            continue
-        given = {(one.role, one.meaning) for one in last.signatures}
-        where = _attempt_title(view, last)
-        wanted: list[tuple[str, Role, str]] = [("hold", "technician", "the work of this step")]
-        wanted += [(one.kind, one.role, one.what) for one in step.points]
-        for kind, role, what in wanted:
-            meaning = _MEANING_OF[role]
-            signed = any(said == meaning and by == role for by, said in given)
-            if not signed:
-                yield PointRow(
-                    step=step.key,
-                    attempt=last.number,
-                    where=where,
-                    kind=kind,
-                    role=role,
-                    meaning=meaning,
-                    what=what,
-                    holds=kind == "hold",
-                )
-
-
-def _amendments(job: Job) -> Iterator[AmendmentRow]:
-    names = {one.key: one.name for one in job.people}
-    by_id = {one.id: one for one in job.entries}
-    for entry in job.entries:
-        for one in getattr(entry, "corrections", ()):
-            yield AmendmentRow(
-                where=f"{_entry_words(job, entry)}: {_mark_words(entry, one.where)}",
-                was=one.was,
-                now=one.now,
-                reason=one.reason,
-                by=names.get(one.by, one.by),
-                at=day_and_time(one.at),
-            )
-        replaced = by_id.get(entry.supersedes or "")
-        if replaced is not None:
-            yield AmendmentRow(
-                where=_entry_words(job, entry),
-                was=f"entered {day_and_time(replaced.entered_at)}",
-                now=f"entered {day_and_time(entry.entered_at)}",
-                reason=entry.reason or "",
-                by=names.get(entry.by, entry.by),
-                at=day_and_time(entry.entered_at),
-            )
-
-
-def _entry_words(job: Job, entry: Entry) -> str:
-    place = entry.place
-    if place.step is None:
-        return f"{entry.title}, {place.kind}"
-    number = job.plan.step_number(place.step)
-    return f"{entry.title}, step {number}, attempt {place.attempt}"
-
-
-def _mark_words(entry: Entry, where: tuple[str, ...]) -> str:
-    angles = getattr(entry, "angles", ())
-    if len(where) == 2 and where[1].isdigit() and int(where[1]) < len(angles):
-        return f"{where[0]} at {angles[int(where[1])].written}"
-    return ", ".join(where)
-
-
-def _instrument_row(one: Instrument, today: date) -> InstrumentRow:
-    if one.calibration is None:
-        return InstrumentRow(
-            tag=one.tag,
-            kind=one.kind,
-            due="",
-            words="No calibration is recorded.",
-            verdict=VerdictKind.NOT_JUDGED,
-        )
-    days = (date.fromisoformat(one.calibration.due_on) - today).days
-    verdict, words = VerdictKind.WITHIN, f"in {_many(days, 'day')}"
-    if days < 0:
-        ago = f"{_many(-days, 'day')} ago"
-        verdict, words = VerdictKind.STOP, f"{ago}; do not use it until it is calibrated"
-    elif days <= _DAYS_BEFORE_DUE:
-        verdict, words = VerdictKind.LOOK, f"{words if days else 'today'}; send it soon"
-    return InstrumentRow(
-        tag=one.tag, kind=one.kind, due=one.calibration.due_on, words=words, verdict=verdict
-    )

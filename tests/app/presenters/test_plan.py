@@ -1,7 +1,8 @@
 import msgspec
 import pytest
 
-from app.presenters.plan import PlanPresenter, lacks_of
+from app.presenters.plan import PlanPresenter
+from app.presenters.plan_lacks import lacks_of
 from reports.sheet.pictures import PartState
 from sample_data.load import compressor, pump
 from tests.app.open_shop import COMPRESSOR
