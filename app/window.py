@@ -281,6 +281,9 @@ class Window(QWidget):
             set_look = getattr(part, "set_look", None)
             if set_look is not None:
                 set_look(self._look)
+        if self._line is not None:
+            # A crowded desk below must not press the line of desks together.
+            self._line.setFixedHeight(self._line.sizeHint().height())
 
     def next_appearance(self) -> None:
         """Change from light to dark, to contrast, and back."""

@@ -318,7 +318,10 @@ def dress_bar(bar: QScrollBar, look: Look) -> None:
         f"QScrollBar:vertical {{ background: {groove}; width: 14px; border: none; }}"
         f"QScrollBar::handle:vertical {{ background: {handle}; min-height: 32px;"
         " margin: 2px 4px; border: none; }"
-        "QScrollBar::add-line, QScrollBar::sub-line { height: 0px; }"
+        f"QScrollBar:horizontal {{ background: {groove}; height: 14px; border: none; }}"
+        f"QScrollBar::handle:horizontal {{ background: {handle}; min-width: 32px;"
+        " margin: 4px 2px; border: none; }"
+        "QScrollBar::add-line, QScrollBar::sub-line { height: 0px; width: 0px; }"
         f"QScrollBar::add-page, QScrollBar::sub-page {{ background: {groove}; }}"
     )
 

@@ -7,7 +7,15 @@ from typing import Any
 
 from PySide6.QtCore import QModelIndex, QPersistentModelIndex, QPointF, QRect, QRectF, QSize, Qt
 from PySide6.QtCore import Signal as QtSignal
-from PySide6.QtGui import QFont, QKeyEvent, QPainter, QPaintEvent, QPalette, QResizeEvent
+from PySide6.QtGui import (
+    QFont,
+    QFontMetricsF,
+    QKeyEvent,
+    QPainter,
+    QPaintEvent,
+    QPalette,
+    QResizeEvent,
+)
 from PySide6.QtWidgets import (
     QAbstractItemView,
     QFrame,
@@ -30,7 +38,7 @@ from reports.sheet.medium import LineWidth, Size
 from reports.sheet.pictures import VerdictKind
 from reports.typeface import Weight
 
-__all__ = ["DeskTable"]
+__all__ = ["DeskTable", "shared_widths"]
 
 _PAD = 8
 _BAR = 4
@@ -44,11 +52,6 @@ class _Cells(QStyledItemDelegate):
         super().__init__(table)
         self._table = table
 
-    def _font(self, column: int) -> QFont:
-        strong = self._table.model_of_rows.columns[column].strong
-        weight = Weight.SEMI_BOLD if strong else Weight.REGULAR
-        return self._table.look.font(Size.TEXT, weight=weight)
-
     def _indent(self, index: Index) -> float:
         if index.data(SHAPE_ROLE) is None:
             return 0.0
@@ -56,7 +59,7 @@ class _Cells(QStyledItemDelegate):
 
     def _lines(self, index: Index, width: float) -> list[str]:
         text = index.data(Qt.ItemDataRole.DisplayRole) or ""
-        font = self._font(index.column())
+        font = self._table.cell_font(index.column())
         before = self._table.pad(index.column()) + self._indent(index)
         room = max(width - _PAD - before, 24.0)
         return [line for part in text.split("\n") for line in wrapped(part, font, width=room)]
@@ -64,7 +67,7 @@ class _Cells(QStyledItemDelegate):
     def sizeHint(self, option: QStyleOptionViewItem, index: Index) -> QSize:
         """Give the height that the words need in their column."""
         width = self._table.columnWidth(index.column())
-        step = line_step(self._font(index.column()))
+        step = line_step(self._table.cell_font(index.column()))
         return QSize(width, round(len(self._lines(index, width)) * step + 10.0))
 
     def paint(self, painter: QPainter, option: QStyleOptionViewItem, index: Index) -> None:
@@ -87,7 +90,7 @@ class _Cells(QStyledItemDelegate):
 
     def _paint_words(self, painter: QPainter, room: QRectF, index: Index) -> None:
         look = self._table.look
-        font = self._font(index.column())
+        font = self._table.cell_font(index.column())
         painter.setFont(font)
         painter.setPen(look.colour(Colour.INK))
         step = line_step(font)
@@ -148,6 +151,48 @@ class _Heads(QHeaderView):
         painter.restore()
 
 
+def shared_widths(
+    shares: Sequence[float], least: Sequence[float], room: float
+) -> tuple[float, ...]:
+    """Share a width among columns, none narrower than its longest word.
+
+    Parameters
+    ----------
+    shares : sequence of float
+        What each column should have beside the others [-].
+    least : sequence of float
+        What each column must have [px].
+    room : float
+        What there is [px].
+
+    Returns
+    -------
+    tuple of float
+        Widths that fill the room, or go beyond it where the words need more [px].
+
+    Examples
+    --------
+    >>> shared_widths([1.0, 1.0, 2.0], [0.0, 0.0, 0.0], 400.0)
+    (100.0, 100.0, 200.0)
+    >>> shared_widths([1.0, 1.0, 2.0], [160.0, 0.0, 0.0], 400.0)
+    (160.0, 80.0, 160.0)
+    >>> shared_widths([1.0, 1.0], [300.0, 200.0], 400.0)
+    (300.0, 200.0)
+    """
+    held: set[int] = set()
+    while True:
+        free = max(room - sum(least[place] for place in held), 0.0)
+        total = sum(share for place, share in enumerate(shares) if place not in held)
+        widths = tuple(
+            least[place] if place in held else free * share / total
+            for place, share in enumerate(shares)
+        )
+        narrow = {place for place, width in enumerate(widths) if width < least[place]}
+        if not narrow:
+            return widths
+        held |= narrow
+
+
 class DeskTable(QTableView):
     """Shows a `RowsModel`; arrows walk, Enter or a double touch takes the row."""
 
@@ -170,6 +215,7 @@ class DeskTable(QTableView):
         self.look = look
         self._grows = grows
         self.edge = edge
+        self._least: list[float] = [0.0] * len(columns)
         self.model_of_rows: RowsModel[Any] = RowsModel(columns, self)
         self.setAccessibleName(name)
         self.setFrameShape(QFrame.Shape.NoFrame)
@@ -179,7 +225,7 @@ class DeskTable(QTableView):
         self.setSelectionMode(QAbstractItemView.SelectionMode.SingleSelection)
         self.setEditTriggers(QAbstractItemView.EditTrigger.NoEditTriggers)
         self.setVerticalScrollMode(QAbstractItemView.ScrollMode.ScrollPerPixel)
-        self.setHorizontalScrollBarPolicy(Qt.ScrollBarPolicy.ScrollBarAlwaysOff)
+        self.setHorizontalScrollMode(QAbstractItemView.ScrollMode.ScrollPerPixel)
         if grows:
             self.setVerticalScrollBarPolicy(Qt.ScrollBarPolicy.ScrollBarAlwaysOff)
         self.verticalHeader().hide()
@@ -205,7 +251,10 @@ class DeskTable(QTableView):
             From top to bottom.
         """
         self.model_of_rows.set_rows(rows)
+        self._measure()
         self._fit()
+        if self.hasFocus():
+            self._enter()
 
     @property
     def present_row(self) -> Any:  # noqa: ANN401  (whatever the rows are)
@@ -220,6 +269,8 @@ class DeskTable(QTableView):
         palette.setColor(QPalette.ColorRole.Base, look.colour(Colour.PAPER))
         self.setPalette(palette)
         self.horizontalHeader().setFixedHeight(round(look.size(Size.NOTE) * 1.9))
+        dress_bar(self.horizontalScrollBar(), look)
+        self._measure()
         self._fit()
 
     def resizeEvent(self, event: QResizeEvent) -> None:
@@ -227,12 +278,36 @@ class DeskTable(QTableView):
         super().resizeEvent(event)
         self._fit()
 
+    def _measure(self) -> None:
+        """Find how wide each column must be so that its longest word stays inside it."""
+        model = self.model_of_rows
+        self._least = [
+            max(
+                (
+                    metrics.horizontalAdvance(word)
+                    for row in model.rows
+                    for word in column.text(row).split()
+                ),
+                default=0.0,
+            )
+            + self.pad(place)
+            + _PAD
+            + (self.look.size(Size.TEXT) + 8.0 if column.shape is not None else 0.0)
+            for place, column in enumerate(model.columns)
+            for metrics in (QFontMetricsF(self.cell_font(place)),)
+        ]
+
+    def cell_font(self, column: int) -> QFont:
+        """Give the font of a column's cells."""
+        strong = self.model_of_rows.columns[column].strong
+        weight = Weight.SEMI_BOLD if strong else Weight.REGULAR
+        return self.look.font(Size.TEXT, weight=weight)
+
     def _fit(self) -> None:
-        columns = self.model_of_rows.columns
-        free = self.viewport().width()
-        total = sum(column.share for column in columns)
-        for place, column in enumerate(columns):
-            self.setColumnWidth(place, int(free * column.share / total))
+        shares = [column.share for column in self.model_of_rows.columns]
+        widths = shared_widths(shares, self._least, float(self.viewport().width()))
+        for place, width in enumerate(widths):
+            self.setColumnWidth(place, int(width))
         self.resizeRowsToContents()
         if self._grows:
             rows = sum(self.rowHeight(row) for row in range(self.model_of_rows.rowCount()))
@@ -265,5 +340,8 @@ class DeskTable(QTableView):
     def focusInEvent(self, event: Any) -> None:  # noqa: ANN401  (Qt's own event)
         """Put the frame round the first row where none is present."""
         super().focusInEvent(event)
+        self._enter()
+
+    def _enter(self) -> None:
         if not self.currentIndex().isValid() and self.model_of_rows.rowCount():
             self.selectRow(0)
