@@ -409,8 +409,7 @@ def bare_shaft(view: Assessment) -> Iterator[Flowable]:
     if survey is None:
         yield text("The bare shaft has not been surveyed yet.")
         return
-    first = view.job.plan.steps[0].key
-    picture = rotor_picture(view, step=first, numbers=False)
+    picture = rotor_picture(view, step=None, bare=True)
     yield SheetFlowable(
         along_the_rotor(
             picture=picture,

@@ -65,16 +65,18 @@ def rotor_picture(
     read: Collection[str] | None = None,
     numbers: bool = False,
     every_station: bool = False,
+    bare: bool = False,
 ) -> RotorPicture:
     """Draw the rotor as it stands at a step: on before it, in hand at it, to come after it.
 
     `read` names the stations read so far in the survey shown, None for a survey that is done.
-    Without a step everything is drawn as it is on.
+    Without a step everything is drawn as it is on; `bare` draws the shaft before the first mount.
     """
     plan = view.job.plan
     shift = min(one.start.si for one in plan.shaft.steps)
     number_of = {one.key: number for number, one in enumerate(plan.steps, start=1)}
     now = number_of[step] if step is not None else len(plan.steps) + 1
+    now = 0 if bare else now
     bore = plan.shaft.bore.si if plan.shaft.bore else 0.0
     parts = [
         _outline(
@@ -89,7 +91,8 @@ def rotor_picture(
         for one in plan.steps
         for item in one.items
     ]
-    reach = {one.key for one in plan.stations_in_reach(step if step else plan.steps[-1].key)}
+    last = None if bare else step or plan.steps[-1].key
+    reach = {one.key for one in plan.stations_in_reach(last)}
     journals = (plan.first_journal, plan.second_journal)
     stations = tuple(
         StationMark(
@@ -344,8 +347,9 @@ def fit_picture(
         bars=tuple(bars),
         lower=Length.in_unit(least.value.si, unit),
         upper=Length.in_unit(greatest.value.si, unit),
-        lower_text=f"least {least.value.written}, {least.origin.document}",
-        upper_text=f"greatest {greatest.value.written}, {greatest.origin.document}",
+        # The origin stands in words beside the figure: a drawing's name has no room at a limit.
+        lower_text=f"least {least.value.written}",
+        upper_text=f"greatest {greatest.value.written}",
         unit=unit,
     )
 

@@ -102,7 +102,7 @@ def title(plain: str, right: str = "") -> Flowable:
 
 def head(plain: str, right: str = "") -> Flowable:
     """Set a section's head over a rule, with what it is measured in at the right."""
-    row = _two(Paragraph(escape(plain), _HEAD), Paragraph(escape(right), _NOTE_RIGHT), 0.34)
+    row = _two(Paragraph(escape(plain), _HEAD), Paragraph(escape(right), _NOTE_RIGHT), 0.5)
     row.setStyle(
         TableStyle(
             [
@@ -200,8 +200,10 @@ def table(
             style.append(("SPAN", (start, 0), (end, 0)))
         body.append(row)
         top = 1
-    body.append([_head_cell(one, letters[index]) for index, one in enumerate(header)])
-    style.append(("LINEBELOW", (0, top), (-1, top), 0.25 * mm, PAPER.ink))
+    if header:
+        body.append([_head_cell(one, letters[index]) for index, one in enumerate(header)])
+        style.append(("LINEBELOW", (0, top), (-1, top), 0.25 * mm, PAPER.ink))
+        top += 1
     for cells in rows:
         body.append(
             [
@@ -212,9 +214,9 @@ def table(
     for index in range(len(rows)):
         width = 0.25 if index in rules_after else 0.08
         colour = PAPER.ink2 if index in rules_after else PAPER.hair
-        line = top + 1 + index
+        line = top + index
         style.append(("LINEBELOW", (0, line), (-1, line), width * mm, colour))
-    made = Table(body, colWidths=columns, repeatRows=top + 1, style=TableStyle(style))
+    made = Table(body, colWidths=columns, repeatRows=top, style=TableStyle(style))
     made.hAlign = "LEFT"
     return made
 
@@ -225,7 +227,7 @@ def _head_cell(cell: Cell, letter: str) -> Cell:
     return Paragraph(escape(cell), _NOTE_RIGHT if letter == "r" else _NOTE)
 
 
-def facts(pairs: Sequence[tuple[str, str]], *, share: float = 0.24) -> Table:
+def facts(pairs: Sequence[tuple[str, str]], *, share: float = 0.16) -> Table:
     """Set names and what they are, a line each; the right side is marked words."""
     rows = [[Paragraph(escape(name), _NOTE), Paragraph(value, _CELL)] for name, value in pairs]
     return Table(

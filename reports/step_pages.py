@@ -1,11 +1,13 @@
 """A step's two pages: at the left what was done, at the right what the shaft did."""
 
 from collections.abc import Iterator, Sequence
+from dataclasses import replace
 
+from reportlab.lib.units import mm
 from reportlab.platypus import Flowable, PageBreak, Table, TableStyle
 
 from models.assess import Assessment, Attempt, ItemView, LandFit, StationChange
-from models.job import Handling, Job, Note, Step
+from models.job import Handling, Item, Job, Note, Step
 from models.rules.rule import Finding, Verdict
 from models.units import unit_set
 from reports.draw import SheetFlowable
@@ -46,6 +48,15 @@ from reports.sheet.pictures import Curve, PlaneCurve
 __all__ = ["step_pages"]
 
 _PER_SPREAD = 2
+_DIAL_WIDTH, _DIAL_HEIGHT = 46.0, 42.0
+_LAYOUT = replace(
+    PAPER_LAYOUT,
+    height=76.0,
+    rotor=(0.0, 38.0),
+    names=(39.0, 42.5),
+    planes=(43.5, 72.0),
+    change_top=74.0,
+)
 
 
 def step_pages(view: Assessment, step: Step) -> Iterator[Flowable]:
@@ -80,9 +91,7 @@ def _what_was_done(
         views = [attempt.items[index] for attempt in pair]
         if len(step.items) > 1 or views[0].fits:
             yield from _sizes(job, item.name, pair, views)
-        if any(one.heat is not None for one in views):
-            yield from _heat(job, pair, views)
-        yield from _mounts(job, pair, views)
+        yield from _on_the_shaft(job, item, pair, views)
     yield from _cooling(job, pair)
     yield from _removals(job, pair)
     yield from _corrections(job, pair)
@@ -135,7 +144,7 @@ def _sizes(
         return
     yield head(
         f"Sizes, {name}" + (f", serial {serials}" if serials else ""),
-        f"diameters in {units.unit('diameter')} at 20 °C, mean; fit: least to greatest, "
+        f"mean diameters at 20 °C, {units.unit('diameter')}; fit least to greatest, "
         f"{units.unit('fit')}",
     )
     header = ["land"]
@@ -201,6 +210,9 @@ def _sizes(
     if picture is not None:
         yield gap(1.5)
         yield ranges(picture)
+        limit = views[0].fits[0].land.least_interference
+        yield note(words(f"The limits come from {limit.origin.words}; whisker ± k = 2."))
+        yield gap(1)
     strength = views[-1].strength
     if strength is not None:
         yield text(words(strength.means))
@@ -247,57 +259,81 @@ def _measured_at(job: Job, view: ItemView) -> list[str]:
     ]
 
 
-def _columns(pair: Sequence[Attempt], rows: Sequence[tuple[str, Sequence[Cell]]]) -> Table:
+def _columns(
+    pair: Sequence[Attempt],
+    rows: Sequence[tuple[str, Sequence[Cell]]],
+    *,
+    with_names: bool = True,
+) -> Table:
     """Set names at the left and a column for each attempt."""
-    share = [30.0, *([70.0] * len(pair))]
     return table(
-        ["", *(f"attempt {one.number}" for one in pair)],
+        ["", *(f"attempt {one.number}" for one in pair)] if with_names else [],
         [[words(name), *cells] for name, cells in rows],
-        share,
+        [34.0, *([138.0 / len(pair)] * len(pair))],
     )
 
 
-def _heat(job: Job, pair: Sequence[Attempt], views: Sequence[ItemView]) -> Iterator[Flowable]:
-    units = unit_set(job.plan.rotor.units)
-    yield head("Heat and opening", "what was measured at the part, not the furnace's set point")
+def _on_the_shaft(
+    job: Job, item: Item, pair: Sequence[Attempt], views: Sequence[ItemView]
+) -> Iterator[Flowable]:
+    """Give an item's heat, opening and mount in one table, a column for each attempt."""
+    rows: list[tuple[str, list[Cell]]] = []
+    if any(one.heat is not None for one in views):
+        rows += _heat_rows(job, pair, views)
+    rows += _mount_rows(pair, views)
+    hot = item.kind == "hot"
+    yield head(
+        "Heat, opening and mount" if hot else f"Mount, {item.name}",
+        "what was measured at the part, not the furnace's set point" if hot else "",
+    )
+    yield _columns(pair, rows)
 
-    def temperature(value: float | None) -> str:
-        return "–" if value is None else units.both(value, "temperature")
 
-    rows: list[tuple[str, list[Cell]]] = [
-        ("bore must reach", [temperature(one.heat.target if one.heat else None) for one in views]),
-        (
-            "without the steel's margin",
-            [temperature(one.heat.plain_target if one.heat else None) for one in views],
-        ),
-        ("highest allowed", [temperature(one.heat.highest if one.heat else None) for one in views]),
-        (
-            "coldest place of the bore",
-            [temperature(one.heat.coldest_bore if one.heat else None) for one in views],
-        ),
-        ("hottest place", [temperature(one.heat.hottest if one.heat else None) for one in views]),
+def _heat_rows(
+    job: Job, pair: Sequence[Attempt], views: Sequence[ItemView]
+) -> list[tuple[str, list[Cell]]]:
+    both = list(zip(pair, views, strict=True))
+    return [
+        ("bore must reach", [_target(job, one) for one in views]),
+        ("measured", [_measured(job, one) for one in views]),
         ("heated in", [_method(one) for one in views]),
         ("hot-bore gauge", [_gauge(one) for one in views]),
-        ("drop window", [_window(one) for one in views]),
-        (
-            "opening",
-            [
-                _judged(attempt.of("bore-open", view.item.key))
-                for attempt, view in zip(pair, views, strict=True)
-            ],
-        ),
+        ("opening", [_judged(one.of("bore-open", view.item.key)) for one, view in both]),
         (
             "confirmed",
             [
                 _judged(
-                    attempt.of("confirmed-before-furnace", view.item.key)
-                    + attempt.of("confirmed-before-door", view.item.key)
+                    one.of("confirmed-before-furnace", view.item.key)
+                    + one.of("confirmed-before-door", view.item.key)
                 )
-                for attempt, view in zip(pair, views, strict=True)
+                for one, view in both
             ],
         ),
+        ("drop window", [_window(one) for one in views]),
     ]
-    yield _columns(pair, rows)
+
+
+def _target(job: Job, view: ItemView) -> str:
+    units = unit_set(job.plan.rotor.units)
+    heat = view.heat
+    if heat is None or heat.target is None or heat.plain_target is None:
+        return "–"
+    return (
+        f"{units.both(heat.target, 'temperature')}; "
+        f"{units.show(heat.plain_target, 'temperature')} without the steel's margin"
+    )
+
+
+def _measured(job: Job, view: ItemView) -> str:
+    units = unit_set(job.plan.rotor.units)
+    heat = view.heat
+    if heat is None or heat.coldest_bore is None or heat.hottest is None:
+        return "–"
+    allowed = "" if heat.highest is None else f"; {units.show(heat.highest, 'temperature')} allowed"
+    return (
+        f"bore {units.both(heat.coldest_bore, 'temperature')} at least, hottest place "
+        f"{units.show(heat.hottest, 'temperature')}{allowed}"
+    )
 
 
 def _method(view: ItemView) -> str:
@@ -357,39 +393,29 @@ def _judged(findings: Sequence[Finding]) -> Flowable | str:
     )
 
 
-def _mounts(job: Job, pair: Sequence[Attempt], views: Sequence[ItemView]) -> Iterator[Flowable]:
-    yield head("Mount", views[0].item.name)
+def _mount_rows(pair: Sequence[Attempt], views: Sequence[ItemView]) -> list[tuple[str, list[Cell]]]:
+    both = list(zip(pair, views, strict=True))
     rows: list[tuple[str, list[Cell]]] = [
         ("seated", [_seated(one) for one in views]),
-        (
-            "shoulder",
-            [
-                _judged(attempt.of("part-seated", view.item.key))
-                for attempt, view in zip(pair, views, strict=True)
-            ],
-        ),
+        ("shoulder", [_judged(one.of("part-seated", view.item.key)) for one, view in both]),
     ]
-    if any(view.axial for view in views):
+    if any(view.item.axial for view in views):
         rows.append(
             (
                 "axial position",
-                [
-                    _judged(attempt.of("axial-position-right", view.item.key))
-                    for attempt, view in zip(pair, views, strict=True)
-                ],
+                [_judged(one.of("axial-position-right", view.item.key)) for one, view in both],
             )
         )
-    del job
-    yield _columns(pair, rows)
+    return rows
 
 
 def _seated(view: ItemView) -> str:
     mount = view.mount
     if mount is None:
         return "not yet"
-    opened = f"door opened {mount.door_opened_at[11:19]}, " if mount.door_opened_at else ""
+    opened = f", door opened {mount.door_opened_at[11:19]}" if mount.door_opened_at else ""
     seated = mount.seated_at or mount.done_at
-    return words(f"{mount.outcome}, {opened}{shown_time(seated)}")
+    return words(f"{mount.outcome} {shown_time(seated)}{opened}")
 
 
 def _cooling(job: Job, pair: Sequence[Attempt]) -> Iterator[Flowable]:
@@ -410,6 +436,7 @@ def _cooling(job: Job, pair: Sequence[Attempt]) -> Iterator[Flowable]:
                 ],
             ),
         ],
+        with_names=False,
     )
 
 
@@ -544,13 +571,7 @@ def _what_the_shaft_did(
         )
     )
     yield from _station_table(view, step, judged)
-    yield from _dials(view, judged)
-    for attempt in judged:
-        sentences = attempt.bend.sentences
-        if sentences:
-            yield head(f"Where the bend sat, attempt {attempt.number}", "fit of the centreline")
-            for sentence in sentences:
-                yield text(words(sentence))
+    yield from _bends(view, judged)
 
 
 def _along(view: Assessment, step: Step, judged: Sequence[Attempt]) -> Flowable:
@@ -565,7 +586,7 @@ def _along(view: Assessment, step: Step, judged: Sequence[Attempt]) -> Flowable:
     del job
     return SheetFlowable(
         along_the_rotor(
-            picture=picture, curves=curves, changes=rows, captions=captions, layout=PAPER_LAYOUT
+            picture=picture, curves=curves, changes=rows, captions=captions, layout=_LAYOUT
         )
     )
 
@@ -587,7 +608,7 @@ def _station_table(view: Assessment, step: Step, judged: Sequence[Attempt]) -> I
     job = view.job
     units = unit_set(job.plan.rotor.units)
     unit = units.unit("runout")
-    yield head("Runout", f"TIR in {unit} at its clock angle, in the journals' own axis")
+    yield head("Runout", f"TIR ({unit}) at its clock angle, in the journals' own axis")
     header = ["station", f"at, {units.unit('position')}", "before", ""]
     groups = [(2, 3, "before")]
     for index, attempt in enumerate(judged):
@@ -643,56 +664,67 @@ def _change_cells(attempt: Attempt, key: str, *, journal: bool, units_name: str)
     ]
 
 
-def _dials(view: Assessment, judged: Sequence[Attempt]) -> Iterator[Flowable]:
-    cells = []
+def _bends(view: Assessment, judged: Sequence[Attempt]) -> Iterator[Flowable]:
+    """Set the dial of each attempt's worst station, and beside it where the bend sat."""
+    cells: list[Cell] = []
+    widths: list[float] = []
+    alone = len(judged) == 1
     for attempt in judged:
-        changes = [one for one in attempt.changes if one.tir is not None and not one.is_journal]
-        if not changes or attempt.judged is None:
-            continue
-        worst = max(changes, key=lambda one: one.tir or 0.0)
-        station = attempt.judged.station(worst.key)
-        if station is None:
-            continue
-        picture = dial_picture(
-            view.job,
-            station,
-            before=worst.before,
-            after_datum=worst.after,
-            limit=attempt.step.change_limit.value.si if attempt.step.change_limit else None,
-            verdict=attempt.verdict_of("runout-changed"),
-            caption=(f"{worst.key}, attempt {attempt.number}, from the "
-                     f"{view.job.plan.rotor.seen_from}",),
-        )  # fmt: skip
-        rotor = rotor_picture(view, step=attempt.step.key)
-        axis = axis_for(picture=rotor, layout=PAPER_LAYOUT)
-        limit = attempt.step.change_limit
-        magnification = magnification_along(
-            picture=rotor,
-            curves=_curves(view, judged),
-            limit_tir=limit.value.si if limit else 0.0,
-            layout=PAPER_LAYOUT,
+        cells.append(_dial(view, attempt, judged) or "")
+        name = bold(f"Attempt {attempt.number}: where the bend sat")
+        setter = text if alone else note
+        cells.append([setter(name), *(setter(words(one)) for one in attempt.bend.sentences)])
+        widths += [_DIAL_WIDTH * mm, (CONTENT_WIDTH / len(judged)) - _DIAL_WIDTH * mm]
+    yield gap(1.5)
+    made = Table([cells], colWidths=widths)
+    made.setStyle(
+        TableStyle(
+            [
+                ("LEFTPADDING", (0, 0), (-1, -1), 0),
+                ("RIGHTPADDING", (0, 0), (-1, -1), 1.5 * mm),
+                ("VALIGN", (0, 0), (-1, -1), "TOP"),
+            ]
         )
-        box = Box(0.0, 0.0, 50.0, 46.0)
-        layer = dial(
-            picture=picture,
-            place=box,
+    )
+    yield made
+
+
+def _dial(view: Assessment, attempt: Attempt, judged: Sequence[Attempt]) -> Flowable | None:
+    changes = [one for one in attempt.changes if one.tir is not None and not one.is_journal]
+    worst = max(changes, key=lambda one: one.tir or 0.0, default=None)
+    station = attempt.judged.station(worst.key) if attempt.judged and worst else None
+    if worst is None or station is None:
+        return None
+    limit = attempt.step.change_limit
+    picture = dial_picture(
+        view.job,
+        station,
+        before=worst.before,
+        after_datum=worst.after,
+        limit=limit.value.si if limit else None,
+        verdict=attempt.verdict_of("runout-changed"),
+        caption=(f"{worst.key}, attempt {attempt.number}",),
+    )
+    rotor = rotor_picture(view, step=attempt.step.key)
+    magnification = magnification_along(
+        picture=rotor,
+        curves=_curves(view, judged),
+        limit_tir=limit.value.si if limit else 0.0,
+        layout=_LAYOUT,
+    )
+    layer = dial(
+        picture=picture,
+        place=Box(0.0, 0.0, _DIAL_WIDTH - 2.0, _DIAL_HEIGHT),
+        medium=PAPER_MEDIUM,
+        scale=axis_for(picture=rotor, layout=_LAYOUT).scale,
+        magnification=magnification,
+    )
+    return SheetFlowable(
+        sheet_of(
+            width=_DIAL_WIDTH - 2.0,
+            height=_DIAL_HEIGHT,
             medium=PAPER_MEDIUM,
-            scale=axis.scale,
-            magnification=magnification,
+            layers=[layer],
+            title=f"dial {worst.key}",
         )
-        cells.append(
-            SheetFlowable(
-                sheet_of(
-                    width=50.0,
-                    height=46.0,
-                    medium=PAPER_MEDIUM,
-                    layers=[layer],
-                    title=f"dial {worst.key}",
-                )
-            )
-        )
-    if cells:
-        yield gap(2)
-        made = Table([cells], colWidths=[CONTENT_WIDTH / max(len(cells), 2)] * len(cells))
-        made.hAlign = "LEFT"
-        yield made
+    )

@@ -245,14 +245,14 @@ def _progress(
     )
     return BuildProgress(
         steps=tuple((step.key, step.title) for step in job.plan.steps),
-        attempts=tuple(_attempt_progress(one) for one in attempts),
+        attempts=tuple(_attempt_progress(job, one) for one in attempts),
         bare_shaft_surveyed=bare_shaft is not None,
         bare_shaft_survey_open=open_bare[-1] if open_bare else None,
         engineer_decided=decided,
     )
 
 
-def _attempt_progress(attempt: Attempt) -> AttemptProgress:
+def _attempt_progress(job: Job, attempt: Attempt) -> AttemptProgress:
     open_surveys = [one.entry for one in attempt.surveys if not one.entry.is_closed]
     verdict: Verdict | None = None
     if not attempt.step.survey_due:
@@ -271,6 +271,7 @@ def _attempt_progress(attempt: Attempt) -> AttemptProgress:
     return AttemptProgress(
         step=attempt.step.key,
         number=attempt.number,
+        name=f"step {job.plan.step_number(attempt.step.key)}, {attempt.step.title}",
         items=tuple(_item_progress(attempt, index) for index in range(len(attempt.items))),
         survey_due=attempt.step.survey_due,
         cooling=_cooling_now(attempt) if hot and attempt.step.survey_due else None,

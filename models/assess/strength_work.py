@@ -256,7 +256,7 @@ def _smoothing_source(plan: Plan, item: Item) -> str:
     if item.roughness is None or plan.shaft.roughness is None or plan.smoothing_factor is None:
         return "smoothing not counted"
     edition = plan.smoothing_edition or "edition not named in the plan"
-    return f"smoothing {plan.smoothing_factor:g} of both roughnesses, {edition}"
+    return f"smoothing {plan.smoothing_factor:g} of both roughnesses, taken as Rz, {edition}"
 
 
 def _friction_source(item: Item) -> str:

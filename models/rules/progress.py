@@ -95,6 +95,12 @@ class AttemptProgress:
     outcome: str | None = None
     performed: bool = False
     points_open: tuple[str, ...] = ()
+    name: str = ""
+
+    @property
+    def where(self) -> str:
+        """The attempt in words."""
+        return f"{self.name or f'step {self.step}'}, attempt {self.number}"
 
     @property
     def is_settled(self) -> bool:
@@ -128,6 +134,11 @@ class BuildProgress:
         """Find the latest attempt at a step."""
         mine = [one for one in self.attempts if one.step == step]
         return mine[-1] if mine else None
+
+    def named(self, step: str) -> str:
+        """Name a step as people do: its number and title."""
+        number = next(n for n, (key, _) in enumerate(self.steps, start=1) if key == step)
+        return f"step {number}, {dict(self.steps)[step]}"
 
     def step_before(self, step: str) -> str | None:
         """Name the step before a step."""
@@ -196,12 +207,12 @@ def may(build: BuildProgress, act: Act, *, step: str, item: str | None = None) -
         return _may_open(build, step)
     attempt = build.latest(step)
     if attempt is None or (attempt.outcome is not None and act is not Act.SIGN):
-        return _no("no-attempt-open", f"No attempt at step {step} is open.")
+        return _no("no-attempt-open", f"No attempt at {build.named(step)} is open.")
     if act in (Act.SURVEY, Act.SURVEY_SEAT, Act.SETTLE, Act.COOL, Act.SIGN):
         return _may_on_attempt(attempt, act)
     one = next((one for one in attempt.items if one.key == item), None)
     if one is None:
-        return _no("no-such-item", f"Step {step} has no item {item}.")
+        return _no("no-such-item", f"S{build.named(step)[1:]} has no item {item}.")
     return _may_on_item(one, act)
 
 
@@ -212,23 +223,28 @@ def _may_open(build: BuildProgress, step: str) -> Permission:
     if before is not None:
         last = build.latest(before)
         if last is None or not last.is_settled:
-            return _no("step-before-not-settled", f"Step {before} is not settled.")
+            return _no("step-before-not-settled", f"S{build.named(before)[1:]} is not settled.")
         if not last.performed:
-            return _no("step-before-not-signed", f"Step {before} is not signed by who did it.")
+            return _no(
+                "step-before-not-signed", f"S{build.named(before)[1:]} is not signed by who did it."
+            )
         if last.points_open:
-            return _no("point-open", f"Step {before} waits for {'; '.join(last.points_open)}.")
+            return _no(
+                "point-open", f"S{build.named(before)[1:]} waits for {'; '.join(last.points_open)}."
+            )
     mine = build.latest(step)
     if mine is None:
         return _YES
     if mine.outcome is None:
-        return _no("attempt-open", f"Attempt {mine.number} at step {step} is still open.")
+        return _no("attempt-open", f"Attempt {mine.number} at {build.named(step)} is still open.")
     if mine.is_settled:
-        return _no("step-settled", f"Step {step} is settled.")
+        return _no("step-settled", f"S{build.named(step)[1:]} is settled.")
     failed = sum(1 for one in build.attempts if one.step == step and one.outcome == "removed")
     if failed >= _ATTEMPTS_BEFORE_ENGINEER and (step, failed) not in build.engineer_decided:
         return _no(
             "engineer-decides",
-            f"{failed} attempts at step {step} came off; the rotor engineer decides how to go on.",
+            f"{failed} attempts at {build.named(step)} came off; the rotor engineer decides how to "
+            "go on.",
         )
     return _YES
 
@@ -269,7 +285,7 @@ def _may_on_item(item: ItemProgress, act: Act) -> Permission:
 
 
 def _may_on_attempt(attempt: AttemptProgress, act: Act) -> Permission:
-    where = f"step {attempt.step}, attempt {attempt.number}"
+    where = attempt.where
     if act is Act.SIGN:
         if attempt.outcome is None:
             return _no("not-settled", f"There is nothing settled to sign yet at {where}.")
@@ -286,7 +302,7 @@ def _may_on_attempt(attempt: AttemptProgress, act: Act) -> Permission:
                 else _no("seat-not-surveyed", f"The bare seat of {where} has not been surveyed.")
             )
         if attempt.verdict is Verdict.OUTSIDE or attempt.removal_due:
-            return _no("remount-required", f"{where.capitalize()} is outside its limits.")
+            return _no("remount-required", f"S{where[1:]} is outside its limits.")
         if attempt.verdict is not Verdict.WITHIN:
             return _no("not-judged-within", f"Nothing says that {where} is within its limits.")
         return _YES
@@ -321,7 +337,7 @@ def next_act(build: BuildProgress) -> NextAct:
             act=Act.OPEN_ATTEMPT if allowed.allowed else Act.NOTHING,
             step=step,
             attempt=number,
-            words=allowed.words or f"Begin attempt {number} at step {step}.",
+            words=allowed.words or f"Begin attempt {number} at {build.named(step)}.",
         )
     if attempt.outcome is not None:
         who = "who did the step" if not attempt.performed else "; ".join(attempt.points_open)
@@ -330,7 +346,7 @@ def next_act(build: BuildProgress) -> NextAct:
             act=Act.SIGN,
             step=step,
             attempt=attempt.number,
-            words=f"Step {step} is settled and waits for {who}.",
+            words=f"S{build.named(step)[1:]} is settled and waits for {who}.",
         )
     return _next_in(attempt)
 
