@@ -108,7 +108,7 @@ def head(plain: str, right: str = "") -> Flowable:
             [
                 ("LINEBELOW", (0, 0), (-1, -1), 0.35 * mm, PAPER.ink),
                 ("BOTTOMPADDING", (0, 0), (-1, -1), 1.2),
-                ("TOPPADDING", (0, 0), (-1, -1), 3.4 * mm),
+                ("TOPPADDING", (0, 0), (-1, -1), 2.6 * mm),
             ]
         )
     )
@@ -279,7 +279,7 @@ def signatures(boxes: Sequence[Signed]) -> Flowable:
         cells.append(
             [
                 Paragraph(escape(box.meaning), _NOTE),
-                Spacer(1, 6.5 * mm),
+                Spacer(1, 4.5 * mm),
                 Paragraph(bold(box.name) if box.name else "&nbsp;", _CELL),
                 Paragraph(escape(", ".join(one for one in (box.more, box.at) if one)) or
                           "name, date and time", _NOTE),

@@ -362,15 +362,15 @@ def _window(view: ItemView) -> str:
     if window is None:
         return "–"
     return (
-        f"in air at least {_minutes(window.in_air_least)}, over the seat at least "
-        f"{_minutes(window.over_seat_least)}"
+        f"at least {_minutes(window.in_air_least)} in air, {_minutes(window.over_seat_least)} over "
+        "the seat"
     )
 
 
 def _minutes(seconds: float) -> str:
     if seconds >= 3600.0:
         return "an hour"
-    return f"{int(seconds // 60)}:{int(seconds % 60):02d} min"
+    return f"{int(seconds // 60)}:{int(seconds % 60):02d}"
 
 
 def _judged(findings: Sequence[Finding]) -> Flowable | str:
@@ -413,7 +413,7 @@ def _seated(view: ItemView) -> str:
     mount = view.mount
     if mount is None:
         return "not yet"
-    opened = f", door opened {mount.door_opened_at[11:19]}" if mount.door_opened_at else ""
+    opened = f", door {mount.door_opened_at[11:16]}" if mount.door_opened_at else ""
     seated = mount.seated_at or mount.done_at
     return words(f"{mount.outcome} {shown_time(seated)}{opened}")
 

@@ -88,9 +88,10 @@ def runout_is_unchanged(
     changed = f"{station} changed {units.both(change_tir, 'runout')} TIR{where}, limit {allowed}"
     hidden = ""
     if plain_change is not None and verdict is not Verdict.WITHIN:
-        hidden = f" Its plain total changed by {units.show(abs(plain_change), 'runout')} only."
-        if abs(plain_change) > 0.5 * change_tir:
-            hidden = ""
+        if abs(plain_change) < 0.1 * change_tir:
+            hidden = " Its plain total shows nothing of it."
+        elif abs(plain_change) < 0.5 * change_tir:
+            hidden = f" Its plain total changed by {units.show(abs(plain_change), 'runout')} only."
     computed = {"room": limit - change_tir}
     if verdict is Verdict.WITHIN:
         return Judgement(verdict, changed + ".", computed)

@@ -1,0 +1,153 @@
+"""The command line: what it prints, how it ends, and that trouble is a sentence."""
+
+import json
+from pathlib import Path
+from typing import Any
+
+import pytest
+
+from app.commands import main
+from models import jobfile
+from models.job import Job
+from sample_data.load import compressor, pump
+
+
+def written(job: Job, folder: Path) -> str:
+    path = folder / "a job.json"
+    jobfile.write(job, path)
+    return str(path)
+
+
+def test_a_clean_finished_job_ends_with_nothing_to_say(
+    tmp_path: Path, capsys: pytest.CaptureFixture[str]
+) -> None:
+    status = main(["check", written(pump(), tmp_path)])
+
+    said = capsys.readouterr().out
+    assert status == 0
+    assert "within limits" in said.splitlines()[0]
+    assert "EG-318 (invented)" in said
+
+
+def test_an_unfinished_job_is_not_within_limits_and_says_what_is_next(
+    tmp_path: Path, capsys: pytest.CaptureFixture[str]
+) -> None:
+    status = main(["check", written(compressor(), tmp_path)])
+
+    said = capsys.readouterr().out
+    assert status == 1
+    assert "Remount required [runout-changed] E1" in said
+    assert "came off" in said
+    assert said.rstrip().splitlines()[-1].startswith("Next: Begin attempt 1")
+
+
+def test_every_finding_is_given_with_its_values_in_si(
+    tmp_path: Path, capsys: pytest.CaptureFixture[str]
+) -> None:
+    main(["check", written(compressor(), tmp_path), "--json"])
+
+    told: dict[str, Any] = json.loads(capsys.readouterr().out)
+    assert told["rotor"] == "HR-4471"
+    changed = [one for one in told["findings"] if one["rule"] == "runout-changed"]
+    assert {"rule", "step", "attempt", "station", "verdict", "message", "inputs"} <= set(changed[0])
+    worst = max(changed, key=lambda one: one["inputs"]["change_tir"])
+    # The limit of this invented plan: 0.0010 in.
+    assert worst["inputs"]["limit"] == pytest.approx(25.4e-6)
+    assert worst["verdict"] == "outside"
+    assert 25.4e-6 < worst["inputs"]["change_tir"] < 100e-6
+
+
+@pytest.mark.parametrize(
+    ("content", "expected"),
+    [
+        (b"", "a.json"),
+        (b"not a job", "JSON"),
+        (b'{"form": "something else"}', "form"),
+        (b"\x00\xff\xfe", "a.json"),
+        (b"[1, 2", "JSON"),
+    ],
+)
+def test_a_file_that_is_no_job_ends_with_two_and_one_sentence(
+    tmp_path: Path, capsys: pytest.CaptureFixture[str], content: bytes, expected: str
+) -> None:
+    path = tmp_path / "a.json"
+    path.write_bytes(content)
+
+    for command in (["check", str(path)], ["traveler", str(path), "-o", str(tmp_path / "x.pdf")]):
+        assert main(command) == 2
+        said = capsys.readouterr()
+        assert said.out == ""
+        assert expected in said.err
+        assert len(said.err.strip().splitlines()) == 1
+        assert "Traceback" not in said.err
+    assert not (tmp_path / "x.pdf").exists()
+
+
+def test_a_torn_file_is_refused_whole(tmp_path: Path, capsys: pytest.CaptureFixture[str]) -> None:
+    path = tmp_path / "torn.json"
+    path.write_bytes(jobfile.dumps(pump())[:5000])
+
+    assert main(["check", str(path)]) == 2
+    assert "torn.json" in capsys.readouterr().err
+
+
+def test_a_newer_file_names_both_numbers(
+    tmp_path: Path, capsys: pytest.CaptureFixture[str]
+) -> None:
+    path = tmp_path / "newer.json"
+    path.write_bytes(jobfile.dumps(pump()).replace(b'"edition": 1', b'"edition": 7', 1))
+
+    assert main(["check", str(path)]) == 2
+    said = capsys.readouterr().err
+    assert "7" in said
+    assert "1" in said
+
+
+def test_a_missing_file_is_a_sentence_with_the_path(capsys: pytest.CaptureFixture[str]) -> None:
+    assert main(["check", "nowhere/at all.json"]) == 2
+    assert "nowhere/at all.json" in capsys.readouterr().err
+
+
+def test_a_reading_in_the_wrong_unit_is_questioned_and_not_within(
+    tmp_path: Path, capsys: pytest.CaptureFixture[str]
+) -> None:
+    document = json.loads(jobfile.dumps(compressor()))
+    survey = [one for one in document["entries"] if one["entry"] == "runout"][-1]
+    survey["stations"][3]["typed"][2] = "0.0254"
+    path = tmp_path / "slip.json"
+    path.write_text(json.dumps(document), encoding="utf-8")
+
+    assert main(["check", str(path)]) == 1
+    said = capsys.readouterr().out
+    assert "questioned" in said
+
+
+def test_without_a_screen_the_window_says_so(
+    capsys: pytest.CaptureFixture[str], monkeypatch: pytest.MonkeyPatch
+) -> None:
+    monkeypatch.delenv("DISPLAY", raising=False)
+    monkeypatch.delenv("WAYLAND_DISPLAY", raising=False)
+
+    assert main([]) == 2
+    assert "no screen" in capsys.readouterr().err
+
+
+def test_help_shows_every_command_and_an_example(capsys: pytest.CaptureFixture[str]) -> None:
+    with pytest.raises(SystemExit) as ended:
+        main(["--help"])
+
+    said = capsys.readouterr().out
+    assert ended.value.code == 0
+    for word in ("demo", "check", "traveler", "--shop", "examples:", "exit status"):
+        assert word in said
+
+
+@pytest.mark.parametrize("arguments", [["weld"], ["check"], ["traveler", "x.json"], ["--shop"]])
+def test_a_command_that_is_not_there_is_refused_with_the_usage(
+    arguments: list[str], capsys: pytest.CaptureFixture[str]
+) -> None:
+    with pytest.raises(SystemExit) as ended:
+        main(arguments)
+
+    assert ended.value.code == 2
+    assert "usage: thirdjournal" in capsys.readouterr().err
