@@ -629,10 +629,10 @@ def _station_table(view: Assessment, step: Step, judged: Sequence[Attempt]) -> I
         for attempt in judged:
             row += _change_cells(attempt, station.key, journal=journal, units_name=units.name)
         rows.append(row)
-    wide = [17, 17, 15, 10] + [15, 10, 16, 13, 15, 6] * len(judged)
+    wide: list[float] = [13, 15, 14.5, 9.5] + [14.5, 9.5, 14.5, 14.5, 14.5, 5] * len(judged)
     align = "lrrr" + "rrrrrc" * len(judged)
     if len(judged) == 1:
-        wide.append(40)
+        wide.append(47)
         header.append("")
         align += "l"
         rows = [[*row, ""] for row in rows]
