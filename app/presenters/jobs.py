@@ -12,7 +12,7 @@ from app.presenters.shop import Said, ShopPresenter
 from app.presenters.wording import waits_for
 from models import jobfile
 from models.acts import new_id
-from models.assess import Assessment
+from models.assess import Assessment, assess
 from models.job import Job, Person
 from models.record.queries import JobRow
 from reports import job_pictures
@@ -271,7 +271,6 @@ class JobsPresenter(QObject):
         """
 
         def work() -> None:
-            from models.assess import assess
             from reports import traveler
 
             traveler.write(assess(self._shop.acts.read(number)), path)

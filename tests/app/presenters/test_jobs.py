@@ -193,3 +193,22 @@ def test_a_folder_that_is_not_there_is_said(jobs, shop, tmp_path):
     shop.settle()
 
     assert shop.said[-1].what == f"Stopped while writing the job file of {PUMP}."
+
+
+def test_a_traveler_is_written_beside_the_window_and_said(jobs, shop, tmp_path):
+    worked_on = []
+    shop.background.working.connect(worked_on.append)
+    path = tmp_path / "traveler.pdf"
+    jobs.write_traveler(PUMP, path)
+    shop.settle()
+
+    assert worked_on == [f"writing the traveler of {PUMP}", ""]
+    assert path.read_bytes().startswith(b"%PDF-")
+    assert shop.said[-1].what == f"The traveler of {PUMP} is written to {path}."
+
+
+def test_a_traveler_that_cannot_be_written_is_said(jobs, shop, tmp_path):
+    jobs.write_traveler(PUMP, tmp_path / "nowhere" / "traveler.pdf")
+    shop.settle()
+
+    assert shop.said[-1].what == f"Stopped while writing the traveler of {PUMP}."
