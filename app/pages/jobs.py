@@ -152,6 +152,9 @@ class JobsPage(DeskPage):
         rows = self._presenter.rows
         self.shelf.set_rows(rows)
         self._middle.setCurrentIndex(0 if rows else 1)
+        # Asked of the window, which need not be the active one while its shelf is being read.
+        if self.window().focusWidget() is self:
+            self.entrance().setFocus()
         self._empty.say(self._presenter.empty_words)
         for word, key in self._filters.items():
             key.setChecked(word == self._presenter.filter)
@@ -160,8 +163,10 @@ class JobsPage(DeskPage):
         self._count.say("1 job shown" if len(rows) == 1 else f"{len(rows)} jobs shown")
 
     def entrance(self) -> QWidget:
-        """Give the shelf, or the key that brings a first job."""
-        return self.shelf if self.shelf.model_of_rows.rows else self._bring
+        """Give the shelf, or the key that brings a first job once the shelf is known empty."""
+        if self.shelf.model_of_rows.rows:
+            return self.shelf
+        return self._bring if self._presenter.is_read else self
 
     def _open_present(self) -> None:
         row = self.shelf.present_row

@@ -116,6 +116,11 @@ class JobsPresenter(QObject):
         return tuple(sorted(shown, key=lambda row: not row.is_open))
 
     @property
+    def is_read(self) -> bool:
+        """Whether the shelf is known."""
+        return self._shop.is_read
+
+    @property
     def empty_words(self) -> str:
         """What to say where no row is shown."""
         if not self._shop.is_read:

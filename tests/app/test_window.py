@@ -342,3 +342,23 @@ def test_tab_alone_reaches_what_can_be_done_at_a_desk(
 
     assert reached <= found
     assert "Signed in: Brona Quillfeather, inspector" in found
+
+
+def test_the_keyboard_is_on_the_shelf_once_it_has_been_read(shop_folder, open_window, qtbot):
+    opened = open_window(shop_folder, sign_in="AT", job=COMPRESSOR)
+    with qtbot.waitActive(opened.window):
+        opened.window.activateWindow()
+    assert opened.window.focusWidget().accessibleName() == "Jobs"
+
+    qtbot.keyClick(opened.window.focusWidget(), Qt.Key.Key_Return)
+    opened.settle()
+    assert opened.window.present_desk == "Bench"
+
+
+def test_the_keyboard_is_on_the_key_that_brings_a_first_job(tmp_path, open_window, qtbot):
+    (tmp_path / "new shop").mkdir()
+    opened = open_window(tmp_path / "new shop")
+    with qtbot.waitActive(opened.window):
+        opened.window.activateWindow()
+
+    assert opened.window.focusWidget().accessibleName() == "Bring in a job file …"
