@@ -110,10 +110,10 @@ class StoryPage(DeskPage):
         self._stack.setCurrentIndex(1 if chapters else 0)
         self._heading.say(presenter.heading)
         self._summary.say(presenter.summary)
-        before = self.chapters.currentIndex().row()
+        is_new = self.chapters.present_row is None
         self.chapters.set_rows(chapters)
-        if chapters and self.chapters.present_row is None:
-            self.chapters.selectRow(before if 0 <= before < len(chapters) else len(chapters) - 1)
+        if chapters and is_new:
+            self.chapters.selectRow(len(chapters) - 1)
         self._show_chapter(self.chapters.present_row)
 
     def entrance(self) -> QWidget:

@@ -250,10 +250,13 @@ class DeskTable(QTableView):
         rows : sequence
             From top to bottom.
         """
+        before = self.currentIndex().row()
         self.model_of_rows.set_rows(rows)
         self._measure()
         self._fit()
-        if self.hasFocus():
+        if before >= 0 and rows:
+            self.selectRow(min(before, len(rows) - 1))
+        elif self.hasFocus():
             self._enter()
 
     @property

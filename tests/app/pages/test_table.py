@@ -67,3 +67,17 @@ def test_larger_type_gets_higher_rows(table):
     table.dress(desk_look(Look(text_scale=2.0)))
 
     assert table.rowHeight(0) > before
+
+
+def test_the_present_row_keeps_its_place_when_rows_are_read_again(table):
+    table.selectRow(1)
+    table.set_rows((*ROWS, ("J2", "Journal")))
+
+    assert table.present_row == ROWS[1]
+
+
+def test_fewer_rows_leave_the_last_one_present(table):
+    table.selectRow(2)
+    table.set_rows(ROWS[:1])
+
+    assert table.present_row == ROWS[0]
