@@ -63,6 +63,7 @@ __all__ = [
     "assess_attempt",
     "closure_allowed",
     "finding_key",
+    "fit_facts",
     "station_facts",
 ]
 
@@ -301,12 +302,13 @@ def _size_findings(job: Job, attempt: Attempt, view: ItemView) -> Iterable[Findi
             yield rule("sizes-plausible").apply(facts, about)
             yield rule("part-temperature-known").apply(facts, about)
             yield _instrument_finding(job, entry.instrument, entry.done_at, about)
-        fit_facts = _fit_facts(job, fit)
-        yield rule("seat-larger-than-bore").apply(fit_facts, subject)
-        yield rule("interference-within").apply(fit_facts, subject)
+        facts_of_fit = fit_facts(job, fit)
+        yield rule("seat-larger-than-bore").apply(facts_of_fit, subject)
+        yield rule("interference-within").apply(facts_of_fit, subject)
 
 
-def _fit_facts(job: Job, fit: LandFit) -> FitFacts:
+def fit_facts(job: Job, fit: LandFit) -> FitFacts:
+    """State how bore and seat of a land fit, for the rules."""
     proved = job.plan.decision_rule == "proved"
     found = fit.interference
     return FitFacts(

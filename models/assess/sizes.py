@@ -68,14 +68,13 @@ def expansion_of(material: str | None) -> MeanExpansion | None:
 
 
 def read_sizes(survey: SizeSurvey) -> npt.NDArray[np.float64]:
-    """Turn typed diameters into an array, positions × angles, NaN where nothing is typed."""
-    return np.array(
-        [
-            [math.nan if typed is None else Length.read(typed, survey.unit).si for typed in row]
-            for row in survey.typed
-        ],
-        dtype=np.float64,
-    )
+    """Turn typed diameters into an array, positions × angles, NaN where nothing is typed yet."""
+    values = np.full((len(survey.positions), len(survey.angles)), math.nan)
+    for row, typed_row in enumerate(survey.typed):
+        for column, typed in enumerate(typed_row):
+            if typed is not None:
+                values[row, column] = Length.read(typed, survey.unit).si
+    return values
 
 
 def land_fit(

@@ -20,7 +20,12 @@ from app.presenters.bench.state import (
     Title,
     WaitTask,
 )
-from app.presenters.bench.verdicts import final_verdict, verdict_at, verdict_so_far
+from app.presenters.bench.verdicts import (
+    final_verdict,
+    verdict_at,
+    verdict_of_sizes,
+    verdict_so_far,
+)
 from app.presenters.bench.walk import Spot
 from app.presenters.writing import Writer
 from models.acts import Acts, NotAllowedError, Recorded, new_id
@@ -241,6 +246,10 @@ class BenchPresenter(QObject):
         units = unit_set(view.job.plan.rotor.units)
         if self._reading is not None and isinstance(self._reading.survey, RunoutSurvey):
             return verdict_so_far(so_far, len(self._reading.survey.stations), units)
+        fit = self._reading.fit_so_far() if self._reading is not None else None
+        if self._reading is not None and fit is not None:
+            feature = getattr(self._reading.survey, "feature", "bore")
+            return verdict_of_sizes(view.job, fit, feature)
         judged = attempt is not None and (attempt.judged is not None or not attempt.step.survey_due)
         ends = act.act in (Act.SETTLE, Act.REMOVE) and not self._removing and not self._noting
         if attempt is not None and ends and (judged or act.act is Act.REMOVE):

@@ -180,7 +180,7 @@ def _sizes_form(bench: Bench, act: NextAct, view: ItemView) -> Form:
         heading=f"Measure the {feature}",
         lines=(
             f"{view.item.name}, land {land.key}, nominal {land.nominal_diameter.written}",
-            f"Let {words} and part lie side by side until both have the same temperature.",
+            f"Let {part} and {words} lie side by side until both are equally warm.",
         ),
         fields=(
             _choice("instrument", "Instrument", offered, offered[0][0] if offered else ""),

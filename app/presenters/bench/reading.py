@@ -15,7 +15,7 @@ from app.presenters.bench.walk import (
     typed_at,
     with_reading,
 )
-from models.assess import Attempt, StationChange, SurveyRunout
+from models.assess import Attempt, LandFit, StationChange, SurveyRunout
 from models.assess.attempts import station_facts
 from models.assess.questions import (
     Asked,
@@ -25,6 +25,7 @@ from models.assess.questions import (
     unanswered,
 )
 from models.assess.runout import compare_surveys, read_survey
+from models.assess.sizes import land_fit
 from models.job import Job, Question, RunoutSurvey, SizeSurvey
 from models.rules import rule
 from models.rules.rule import Finding, Subject
@@ -210,6 +211,22 @@ class Reading:
             return self._size_task(self.survey, spot, reasons)
         return self._runout_task(self.survey, spot, so_far, reasons)
 
+    def fit_so_far(self) -> LandFit | None:
+        """Work out the fit of the land in hand, with what is being typed; sizes only."""
+        live = self.survey_with_live()
+        if not isinstance(live, SizeSurvey) or self.attempt is None:
+            return None
+        item = next(one.item for one in self.attempt.items if one.item.key == live.item)
+        land = next(one for one in item.lands if one.key == live.land)
+        others = [
+            sizes.entry
+            for view in self.attempt.items
+            for fit in view.fits
+            for sizes in (fit.seat, fit.bore)
+            if sizes is not None and sizes.entry.id != live.id
+        ]
+        return land_fit(self.job, item, land, [*others, live])
+
     def _question(self) -> QuestionShown | None:
         asked = self.questions
         return QuestionShown(asked[0].sentence, asked[0].proposed) if asked else None
@@ -270,7 +287,7 @@ class Reading:
                 )
                 for one in self.rung_spots()
             ),
-            caption=f"readings in {survey.unit}, indicator {instrument}, + towards the indicator",
+            caption=f"in {_unit_words(survey.unit)}, {instrument}, + towards the indicator",
             dial=self._dial(spot, so_far),
             correcting=self._old_value(),
             reasons=reasons if self._reason_needed() else (),
@@ -332,12 +349,16 @@ class Reading:
                 self._rung(one, f"{survey.angles[int(one.mark)].typed}°")
                 for one in self.rung_spots()
             ),
-            caption=f"diameters in {survey.unit}, {survey.instrument}",
+            caption=f"diameters in {_unit_words(survey.unit)}, {survey.instrument}",
             correcting=self._old_value(),
             reasons=reasons if self._reason_needed() else (),
             question=self._question(),
             kind="sizes",
         )
+
+
+def _unit_words(unit: str) -> str:
+    return {"in": "inches", "mil": "thousandths of an inch"}.get(unit, unit)
 
 
 def _place_name(index: int, places: int) -> str:

@@ -4,12 +4,15 @@ from collections.abc import Mapping, Sequence
 
 from app.presenters.bench.reading import SoFar
 from app.presenters.bench.state import BenchVerdict
-from models.assess import Attempt
+from models.assess import Attempt, LandFit
+from models.assess.attempts import fit_facts
+from models.job import Job
+from models.rules import rule
 from models.rules.progress import Act, NextAct
-from models.rules.rule import Finding, Verdict, words_for
-from models.units import UnitSet
+from models.rules.rule import Finding, Subject, Verdict, words_for
+from models.units import UnitSet, unit_set
 
-__all__ = ["final_verdict", "reasons_of", "verdict_at", "verdict_so_far"]
+__all__ = ["final_verdict", "reasons_of", "verdict_at", "verdict_of_sizes", "verdict_so_far"]
 
 _CAUSES = (
     "Usual causes: cooled on one side first, touched before it was home, a key too high, dirt or a "
@@ -101,6 +104,34 @@ def verdict_so_far(so_far: SoFar, due: int, units: UnitSet) -> BenchVerdict:
         (worst.message,),
         so_far=read,
         reasons=reasons_of([worst]),
+    )
+
+
+def verdict_of_sizes(job: Job, fit: LandFit, feature: str) -> BenchVerdict:
+    """Say what the sizes say while they are taken: the feature so far, then the fit as it grows."""
+    units = unit_set(job.plan.rotor.units)
+    mine = fit.seat if feature == "seat" else fit.bore
+    if mine is None:
+        return BenchVerdict(None, "Not judged yet", (f"Nothing of the {feature} is read yet.",))
+    read = mine.as_read
+    so_far = (
+        f"The {feature} so far: {units.bare(read.least, 'diameter')} to "
+        f"{units.show(read.greatest, 'diameter')}, mean {units.show(read.mean, 'diameter')}."
+    )
+    if fit.interference is None:
+        return BenchVerdict(None, "Not judged yet", (so_far,), so_far=f"{read.count} read")
+    facts = fit_facts(job, fit)
+    found = [
+        rule(name).apply(facts, Subject(land=fit.land.key))
+        for name in ("seat-larger-than-bore", "interference-within")
+    ]
+    worst = max(found, key=lambda one: one.verdict.severity)
+    return BenchVerdict(
+        worst.verdict,
+        worst.phrase,
+        (worst.message, so_far),
+        so_far=f"{read.count} read",
+        reasons=reasons_of(found),
     )
 
 
