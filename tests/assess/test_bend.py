@@ -6,7 +6,7 @@ import pytest
 import sample_data
 from models.assess import assess
 from models.assess.bend import bend_of
-from models.assess.bow_unbalance import BowOffset, bow_unbalance
+from models.assess.bow_unbalance import BowOffset, bow_unbalance, offsets_of_change
 from models.assess.runout import StationChange, where_the_bend_sits
 from sample_data.truth import COMPRESSOR
 from tests.assess.invented import mm, on_a_shaft, rpm, with_material
@@ -160,6 +160,25 @@ def test_the_uncertainty_of_an_unbalance_is_that_of_its_stations(monkeypatch):
 
     assert made.uncertainty_first == printed("20.0", 1e-6)
     assert abs(made.first) == printed("500.0", 1e-6)
+
+
+def test_the_uncertainty_of_a_total_with_k_of_two_is_four_of_an_offsets(plan):
+    # TIR = 2·|e| and k = 2: ±0.8 µm TIR is 0.2 µm of either component, by hand.
+    offsets = offsets_of_change(plan, moved(plan, (1.0, 40e-6, 0.0)))
+
+    assert [one.uncertainty for one in offsets] == pytest.approx([0.2e-6] * len(offsets))
+
+
+def test_a_part_not_yet_on_brings_no_unbalance(monkeypatch):
+    # 100 kg amid 2 m, 10 µm off: 500 g·mm in each plane; the 300 kg come one step later.
+    with_material(monkeypatch, modulus=200e9, poisson=0.3, density=600.0)
+    parts = [(1.0, 100.0), (1.2, 300.0)]
+    plan = on_a_shaft(steps=[(0.0, 2.0, 0.001)], parts=parts, second=2.0)
+    offsets = [BowOffset(0.0, 0j, 0.0), BowOffset(1.0, 1e-5j, 0.0), BowOffset(2.0, 0j, 0.0)]
+
+    assert abs(bow_unbalance(plan, "step-part-1", offsets).first) == printed("500.0", 1e-6)
+    # 300 kg · 8 µm · 0.4 more: 960 g·mm.
+    assert abs(bow_unbalance(plan, "step-part-2", offsets).first) == printed("1460.0", 1e-6)
 
 
 def test_journals_named_from_the_far_end_keep_their_own_unbalance(monkeypatch):

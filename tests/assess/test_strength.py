@@ -148,7 +148,7 @@ def test_smoothing_is_off_until_both_roughnesses_and_a_factor_are_given(monkeypa
     # 0.8 · (4.8 + 4.8) = 7.68 µm, by hand; stress keeps what smoothing takes.
     assert counted.lands[0].least_interference == printed("292.32", 1e-6)
     assert counted.lands[0].greatest_pressure == printed("132.48", 1e6)
-    assert "1988 and 2001" in counted.smoothing_source
+    assert "taken as Rz, 1988 and 2001" in counted.smoothing_source
     for found in (no_bore, no_factor):
         assert found.lands[0].smoothing_loss == 0.0
         assert found.smoothing_source == "smoothing not counted"
