@@ -95,6 +95,9 @@ class Opened:
         self.shop.sign_in(sign_in or self.settings.of_shop("person"))
         self.shop.choose_job(job or self.settings.of_shop("job"))
         self.window.open()
+        if job is not None:
+            # Whoever names a job wants to work on it.
+            self.window.show_desk(BENCH)
         self.shop.read_shelf()
 
     def close(self) -> None:

@@ -317,10 +317,13 @@ class _EntryChecks:
         for index, one in enumerate(entry.stations):
             here = f"{self.place}.stations[{index}]"
             yield from _known(f"{here}.station", one.station, known, "station")
-            if one.typed:
-                yield from self._row(f"{here}.typed", one.typed, entry.angles, entry.unit)
-            if one.seconds and len(one.seconds) != len(entry.angles):
-                expected = f"{len(entry.angles)} times, one for each angle"
+            if len(one.typed) > len(entry.angles):
+                expected = f"{len(entry.angles)} readings at most, one for each angle"
+                yield Fault(f"{here}.typed", Words(f"a list of {len(one.typed)}"), expected)
+            for mark, typed in enumerate(one.typed):
+                yield from _reading(f"{here}.typed[{mark}]", typed, entry.unit)
+            if len(one.seconds) > len(one.typed):
+                expected = f"{len(one.typed)} times at most, one for each reading"
                 yield Fault(f"{here}.seconds", Words(f"a list of {len(one.seconds)}"), expected)
             for name in ("again", "swept_total", "total"):
                 yield from _reading(f"{here}.{name}", getattr(one, name), entry.unit)

@@ -206,5 +206,3 @@ def _plain_struct(part: msgspec.Struct) -> dict[str, Any]:
         if field.default is msgspec.NODEFAULT or value != field.default:
             plain[field.encode_name] = _plain(value)
     return plain
-
-

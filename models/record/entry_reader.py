@@ -104,7 +104,6 @@ class EntryReader:
 
     def _runout(self, key: str) -> dict[str, Any]:
         standing, struck = self._standing(key, (tables.RunoutReading,))
-        marks = len(self._parts[tables.SurveyAngle][key])
         laid_out = {
             part["station"]: (part["mark_count"], part["seconds_count"])
             for part in self._parts[tables.RunoutStation][key]
@@ -113,8 +112,7 @@ class EntryReader:
         for row in standing:
             of_station.setdefault(row["station"], []).append(row)
         stations = tuple(
-            _station(name, rows, *laid_out.get(name, (0, 0)), marks=marks)
-            for name, rows in of_station.items()
+            _station(name, rows, *laid_out.get(name, (0, 0))) for name, rows in of_station.items()
         )
         return {"stations": stations, "corrections": struck}
 
@@ -172,12 +170,11 @@ class EntryReader:
         return list(standing.values()), (*brought, *(correction for _, correction in struck))
 
 
-def _station(
-    name: str, rows: list[Row], mark_count: int, seconds_count: int, *, marks: int
-) -> StationReadings:
+def _station(name: str, rows: list[Row], mark_count: int, seconds_count: int) -> StationReadings:
     at_marks = {row["mark_index"]: row for row in rows if row["what"] == "mark"}
     if at_marks and max(at_marks) >= mark_count:
-        mark_count = max(marks, max(at_marks) + 1)
+        # No further than what was read: a mark beyond it is still to come, not without a surface.
+        mark_count = max(at_marks) + 1
     if any(
         row["seconds_into_survey"] is not None and index >= seconds_count
         for index, row in at_marks.items()

@@ -75,7 +75,7 @@ def test_readings_stand_where_they_were_taken(surveyed: Store) -> None:
     # By hand: the survey began at minute 200, so the readings are 60 s and 180 s into it.
     assert survey_of(surveyed).stations == (
         StationReadings(
-            station="middle", typed=("0", None, "3.5", None), seconds=(60, None, 180, None)
+            station="middle", typed=("0", None, "3.5"), seconds=(60, None, 180)
         ),
     )
 
@@ -101,7 +101,7 @@ def test_a_place_without_a_surface_strikes_what_was_typed_there(surveyed: Store)
     with one_act(surveyed, "2") as act:
         act.add_reading("s", RunoutReading(station="middle", mark=1, typed=None))
     survey = survey_of(surveyed)
-    assert survey.stations[0].typed == (None,) * 4
+    assert survey.stations[0].typed == (None,) * 2
     assert [(one.was, one.now) for one in survey.corrections] == [("4", "")]
 
 

@@ -8,6 +8,7 @@ import msgspec
 
 from app.presenters.bench.cautions import cautions_for
 from app.presenters.bench.state import Field, FormTask
+from app.presenters.bench.walk import stations_due
 from models.acts import Reading, new_id
 from models.assess import Assessment, Attempt, ItemView, land_gauge
 from models.job import (
@@ -620,11 +621,7 @@ def survey_form(bench: Bench, act: NextAct) -> Form:
         supports = answers.word("supports")
         if other and not supports:
             raise UnreadableNumberError("", "say how the rotor lies")
-        planned = bench.job.plan
-        step = None if purpose == "bare shaft" else act.step
-        if purpose == "bare seat" and act.step is not None:
-            step = bench.view.progress.step_before(act.step)
-        due = planned.stations_in_reach(step)
+        due = stations_due(bench.job.plan, bench.place(act), purpose)
         instrument = answers.word("instrument")
         head = _head(bench)
         head["by"] = answers.word("read_by")

@@ -14,6 +14,7 @@ from app.presenters.bench.walk import (
     size_spots,
     typed_at,
     with_reading,
+    with_stations_due,
 )
 from models.assess import Attempt, LandFit, StationChange, SurveyRunout
 from models.assess.attempts import station_facts
@@ -53,13 +54,15 @@ class Reading:
 
     def __init__(self, job: Job, survey: AnySurvey, attempt: Attempt | None) -> None:
         self.job = msgspec.structs.replace(job, entries=(), verdicts=(), head=None)
-        self.survey = survey
+        self.survey: AnySurvey = survey
+        if isinstance(survey, RunoutSurvey):
+            self.survey = with_stations_due(job.plan, survey)
         self.attempt = attempt
         self.baseline = attempt.baseline if attempt else None
         self.spots = (
-            runout_spots(job.plan, survey)
-            if isinstance(survey, RunoutSurvey)
-            else size_spots(survey)
+            runout_spots(job.plan, self.survey)
+            if isinstance(self.survey, RunoutSurvey)
+            else size_spots(self.survey)
         )
         self.correcting: Spot | None = None
         self.live: str | None = None

@@ -5,15 +5,26 @@ from dataclasses import dataclass
 
 import msgspec
 
-from models.job import Plan, RunoutReading, RunoutSurvey, SizeReading, SizeSurvey, StationReadings
+from models.job import (
+    Place,
+    Plan,
+    RunoutReading,
+    RunoutSurvey,
+    SizeReading,
+    SizeSurvey,
+    Station,
+    StationReadings,
+)
 
 __all__ = [
     "Spot",
     "next_spot",
     "runout_spots",
     "size_spots",
+    "stations_due",
     "typed_at",
     "with_reading",
+    "with_stations_due",
 ]
 
 
@@ -37,6 +48,25 @@ class Spot:
                 return RunoutReading(station=self.station, mark="again", typed=typed)
             return RunoutReading(station=self.station, mark=int(self.mark), typed=typed)
         return SizeReading(position=self.position, angle=int(self.mark), typed=typed)
+
+
+def stations_due(plan: Plan, place: Place, purpose: str) -> tuple[Station, ...]:
+    """List the stations a survey reads: those in reach, at a bare seat those before the step."""
+    if purpose == "bare shaft" or place.step is None:
+        return plan.stations_in_reach(None)
+    if purpose != "bare seat":
+        return plan.stations_in_reach(place.step)
+    number = plan.step_number(place.step)
+    return plan.stations_in_reach(plan.steps[number - 2].key if number > 1 else None)
+
+
+def with_stations_due(plan: Plan, survey: RunoutSurvey) -> RunoutSurvey:
+    """Give the survey with a place for every station due; the record keeps only those read."""
+    known = {one.station: one for one in survey.stations}
+    due = [one.key for one in stations_due(plan, survey.place, survey.purpose)]
+    rest = [key for key in known if key not in due]
+    stations = tuple(known.get(key, StationReadings(station=key)) for key in (*due, *rest))
+    return msgspec.structs.replace(survey, stations=stations)
 
 
 def runout_spots(plan: Plan, survey: RunoutSurvey) -> tuple[Spot, ...]:

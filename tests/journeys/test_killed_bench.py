@@ -1,0 +1,92 @@
+"""The next step of the demo job through real widgets, the program killed all along the way."""
+
+import os
+import re
+import subprocess
+import sys
+from pathlib import Path
+
+import pytest
+
+from models.acts import Acts
+from models.assess import assess
+from models.record.store import Store
+from models.record.verify import verify
+from models.rules.rule import Verdict
+from sample_data.next_steps import next_attempts
+
+ROOT = Path(__file__).resolve().parents[2]
+
+
+def work_killed_every(moves: int, folder: Path, home: Path) -> int:
+    """Let a technician finish the step, killed after so many moves each time; count the killed."""
+    done = subprocess.run(
+        [sys.executable, "-m", "tests.journeys.killed_bench", str(folder), str(moves)],
+        cwd=ROOT,
+        env={
+            **os.environ,
+            "QT_QPA_PLATFORM": "offscreen",
+            "OPENBLAS_NUM_THREADS": "1",
+            "HOME": str(home),
+            "XDG_CONFIG_HOME": str(home),
+        },
+        capture_output=True,
+        text=True,
+        timeout=900,
+        check=False,
+    )
+    assert done.returncode == 0, done.stdout + done.stderr
+    found = re.search(r"(\d+) killed", done.stdout)
+    assert found is not None
+    return int(found.group(1))
+
+
+def holds(folder: Path) -> None:
+    """Demand that everything ended as the truth behind the readings says, and nothing was lost."""
+    first, second = next_attempts()
+    with Store.open(folder) as store:
+        with store.reading() as session:
+            assert verify(session).is_whole
+        job = Acts(store).read("26-0417")
+    view = assess(job)
+    failed, held = view.attempts_at(second.step)
+    assert (failed.number, held.number) == (first.number, second.number) == (1, 2)
+    assert failed.settled is not None
+    assert failed.settled.outcome == "removed"
+    assert failed.verdict_of("runout-changed") is Verdict.OUTSIDE
+    assert held.settled is not None
+    assert held.settled.outcome == "within limits"
+    assert held.verdict_of("runout-changed") is Verdict.WITHIN
+    for told, attempt in ((first, failed), (second, held)):
+        assert attempt.judged is not None
+        typed = {one.station: list(one.typed) for one in attempt.judged.entry.stations}
+        assert typed == {one["station"]: one["typed"] for one in told.after["stations"]}
+        for change in attempt.changes:
+            if change.change is None or change.is_journal:
+                continue
+            away = 2.0 * abs(change.change - told.true_changes[change.key])
+            assert change.expanded_uncertainty is not None
+            assert away <= change.expanded_uncertainty, change
+
+
+def test_a_step_is_finished_by_a_program_that_is_killed_again_and_again(tmp_path: Path) -> None:
+    shop, home = tmp_path / "shop", tmp_path / "home"
+    shop.mkdir()
+    home.mkdir()
+
+    killed = work_killed_every(12, shop, home)
+
+    assert killed > 25
+    holds(shop)
+
+
+@pytest.mark.whole
+def test_a_step_is_finished_by_a_program_that_is_killed_after_every_move(tmp_path: Path) -> None:
+    shop, home = tmp_path / "shop", tmp_path / "home"
+    shop.mkdir()
+    home.mkdir()
+
+    killed = work_killed_every(1, shop, home)
+
+    assert killed > 300
+    holds(shop)
