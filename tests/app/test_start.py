@@ -53,7 +53,7 @@ def test_the_window_opens_on_the_shop_and_closes_with_nothing_left_open(
     status = start.run(shop_folder, sign_in="AT", job="26-0417")
 
     assert status == 0
-    assert seen == [(True, "Jobs")]
+    assert seen == [(True, "Bench")]
     assert sys.excepthook is before
     assert (tmp_path / "window.ini").is_file()
     assert not (tmp_path / "errors.log").exists()

@@ -346,8 +346,10 @@ def test_tab_alone_reaches_what_can_be_done_at_a_desk(
 
 def test_the_keyboard_is_on_the_shelf_once_it_has_been_read(shop_folder, open_window, qtbot):
     opened = open_window(shop_folder, sign_in="AT", job=COMPRESSOR)
+    opened.window.show_desk("Jobs")
     with qtbot.waitActive(opened.window):
         opened.window.activateWindow()
+    opened.settle()
     assert opened.window.focusWidget().accessibleName() == "Jobs"
 
     qtbot.keyClick(opened.window.focusWidget(), Qt.Key.Key_Return)
