@@ -8,7 +8,7 @@ from collections.abc import Callable, Sequence
 from pathlib import Path
 from typing import Any
 
-import app.findings_text as findings_text
+from app import findings_text
 from models.assess import Assessment, assess
 from models.job import Job
 from models.rules.rule import Verdict
@@ -91,11 +91,11 @@ def _say(text: str) -> None:
 
 
 def _read(path: Path) -> Job:
-    from models import jobfile
+    from models.jobfile import JobFileError, read
 
     try:
-        return jobfile.read(path)
-    except jobfile.JobFileError as trouble:
+        return read(path)
+    except JobFileError as trouble:
         raise _UnusableError(f"{path}: {trouble}") from None
 
 
@@ -114,18 +114,18 @@ def _check(given: argparse.Namespace) -> int:
 
 
 def _traveler(given: argparse.Namespace) -> int:
-    from reports import traveler
+    from reports.traveler import write
 
     job = _read(given.jobfile)
-    traveler.write(assess(job), given.output)
+    write(assess(job), given.output)
     _say(f"Traveler written to {given.output}")
     return _WITHIN
 
 
 def _demo(given: argparse.Namespace) -> int:
-    from app import demo
+    from app.demo import make
 
-    made = _with_record(lambda: demo.make(given.folder))
+    made = _with_record(lambda: make(given.folder))
     _say(made.words)
     if given.no_window or not has_screen():
         return _WITHIN
@@ -144,9 +144,9 @@ def _window(given: argparse.Namespace) -> int:
 
 
 def _open(folder: Path, sign_in: str | None, job: str | None) -> int:
-    from app import start
+    from app.start import run
 
-    return int(_with_record(lambda: start.run(folder, sign_in=sign_in, job=job)))
+    return int(_with_record(lambda: run(folder, sign_in=sign_in, job=job)))
 
 
 def _with_record(act: Callable[[], Any]) -> Any:  # noqa: ANN401  (whatever the act returns)

@@ -109,7 +109,7 @@ class Rule:
         ]
         kept = {name: _plain(value) for name, value in used.items() if name != "units"}
         if missing:
-            words = ", ".join(words_for(self.facts, name) for name in missing)
+            words = ", ".join(dict.fromkeys(words_for(self.facts, name) for name in missing))
             judgement = Judgement(Verdict.NOT_JUDGED, f"Not judged yet: {words} missing.")
         else:
             judgement = self.judge(**used)

@@ -74,9 +74,7 @@ def test_readings_stand_where_they_were_taken(surveyed: Store) -> None:
     read(surveyed, "2", 2, "3.5", taken_at=at(203))
     # By hand: the survey began at minute 200, so the readings are 60 s and 180 s into it.
     assert survey_of(surveyed).stations == (
-        StationReadings(
-            station="middle", typed=("0", None, "3.5"), seconds=(60, None, 180)
-        ),
+        StationReadings(station="middle", typed=("0", None, "3.5"), seconds=(60, None, 180)),
     )
 
 

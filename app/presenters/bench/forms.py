@@ -79,9 +79,12 @@ class Bench:
         return Place(kind="attempt", step=act.step, attempt=act.attempt)
 
     def instruments(self, *words: str) -> tuple[tuple[str, str], ...]:
-        """Offer the instruments whose kind holds one of the words; all if none does."""
-        found = [one for one in self.job.instruments if any(word in one.kind for word in words)]
-        return tuple((one.tag, f"{one.tag}, {one.kind}") for one in found or self.job.instruments)
+        """Offer the instruments of the first kind that the shop has; all if it has none of them."""
+        for word in words:
+            found = [one for one in self.job.instruments if word in one.kind]
+            if found:
+                return tuple((one.tag, f"{one.tag}, {one.kind}") for one in found)
+        return tuple((one.tag, f"{one.tag}, {one.kind}") for one in self.job.instruments)
 
 
 @dataclass(frozen=True)

@@ -37,6 +37,8 @@ from reports.sheet.pictures import DialPicture
 __all__ = ["Reading", "SoFar"]
 
 AnySurvey = RunoutSurvey | SizeSurvey
+# What one whole figure on the ladder stands for, in nm: 0.0001 in, or 1 µm.
+_STEPS = {"in": 2540, "mil": 2540, "µm": 1000, "mm": 1000}
 
 
 @dataclass(frozen=True)
@@ -239,12 +241,26 @@ class Reading:
         asked = {one.where for one in self.questions}
         return RungShown(
             place=place,
-            value=("" if not was_read else "–" if typed is None else typed.replace("-", "−")),
+            value="" if not was_read else self._shown(typed),
             struck=self.struck.get(spot, ()),
             active=spot == self.active,
             questioned=self._where(spot) in asked,
             writing=spot in self.unwritten,
         )
+
+    def _shown(self, typed: str | None) -> str:
+        """Show a value on the ladder: a runout in whole steps, as an indicator's hand reads it."""
+        if typed is None:
+            return "–"
+        if isinstance(self.survey, SizeSurvey):
+            return typed
+        step = _STEPS.get(self.unit)
+        if step is None:
+            return typed.replace("-", "−")
+        steps = self.read(typed).whole / step
+        if steps != round(steps):
+            return f"{steps:+.1f}".replace("-", "−")
+        return f"{steps:+.0f}".replace("-", "−") if steps else "0"
 
     def rung_spots(self) -> tuple[Spot, ...]:
         """List the spots of the ladder: those of the station, or of the axial position, in hand."""
@@ -290,7 +306,7 @@ class Reading:
                 )
                 for one in self.rung_spots()
             ),
-            caption=f"in {_unit_words(survey.unit)}, {instrument}, + towards the indicator",
+            caption=f"in {_step_words(survey.unit)}, {instrument}, + towards the indicator",
             dial=self._dial(spot, so_far),
             correcting=self._old_value(),
             reasons=reasons if self._reason_needed() else (),
@@ -358,6 +374,10 @@ class Reading:
             question=self._question(),
             kind="sizes",
         )
+
+
+def _step_words(unit: str) -> str:
+    return {"in": "0.0001 in", "mil": "0.0001 in", "µm": "µm", "mm": "µm"}.get(unit, unit)
 
 
 def _unit_words(unit: str) -> str:

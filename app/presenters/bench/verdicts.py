@@ -15,8 +15,8 @@ from models.units import UnitSet, unit_set
 __all__ = ["final_verdict", "reasons_of", "verdict_at", "verdict_of_sizes", "verdict_so_far"]
 
 _CAUSES = (
-    "Usual causes: cooled on one side first, touched before it was home, a key too high, dirt or a "
-    "burr at the shoulder."
+    "the usual causes: cooled on one side first, touched before it was home, a key too high, dirt "
+    "or a burr at the shoulder"
 )
 _RULES_OF: dict[Act, tuple[str, ...]] = {
     Act.CONFIRM_FURNACE: ("interference-within", "target-below-highest"),
