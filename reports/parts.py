@@ -22,6 +22,7 @@ from reports.typeface import Weight
 
 __all__ = [
     "Cell",
+    "PlainStyle",
     "Signed",
     "bold",
     "cautions",
@@ -63,6 +64,13 @@ _BOLD = font(Weight.SEMI_BOLD)
 
 # Marked words or a flowable; reportlab publishes no types.
 Cell: TypeAlias = Any
+
+
+class PlainStyle(TableStyle):  # type: ignore[misc]
+    """A style of tables whose empty cells, too, are set in the one embedded family."""
+
+    def __init__(self, commands: Sequence[tuple[object, ...]]) -> None:
+        super().__init__([("FONT", (0, 0), (-1, -1), font(), 8), *commands])
 
 
 def words(plain: str) -> str:
@@ -121,7 +129,7 @@ def _two(left: Flowable, right: Flowable, share: float) -> Table:
     return Table(
         [[left, right]],
         colWidths=[CONTENT_WIDTH * share, CONTENT_WIDTH * (1.0 - share)],
-        style=TableStyle(
+        style=PlainStyle(
             [
                 ("LEFTPADDING", (0, 0), (-1, -1), 0),
                 ("RIGHTPADDING", (0, 0), (-1, -1), 0),
@@ -154,7 +162,7 @@ def verdict_line(kind: VerdictKind, phrase: str, sentence: str) -> Flowable:
             ["", Paragraph(escape(sentence), _TEXT)],
         ],
         colWidths=[9.0 * mm, CONTENT_WIDTH - 9.0 * mm],
-        style=TableStyle(
+        style=PlainStyle(
             [
                 ("SPAN", (0, 0), (0, 1)),
                 ("VALIGN", (0, 0), (0, 0), "TOP"),
@@ -216,7 +224,7 @@ def table(
         colour = PAPER.ink2 if index in rules_after else PAPER.hair
         line = top + index
         style.append(("LINEBELOW", (0, line), (-1, line), width * mm, colour))
-    made = Table(body, colWidths=columns, repeatRows=top, style=TableStyle(style))
+    made = Table(body, colWidths=columns, repeatRows=top, style=PlainStyle(style))
     made.hAlign = "LEFT"
     return made
 
@@ -233,7 +241,7 @@ def facts(pairs: Sequence[tuple[str, str]], *, share: float = 0.16) -> Table:
     return Table(
         rows or [["", ""]],
         colWidths=[CONTENT_WIDTH * share, CONTENT_WIDTH * (1.0 - share)],
-        style=TableStyle(
+        style=PlainStyle(
             [
                 ("LEFTPADDING", (0, 0), (-1, -1), 0),
                 ("RIGHTPADDING", (0, 0), (-1, -1), 0),
@@ -290,7 +298,7 @@ def signatures(boxes: Sequence[Signed]) -> Flowable:
     made = Table(
         [cells],
         colWidths=[width] * len(boxes),
-        style=TableStyle(
+        style=PlainStyle(
             [
                 ("BOX", (0, 0), (-1, -1), 0.35 * mm, PAPER.ink),
                 ("INNERGRID", (0, 0), (-1, -1), 0.25 * mm, PAPER.ink),
@@ -308,7 +316,7 @@ def cautions(sentences: Sequence[str]) -> Flowable:
     return Table(
         rows,
         colWidths=[9.0 * mm, CONTENT_WIDTH - 9.0 * mm],
-        style=TableStyle(
+        style=PlainStyle(
             [("VALIGN", (0, 0), (-1, -1), "TOP"), ("LEFTPADDING", (0, 0), (-1, -1), 0)]
         ),
     )

@@ -4,7 +4,7 @@ from collections.abc import Iterator, Sequence
 from dataclasses import replace
 
 from reportlab.lib.units import mm
-from reportlab.platypus import Flowable, PageBreak, Table, TableStyle
+from reportlab.platypus import Flowable, PageBreak, Table
 
 from models.assess import Assessment, Attempt, ItemView, LandFit, StationChange
 from models.job import Handling, Item, Job, Note, Step
@@ -24,6 +24,7 @@ from reports.job_pictures import (
 from reports.page import CONTENT_WIDTH, EvenPage, NowAt
 from reports.parts import (
     Cell,
+    PlainStyle,
     Signed,
     bold,
     gap,
@@ -381,7 +382,7 @@ def _judged(findings: Sequence[Finding]) -> Flowable | str:
     return Table(
         [[shape(verdict_kind(worst.verdict)), note(words(worst.message))]],
         colWidths=[10, None],
-        style=TableStyle(
+        style=PlainStyle(
             [
                 ("LEFTPADDING", (0, 0), (-1, -1), 0),
                 ("RIGHTPADDING", (0, 0), (-1, -1), 0),
@@ -678,7 +679,7 @@ def _bends(view: Assessment, judged: Sequence[Attempt]) -> Iterator[Flowable]:
     yield gap(1.5)
     made = Table([cells], colWidths=widths)
     made.setStyle(
-        TableStyle(
+        PlainStyle(
             [
                 ("LEFTPADDING", (0, 0), (-1, -1), 0),
                 ("RIGHTPADDING", (0, 0), (-1, -1), 1.5 * mm),
