@@ -117,7 +117,9 @@ class Acts:
         with self._store.writing() as session:
             job = queries.read_job(session, number)
             view = assess(job)
-            if entry.out_of_order is None:
+            # A retry after an unknown end: what is there already is not asked for again.
+            is_new = all(one.id != entry.id for one in job.entries)
+            if entry.out_of_order is None and is_new:
                 _demand(_permission(view, entry))
             at = self.now()
             with journal.act(
