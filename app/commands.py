@@ -23,6 +23,7 @@ examples:
   thirdjournal demo --folder demo             make the invented demo shop there, and open it
   thirdjournal check compressor.json          judge a job file, without any record
   thirdjournal traveler pump.json -o pump.pdf write a job's traveler
+  thirdjournal verify demo                    recompute a record and compare
 
 exit status: 0 every rule within, 1 anything outside, in doubt or not judged, 2 unusable input
 """
@@ -83,6 +84,15 @@ def _parser() -> argparse.ArgumentParser:
     traveler.add_argument("jobfile", type=Path)
     traveler.add_argument("-o", "--output", type=Path, required=True, metavar="OUT.pdf")
     traveler.set_defaults(run=_traveler)
+    verify = commands.add_parser(
+        "verify", help="recompute a record from its rows and say what does not hold"
+    )
+    verify.add_argument("record", type=Path, metavar="SHOP", help="folder of the record")
+    verify.add_argument("--job", metavar="NUMBER", help="one job only")
+    verify.add_argument(
+        "--head", metavar="N:DIGEST", help="a head of that job, as a traveler prints it"
+    )
+    verify.set_defaults(run=_verify)
     return parser
 
 
@@ -120,6 +130,20 @@ def _traveler(given: argparse.Namespace) -> int:
     write(assess(job), given.output)
     _say(f"Traveler written to {given.output}")
     return _WITHIN
+
+
+def _verify(given: argparse.Namespace) -> int:
+    from app.verify_text import head_from, verified
+
+    if given.head is not None and given.job is None:
+        raise _UnusableError("--head belongs to one job; name it with --job")
+    try:
+        head = head_from(given.head) if given.head is not None else None
+    except ValueError as trouble:
+        raise _UnusableError(str(trouble)) from None
+    found = _with_record(lambda: verified(given.record, job=given.job, head=head))
+    _say(found.words)
+    return _WITHIN if found.is_whole else _NOT_WITHIN
 
 
 def _demo(given: argparse.Namespace) -> int:

@@ -83,14 +83,14 @@ class ChainCheck:
                 yield self._trouble(sequence, name, row["key"], "was added without an act")
 
     def compared_with(self, expected: Head) -> Iterator[Trouble]:
-        """Look for a head that was kept elsewhere."""
+        """Look for a head that was kept elsewhere, whole or as far as paper prints it."""
         found = next((act for act in self.acts if act["sequence"] == expected.sequence), None)
         if found is None:
             last = 0 if self.head is None else self.head.sequence
             yield self._trouble(
                 expected.sequence, "act", "", f"was cut off: the chain ends at act {last}"
             )
-        elif found["digest"] != expected.digest:
+        elif not found["digest"].startswith(expected.digest):
             yield self._trouble(
                 expected.sequence,
                 "act",

@@ -8,7 +8,9 @@ import pytest
 
 from app.commands import main
 from models import jobfile
+from models.acts import Acts
 from models.job import Job
+from models.record.store import Store
 from sample_data.load import compressor, pump
 
 
@@ -130,6 +132,52 @@ def test_without_a_screen_the_window_says_so(
 
     assert main([]) == 2
     assert "no screen" in capsys.readouterr().err
+
+
+@pytest.fixture
+def shop(tmp_path: Path) -> Path:
+    with Store.open(tmp_path) as store:
+        Acts(store).bring_in(compressor(), by="AT", act_id="demo")
+    return tmp_path
+
+
+def test_an_untouched_record_verifies_with_the_head_a_traveler_would_print(
+    shop: Path, capsys: pytest.CaptureFixture[str]
+) -> None:
+    with Store.open(shop) as store:
+        head = Acts(store).read("26-0417").head
+    assert head is not None
+    printed = f"{head.sequence}:{head.digest[:16]}"
+
+    assert main(["verify", str(shop)]) == 0
+    assert main(["verify", str(shop), "--job", "26-0417", "--head", printed]) == 0
+    assert "holds" in capsys.readouterr().out
+
+
+def test_a_record_that_is_not_the_one_of_the_traveler_is_told(
+    shop: Path, capsys: pytest.CaptureFixture[str]
+) -> None:
+    asked = ["verify", str(shop), "--job", "26-0417", "--head"]
+
+    assert main([*asked, "5:0123456789abcdef"]) == 1
+    assert "written anew" in capsys.readouterr().out
+    assert main([*asked, "5000:0123456789abcdef"]) == 1
+    assert "cut off" in capsys.readouterr().out
+
+
+@pytest.mark.parametrize("head", ["5", "x:0123456789abcdef", "5:xyz", "5:01"])
+def test_what_is_no_head_is_refused(
+    shop: Path, capsys: pytest.CaptureFixture[str], head: str
+) -> None:
+    assert main(["verify", str(shop), "--job", "26-0417", "--head", head]) == 2
+    assert head in capsys.readouterr().err
+
+
+def test_a_folder_without_a_record_is_said(
+    tmp_path: Path, capsys: pytest.CaptureFixture[str]
+) -> None:
+    assert main(["verify", str(tmp_path)]) == 2
+    assert str(tmp_path) in capsys.readouterr().err
 
 
 def test_help_shows_every_command_and_an_example(capsys: pytest.CaptureFixture[str]) -> None:
