@@ -14,6 +14,7 @@ from models.record.store import Store
 from models.record.verify import verify
 from models.rules.rule import Verdict
 from sample_data.next_steps import next_attempts
+from tests.journeys.test_random_rotors import slice_of_this_commit
 
 ROOT = Path(__file__).resolve().parents[2]
 
@@ -83,9 +84,10 @@ def test_a_step_is_finished_by_a_program_that_is_killed_again_and_again(tmp_path
     shop.mkdir()
     home.mkdir()
 
-    killed = work_killed_every(12, shop, home)
+    # Which moves are the last of a life changes with the commit; the whole set kills after each.
+    killed = work_killed_every(10 + slice_of_this_commit() % 5, shop, home)
 
-    assert killed > 25
+    assert killed > 20
     holds(shop)
 
 
