@@ -223,7 +223,7 @@ def _steps(view: Assessment) -> Flowable:
     return table(
         ["step", "part", "serial", "attempts", "", "outcome", "performed", "inspected", "settled"],
         rows,
-        [6, 33, 24, 9, 5, 20, 25, 25, 21],
+        [6, 31, 22, 12, 5, 20, 25, 25, 22],
         align="rllcclll" + "l",
     )
 

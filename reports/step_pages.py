@@ -674,7 +674,10 @@ def _bends(view: Assessment, judged: Sequence[Attempt]) -> Iterator[Flowable]:
         cells.append(_dial(view, attempt, judged) or "")
         name = bold(f"Attempt {attempt.number}: where the bend sat")
         setter = text if alone else note
-        cells.append([setter(name), *(setter(words(one)) for one in attempt.bend.sentences)])
+        # Beside another attempt there is room for the bend itself; what it means stands in full
+        # where an attempt has the page to itself.
+        sentences = attempt.bend.sentences if alone else attempt.bend.sentences[:1]
+        cells.append([setter(name), *(setter(words(one)) for one in sentences)])
         widths += [_DIAL_WIDTH * mm, (CONTENT_WIDTH / len(judged)) - _DIAL_WIDTH * mm]
     yield gap(1.5)
     made = Table([cells], colWidths=widths)
