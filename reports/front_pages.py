@@ -3,6 +3,7 @@
 import cmath
 import math
 from collections.abc import Iterator, Sequence
+from dataclasses import replace
 
 from reportlab.platypus import Flowable, PageBreak
 
@@ -27,7 +28,7 @@ from reports.parts import (
     verdict_line,
     words,
 )
-from reports.sheet.along import PAPER_LAYOUT, AlongLayout, along_the_rotor
+from reports.sheet.along import PAPER_LAYOUT, along_the_rotor
 from reports.sheet.pictures import Curve
 
 __all__ = [
@@ -40,34 +41,16 @@ __all__ = [
     "shown_total",
 ]
 
-_ROTOR_ONLY = AlongLayout(
-    medium=PAPER_LAYOUT.medium,
-    view=PAPER_LAYOUT.view,
-    width=PAPER_LAYOUT.width,
+_ROTOR_ONLY = replace(
+    PAPER_LAYOUT,
     height=62.0,
-    margin=0.0,
-    gutter_left=12.5,
-    gutter_right=1.5,
     rotor=(0.0, 56.0),
     names=(57.0, 60.5),
     planes=(61.0, 61.5),
     change_top=62.0,
     change_height=0.5,
 )
-_WITH_PLANES = AlongLayout(
-    medium=PAPER_LAYOUT.medium,
-    view=PAPER_LAYOUT.view,
-    width=PAPER_LAYOUT.width,
-    height=89.0,
-    margin=0.0,
-    gutter_left=12.5,
-    gutter_right=1.5,
-    rotor=(0.0, 50.0),
-    names=(51.0, 54.5),
-    planes=(55.5, 87.5),
-    change_top=89.0,
-    change_height=0.5,
-)
+_WITH_PLANES = replace(PAPER_LAYOUT, height=89.0, change_top=89.0, change_height=0.5)
 
 
 def shown_time(iso: str | None) -> str:
