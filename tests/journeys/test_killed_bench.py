@@ -8,6 +8,7 @@ from pathlib import Path
 
 import pytest
 
+from models import jobfile
 from models.acts import Acts
 from models.assess import assess
 from models.record.store import Store
@@ -50,6 +51,10 @@ def holds(folder: Path) -> None:
             assert verify(session).is_whole
         job = Acts(store).read("26-0417")
     view = assess(job)
+    exported = assess(jobfile.loads(jobfile.dumps(job)))
+    assert [(one.finding.rule.id, one.finding.message) for one in exported.findings] == [
+        (one.finding.rule.id, one.finding.message) for one in view.findings
+    ]
     failed, held = view.attempts_at(second.step)
     assert (failed.number, held.number) == (first.number, second.number) == (1, 2)
     assert failed.settled is not None
