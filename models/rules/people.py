@@ -36,7 +36,7 @@ def entry_is_in_order(*, entry: str, out_of_order: str) -> Judgement:
         return Judgement(Verdict.WITHIN, f"{entry} taken in its order.")
     return Judgement(
         Verdict.CANNOT_TELL,
-        f"{entry} taken out of order: “{out_of_order}”. An inspector looks at it.",
+        f"{entry} taken out of order: “{out_of_order.rstrip('.')}”. An inspector looks at it.",
     )
 
 

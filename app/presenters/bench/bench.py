@@ -103,7 +103,7 @@ class BenchPresenter(QObject):
 
     def reload(self) -> None:
         """Read the job again from the record, and judge it."""
-        self._writer.write(self._load, done=self._on_loaded, refused=self._on_refused)
+        self._writer.write(self._load, done=self._on_loaded, refused=self._on_unreadable)
 
     def sign_in(self, person: str) -> None:
         """Let another person act at this bench."""
@@ -594,6 +594,10 @@ class BenchPresenter(QObject):
             self.refused.emit(str(error))
         # What is on the disk is the truth; whatever was shown beyond it is read again.
         self.reload()
+
+    def _on_unreadable(self, error: Exception) -> None:
+        # Reading again would fail the same way, and so on for ever.
+        self.refused.emit(str(error))
 
     def _on_trouble(self, error: Exception) -> None:
         self.troubled.emit(

@@ -166,3 +166,18 @@ def test_the_true_changes_of_the_first_attempt_are_over_the_limit() -> None:
 
     assert greatest > 25.4e-6
     assert math.isfinite(FIRST.true_kink_position)
+
+
+def test_a_job_that_is_not_there_is_said_once(tmp_path: Path, qtbot: QtBot) -> None:
+    with Store.open(tmp_path) as store:
+        writer = Writer(surroundings=(RecordError,))
+        acts = Acts(store)
+        acts.bring_in(compressor(), by="AT", act_id="demo")
+        said: list[str] = []
+        presenter = BenchPresenter(acts, writer, "no such job", "AT")
+        presenter.refused.connect(said.append)
+        qtbot.waitUntil(lambda: writer.is_idle or writer.is_halted, timeout=20_000)
+        writer.close()
+
+    assert len(said) <= 1
+    assert presenter.view is None
