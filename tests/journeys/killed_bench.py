@@ -80,6 +80,11 @@ class Technician:
         """The job as the bench judges it; None until it has been read."""
         return self.page.findChild(BenchPresenter).view
 
+    @property
+    def written(self) -> int | None:
+        """The last act that this window knows to be on the disk."""
+        return self.page.findChild(BenchPresenter)._seen
+
     def seen(self, name: str, kind: type = QWidget) -> Any:
         """Find a control that is shown, by its name."""
         found = self.page.findChild(kind, name)
@@ -205,15 +210,18 @@ def work(folder: Path, moves: int, ahead: tuple[AttemptAhead, ...]) -> None:
     opened.show(sign_in="AT", job=JOB)
     technician = Technician(opened, ahead)
     del application
-    for _ in range(moves):
+    made = 0
+    while made < moves:
         technician.quiet()
         view = technician.view
         latest = view.progress.latest(ahead[-1].step)
         if view.next.act in (Act.SIGN, Act.NOTHING) and latest is not None and latest.performed:
             os._exit(DONE)
+        before = technician.written
         technician.move()
-        # Only what the window says is written may be relied on.
+        # Only what the window says is written may be relied on; a form that is merely open is not.
         technician.wait(lambda: opened.writer.is_idle)
+        made += technician.written != before
     os.kill(os.getpid(), signal.SIGKILL)
 
 
