@@ -23,6 +23,7 @@ from models.record.errors import (
     SchemaDiffersError,
     TornRecordError,
 )
+from models.record.migrations import FORM
 from models.record.store import FILE_NAME, Store
 from models.record.verify import verify
 from tests.record.a_job import NUMBER, a_job
@@ -99,7 +100,9 @@ def test_a_newer_file_names_both_numbers(closed: Path) -> None:
     raw = sqlite3.connect(closed)
     raw.execute("PRAGMA user_version = 7")
     raw.close()
-    with pytest.raises(NewerRecordError, match="has form 7; this program knows forms up to 1"):
+    with pytest.raises(
+        NewerRecordError, match=f"has form 7; this program knows forms up to {FORM}"
+    ):
         Store.open(closed.parent)
 
 
@@ -110,7 +113,7 @@ def test_an_older_form_is_brought_up_to_date_and_kept_as_it_was(closed: Path) ->
     raw.close()
     with Store.open(closed.parent) as store, store.reading() as session:
         assert verify(session).is_whole
-        assert session.connection().exec_driver_sql("PRAGMA user_version").scalar_one() == 1
+        assert session.connection().exec_driver_sql("PRAGMA user_version").scalar_one() == FORM
     (copy,) = closed.parent.glob("shop of form 0*")
     assert copy.stat().st_mode & 0o777 == 0o600
     kept = sqlite3.connect(copy)

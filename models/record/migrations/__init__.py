@@ -15,7 +15,7 @@ from models.record.triggers import trigger_texts
 __all__ = ["APPLICATION_ID", "FORM", "bring_up_to_date", "make_triggers"]
 
 # The form that this program writes: the number of the last step.
-FORM = 1
+FORM = 2
 # "3JRN" in ASCII; marks the file as a record of this program.
 APPLICATION_ID = 0x334A524E
 
