@@ -1,0 +1,31 @@
+"""All findings of an attempt, in the order of the work."""
+
+from collections.abc import Iterable
+
+from models.assess.attempts.on_cooling import cool_facts, cooling_matters
+from models.assess.attempts.on_mounting import heat_findings, mount_findings
+from models.assess.attempts.on_people import people_findings
+from models.assess.attempts.on_runout import runout_findings
+from models.assess.attempts.on_sizes import size_findings
+from models.assess.attempts.view import Attempt, attempt_subject
+from models.assess.strength_findings import strength_findings
+from models.job import Job
+from models.rules import rule
+from models.rules.rule import Finding, Subject
+
+__all__ = ["attempt_findings"]
+
+
+def attempt_findings(job: Job, attempt: Attempt) -> Iterable[Finding]:
+    """Judge all that an attempt holds, in the order of the work."""
+    for view in attempt.items:
+        yield from size_findings(job, attempt, view)
+        about = attempt_subject(attempt, item=view.item.key)
+        yield from strength_findings(job.plan, view.item, view.strength, about)
+        yield from heat_findings(job, attempt, view)
+        yield from mount_findings(job, attempt, view)
+    if cooling_matters(attempt):
+        subject = Subject(step=attempt.step.key, attempt=attempt.number)
+        yield rule("may-be-read").apply(cool_facts(job, attempt), subject)
+    yield from runout_findings(job, attempt)
+    yield from people_findings(job, attempt)

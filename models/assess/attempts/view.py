@@ -1,0 +1,128 @@
+"""One attempt at a stacking step, its entries sorted and worked out."""
+
+from dataclasses import dataclass
+from functools import cached_property
+
+from models.assess.bend import Bend, bend_of
+from models.assess.heat import Heat
+from models.assess.runout import StationChange, SurveyRunout
+from models.assess.sizes import LandFit
+from models.assess.strength import FitStrength
+from models.engineering.bow import KinkFit
+from models.job import (
+    AnyEntry,
+    AttemptOpened,
+    AxialMeasured,
+    Confirmation,
+    Cooling,
+    Decision,
+    Item,
+    Mount,
+    Plan,
+    Removal,
+    Settled,
+    Signature,
+    Step,
+)
+from models.rules.rule import Finding, Subject, Verdict
+
+__all__ = ["Attempt", "ItemView", "attempt_subject", "finding_key"]
+
+
+@dataclass(frozen=True, eq=False)
+class ItemView:
+    """One item of a step in one attempt."""
+
+    item: Item
+    serial: str | None
+    fits: tuple[LandFit, ...]
+    strength: FitStrength | None
+    heat: Heat | None
+    mount: Mount | None
+    axial: tuple[AxialMeasured, ...]
+    removal: Removal | None
+    confirmations: tuple[Confirmation, ...]
+
+    @property
+    def axial_cold(self) -> AxialMeasured | None:
+        """The last axial position measured cold."""
+        cold = [one for one in self.axial if one.state == "cold"]
+        return cold[-1] if cold else None
+
+
+@dataclass(frozen=True, eq=False)
+class Attempt:
+    """One attempt, with all that is known of it and every finding."""
+
+    plan: Plan
+    step: Step
+    number: int
+    opened: AttemptOpened
+    entries: tuple[AnyEntry, ...]
+    items: tuple[ItemView, ...]
+    coolings: tuple[Cooling, ...]
+    baseline: SurveyRunout | None
+    surveys: tuple[SurveyRunout, ...]
+    judged: SurveyRunout | None
+    changes: tuple[StationChange, ...]
+    kink: KinkFit | None
+    seat_survey: SurveyRunout | None
+    drift: tuple[StationChange, ...]
+    settled: Settled | None
+    signatures: tuple[Signature, ...]
+    decisions: tuple[Decision, ...]
+    findings: tuple[Finding, ...]
+
+    @cached_property
+    def bend(self) -> Bend:
+        """What its surveys tell about the bow, worked out when asked for: no rule needs it."""
+        return bend_of(
+            self.plan,
+            self.step.key,
+            kink=self.kink,
+            changes=self.changes,
+            judged=self.judged,
+            drift=self.drift,
+        )
+
+    @property
+    def worst(self) -> Verdict:
+        """The worst verdict of all findings of the attempt."""
+        return Verdict.worst([finding.verdict for finding in self.findings])
+
+    def of(self, rule_id: str, item: str | None = None) -> tuple[Finding, ...]:
+        """Select the findings of one rule, of one item if named."""
+        return tuple(
+            finding
+            for finding in self.findings
+            if finding.rule.id == rule_id and item in (None, finding.subject.item)
+        )
+
+    def verdict_of(self, *rule_ids: str, item: str | None = None) -> Verdict | None:
+        """Find the worst verdict of some rules, counting decisions; None where none was judged."""
+        found = [finding for rule_id in rule_ids for finding in self.of(rule_id, item)]
+        if not found:
+            return None
+        return Verdict.worst([self.counted(finding) for finding in found])
+
+    def counted(self, finding: Finding) -> Verdict:
+        """Give the verdict as it counts for going on: a person's decision settles a doubt."""
+        about = finding_key(finding)
+        decided = [one for one in self.decisions if one.about == about]
+        if decided and decided[-1].disposition in (
+            "accept reading",
+            "use as is under concession",
+        ):
+            return Verdict.WITHIN
+        return finding.verdict
+
+
+def finding_key(finding: Finding) -> str:
+    """Name a finding so that a decision can refer to it."""
+    words = finding.subject.words
+    return f"{finding.rule.id}: {words}" if words else finding.rule.id
+
+
+def attempt_subject(attempt: Attempt, **more: str | None) -> Subject:
+    """Name what a finding of an attempt is about."""
+    return Subject(step=attempt.step.key, attempt=attempt.number, **more)
