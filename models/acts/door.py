@@ -1,0 +1,178 @@
+"""The acts themselves: each is one transaction and one link of the chain."""
+
+from collections.abc import Callable
+from dataclasses import dataclass
+from datetime import datetime
+
+from models.acts.permissions import demand, permission_for
+from models.acts.verdicts import (
+    changed_verdicts,
+    judged_already,
+    rests_on,
+    stored_verdict,
+    verdicts_due,
+    with_entry,
+)
+from models.assess import assess
+from models.job import (
+    AnyEntry,
+    AttemptOpened,
+    GaugeTry,
+    Hot,
+    Job,
+    Mount,
+    Question,
+    RunoutReading,
+    Settled,
+    SizeReading,
+    Warmth,
+)
+from models.record import journal, queries
+from models.record.store import Store
+
+__all__ = ["Acts", "Reading", "Recorded"]
+
+
+Reading = RunoutReading | SizeReading | Hot | Warmth | GaugeTry
+
+
+_JUDGED_AT = (Mount, Settled, AttemptOpened)
+
+
+@dataclass(frozen=True)
+class Recorded:
+    """An act that is on the disk."""
+
+    sequence: int
+    at: str
+
+
+def _local_now() -> datetime:
+    return datetime.now().astimezone()
+
+
+class Acts:
+    """Everything a person can do to a shop's record."""
+
+    def __init__(self, store: Store, *, now: Callable[[], datetime] = _local_now) -> None:
+        self._store = store
+        self._now = now
+
+    def now(self) -> str:
+        """Tell the time as entries write it, with the local offset."""
+        return self._now().isoformat(timespec="seconds")
+
+    def jobs(self) -> tuple[queries.JobRow, ...]:
+        """List the shop's jobs."""
+        with self._store.reading() as session:
+            return queries.job_rows(session)
+
+    def read(self, number: str) -> Job:
+        """Read one job whole."""
+        with self._store.reading() as session:
+            return queries.read_job(session, number)
+
+    def bring_in(self, job: Job, *, by: str, act_id: str) -> None:
+        """Take a whole job from a job file into the record; one that is there is refused."""
+        with self._store.writing() as session:
+            journal.bring_in(session, job, by=by, act_id=act_id)
+
+    def record(
+        self, number: str, entry: AnyEntry, *, act_id: str | None = None, head: int | None = None
+    ) -> Recorded:
+        """Record a whole entry, or an empty one that readings will be added to.
+
+        Raises
+        ------
+        NotAllowedError
+            If the order of the work does not allow it and the entry gives no reason.
+        """
+        with self._store.writing() as session:
+            job = queries.read_job(session, number)
+            view = assess(job)
+            # A retry after an unknown end: what is there already is not asked for again.
+            is_new = all(one.id != entry.id for one in job.entries)
+            if entry.out_of_order is None and is_new:
+                demand(permission_for(view, entry))
+            at = self.now()
+            with journal.act(
+                session,
+                chain=number,
+                kind=entry.title,
+                by=entry.by,
+                act_id=act_id or entry.id,
+                done_at=entry.done_at,
+                expected_head=head,
+            ) as act:
+                act.add_entry(entry)
+                if isinstance(entry, _JUDGED_AT):
+                    later = with_entry(job, entry)
+                    act.add_verdicts(verdicts_due(later, entry, at))
+            return Recorded(act.sequence, at)
+
+    def add_reading(
+        self,
+        number: str,
+        entry_id: str,
+        reading: Reading,
+        *,
+        by: str,
+        act_id: str,
+        reason: str | None = None,
+    ) -> Recorded:
+        """Record one reading of an open entry, or one that supersedes an earlier reading.
+
+        A correction inside a survey that is closed re-judges everything that rests on it; a
+        verdict that turns out otherwise is stored beside the old one.
+        """
+        with self._store.writing() as session:
+            at = self.now()
+            # Only a correction can touch what has been judged; a first reading costs no look back.
+            before = judged_already(queries.read_job(session, number), entry_id) if reason else None
+            with journal.act(
+                session,
+                chain=number,
+                kind="reading" if reason is None else "correction",
+                by=by,
+                act_id=act_id,
+                done_at=at,
+            ) as act:
+                act.add_reading(entry_id, reading, reason=reason)
+                if before is not None:
+                    act.flush()
+                    after = assess(queries.read_job(session, number))
+                    act.add_verdicts(changed_verdicts(before, after, entry_id, at))
+            return Recorded(act.sequence, at)
+
+    def answer(self, number: str, entry_id: str, question: Question, *, act_id: str) -> Recorded:
+        """Record why a questioned reading stays."""
+        with (
+            self._store.writing() as session,
+            journal.act(
+                session,
+                chain=number,
+                kind="answer",
+                by=question.by,
+                act_id=act_id,
+                done_at=question.at,
+            ) as act,
+        ):
+            act.add_question(entry_id, question)
+        return Recorded(act.sequence, question.at)
+
+    def close_survey(self, number: str, entry_id: str, *, by: str, act_id: str) -> Recorded:
+        """Close a survey: it is judged, and the verdicts are stored with it."""
+        with self._store.writing() as session:
+            at = self.now()
+            with journal.act(
+                session, chain=number, kind="survey closed", by=by, act_id=act_id, done_at=at
+            ) as act:
+                act.close_survey(entry_id, at)
+                act.flush()
+                view = assess(queries.read_job(session, number))
+                act.add_verdicts(
+                    stored_verdict(one, entry_id, at)
+                    for one in view.findings
+                    if one.finding.subject.entry == entry_id or rests_on(view, one, entry_id)
+                )
+            return Recorded(act.sequence, at)
