@@ -21,14 +21,21 @@ from reports.sheet.elements import (
     Stroke,
 )
 from reports.sheet.labels import Label, note, thinned
-from reports.sheet.lines import ACTIVE_GUIDE, LIMIT, LIMIT_ACTIVE, NOT_MEASURED, VALUE_LIMIT
+from reports.sheet.lines import (
+    ACTIVE_GUIDE,
+    LIMIT,
+    LIMIT_ACTIVE,
+    NOT_MEASURED,
+    SEEN_EDGE,
+    VALUE_LIMIT,
+)
 from reports.sheet.medium import LineWidth, Medium, Size
 from reports.sheet.pictures import ChangeMark, StationState, Turning, VerdictKind
 from reports.sheet.scale import Axis
 from reports.sheet.verdict import verdict_colour, verdict_shape
 from reports.typeface import Weight
 
-__all__ = ["LONGEST_VECTOR", "change_row", "limit_circle_radius", "on_clock"]
+__all__ = ["LONGEST_VECTOR", "change_row", "limit_circle_radius", "on_clock", "spread_places"]
 
 LONGEST_VECTOR = 1.3
 """Longest vector drawn, in limits; a longer one ends there with a bar across [-]."""
@@ -81,7 +88,7 @@ def limit_circle_radius(*, positions: Sequence[float], axis: Axis, medium: Mediu
     Returns
     -------
     float or None
-        Radius in sheet units [-]; None where circles would be too small and stems are drawn.
+        Radius in sheet units [-]; None where circles would be too small at their own places.
 
     Examples
     --------
@@ -99,6 +106,54 @@ def limit_circle_radius(*, positions: Sequence[float], axis: Axis, medium: Mediu
     pitches = [after - before for before, after in itertools.pairwise(places)]
     radius = min([medium.limit_circle_radius] + [0.46 * pitch for pitch in pitches])
     return radius if radius >= medium.least_circle_radius else None
+
+
+def spread_places(
+    *, places: Sequence[float], gap: float, left: float, right: float
+) -> tuple[float, ...] | None:
+    """Move places apart along a line, each as little as the others allow, keeping their order.
+
+    With `p` the places and `i` their number, the least squares of the moves under
+    `q[i + 1] - q[i] >= gap` are the means of pooled neighbours of `p[i] - i gap`.
+
+    Parameters
+    ----------
+    places : sequence of float
+        Where they would stand, growing, in sheet units [-].
+    gap : float
+        Least distance between neighbours in sheet units [-].
+    left, right : float
+        Where the first may stand at the least and the last at the most in sheet units [-].
+
+    Returns
+    -------
+    tuple of float or None
+        Where they stand in sheet units [-]; None where they do not all fit.
+
+    Examples
+    --------
+    Two that stand too close part evenly; a third far away stays:
+
+    >>> spread_places(places=(10.0, 12.0, 40.0), gap=8.0, left=0.0, right=50.0)
+    (7.0, 15.0, 40.0)
+
+    References
+    ----------
+    Pooling of adjacent violators for isotonic regression, from memory.
+    """
+    if not places or (len(places) - 1) * gap > right - left:
+        return tuple(places) if not places else None
+    pools: list[tuple[float, int]] = []
+    for number, place in enumerate(places):
+        mean, count = place - number * gap, 1
+        while pools and pools[-1][0] > mean:
+            other, others = pools.pop()
+            mean = (mean * count + other * others) / (count + others)
+            count += others
+        pools.append((mean, count))
+    means = [mean for mean, count in pools for _ in range(count)]
+    last = right - (len(places) - 1) * gap
+    return tuple(min(max(mean, left), last) + i * gap for i, mean in enumerate(means))
 
 
 def change_row(
@@ -130,26 +185,43 @@ def change_row(
     Returns
     -------
     Layer
-        Circles with vectors or stems in a band, figures, shapes, and a mark for every station.
+        Circles with vectors, figures, shapes, and a mark for every station. Where stations stand
+        too close, the circles move aside and a leader comes down from each station; where they
+        are too many for that, stems stand in a band.
     """
     size = medium.size(Size.NOTE)
+    figures_row = place.bottom - 0.22 * size
+    room = figures_row - 0.9 * size - place.top
+    true_places = [axis.x(change.position) for change in changes]
     radius = limit_circle_radius(
         positions=[change.position for change in changes], axis=axis, medium=medium
     )
-    figures_row = place.bottom - 0.22 * size
-    room = figures_row - 0.9 * size - place.top
-    items: list[Item] = []
+    places: Sequence[float] | None = true_places
     if radius is None:
+        words = [note(x=place.left, y=0.0, text=text, medium=medium) for text in caption]
+        left = max((text.box(medium).right for text in words), default=place.left) + size
+        radius, places = _moved_aside(
+            true_places, medium, left=left, right=place.right, height=room
+        )
+    items: list[Item] = []
+    if radius is None or places is None:
+        places = true_places
         items += _stems(changes, axis, place, medium, height=room)
     else:
-        middle = (
-            place.top + max(radius, room / 2.0)
-            if room < 2.4 * radius
-            else (place.top + room - radius)
-        )
-        for change in changes:
-            items += _circle(change, axis.x(change.position), middle, radius, medium, counted)
-    items += _figures(changes, axis, figures_row, medium)
+        moved = list(places) != true_places
+        if moved:
+            middle = place.top + room - LONGEST_VECTOR * radius
+        elif room < 2.4 * radius:
+            middle = place.top + max(radius, room / 2.0)
+        else:
+            middle = place.top + room - radius
+        for change, true, x in zip(changes, true_places, places, strict=True):
+            if x != true:
+                items.append(
+                    Line(x1=true, y1=place.top, x2=x, y2=middle - radius, stroke=SEEN_EDGE)
+                )
+            items += _circle(change, x, middle, radius, medium, counted)
+    items += _figures(changes, places, figures_row, medium)
     items += [
         note(
             x=place.left,
@@ -165,16 +237,29 @@ def change_row(
         Mark(
             name=f"change {change.key}",
             tells=change.tells or _sentence(change),
-            box=Box(
-                axis.x(change.position) - reach,
-                place.top,
-                axis.x(change.position) + reach,
-                place.bottom,
-            ),
+            box=Box(x - reach, place.top, x + reach, place.bottom),
         )
-        for change in changes
+        for change, x in zip(changes, places, strict=True)
     )
     return Layer(items=tuple(items), marks=marks)
+
+
+def _moved_aside(
+    places: Sequence[float], medium: Medium, *, left: float, right: float, height: float
+) -> tuple[float | None, tuple[float, ...] | None]:
+    """Choose the radius at which all circles fit side by side, and where they then stand."""
+    # Somewhat more than a diameter from one to the next, as where they stand at their own places,
+    # a fifth of the height for the leaders, and room for a vector that is longer than its limit.
+    radius = min(
+        medium.limit_circle_radius,
+        0.46 * (right - left) / max(len(places), 1),
+        0.35 * height,
+    )
+    if radius < medium.least_circle_radius:
+        return None, None
+    return radius, spread_places(
+        places=places, gap=radius / 0.46, left=left + radius, right=right - radius
+    )
 
 
 def _sentence(change: ChangeMark) -> str:
@@ -283,17 +368,19 @@ def _stems(
     return items
 
 
-def _figures(changes: Sequence[ChangeMark], axis: Axis, base: float, medium: Medium) -> list[Item]:
+def _figures(
+    changes: Sequence[ChangeMark], places: Sequence[float], base: float, medium: Medium
+) -> list[Item]:
     labels = []
     by_key = {change.key: change for change in changes}
-    for change in changes:
+    for change, x in zip(changes, places, strict=True):
         if not change.text:
             continue
         active = change.state is StationState.ACTIVE
         shaped = change.verdict in (VerdictKind.LOOK, VerdictKind.STOP) and not active
         colour = Colour.INK2 if change.is_datum else Colour.INK
         text = note(
-            x=axis.x(change.position),
+            x=x,
             y=base,
             text=change.text,
             medium=medium,

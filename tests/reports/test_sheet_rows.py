@@ -1,15 +1,27 @@
 from __future__ import annotations
 
 import cmath
+import itertools
 import math
 
+import numpy as np
 import pytest
+from hypothesis import given
+from hypothesis import strategies as st
+from scipy.optimize import isotonic_regression
 
 from reports.palette import Colour
-from reports.sheet.change import LONGEST_VECTOR, change_row, limit_circle_radius
+from reports.sheet.change import LONGEST_VECTOR, change_row, limit_circle_radius, spread_places
 from reports.sheet.dial import dial, dial_magnification, dial_radius
 from reports.sheet.elements import Box, Circle, Dash, Line, Polygon, Polyline, Text
-from reports.sheet.lines import CURVE_AFTER, CURVE_BEFORE, CURVE_EARLIER, LIMIT, NOT_MEASURED
+from reports.sheet.lines import (
+    CURVE_AFTER,
+    CURVE_BEFORE,
+    CURVE_EARLIER,
+    LIMIT,
+    NOT_MEASURED,
+    SEEN_EDGE,
+)
 from reports.sheet.medium import BENCH_1280, PAPER_MEDIUM
 from reports.sheet.pictures import (
     ChangeMark,
@@ -172,14 +184,53 @@ def test_the_circles_shrink_with_the_smallest_pitch_until_they_cannot_be_read(
     assert radius == (None if expected is None else pytest.approx(expected))
 
 
-def test_crowded_stations_become_stems_against_one_band():
-    items = row(change(), change(key="S2", position=0.52, change_tir=20e-6 + 0j))
+def test_crowded_circles_move_aside_and_keep_their_vectors_and_leaders():
+    near = change(key="S2", position=0.52, change_tir=20e-6 + 0j)
+    items = row(change(), near)
+
+    rings = [item for item in items if isinstance(item, Circle) and item.stroke == LIMIT]
+    first, second = sorted(ring.x for ring in rings)
+    assert second - first == pytest.approx(rings[0].radius / 0.46)
+    # Both move by the same amount, since both are as free to move.
+    places = [AXIS.x(one.position) for one in (change(), near)]
+    assert first + second == pytest.approx(sum(places))
+    leaders = [item for item in items if isinstance(item, Line) and item.stroke == SEEN_EDGE]
+    assert sorted(line.x1 for line in leaders) == pytest.approx(places)
+    assert sorted(line.x2 for line in leaders) == pytest.approx([first, second])
+    vectors = [item for item in items if isinstance(item, Line) and item.stroke != SEEN_EDGE]
+    # By hand: half the limit and the whole of it, towards 0°, which is up.
+    lengths = sorted(line.y1 - line.y2 for line in vectors)
+    assert lengths == pytest.approx([0.5 * rings[0].radius, rings[0].radius])
+
+
+def test_stations_too_many_for_circles_become_stems_against_one_band():
+    many = [change(key=f"S{n}", position=0.1 + 0.01 * n) for n in range(90)]
+    items = row(*many, change(key="last", position=1.02, change_tir=20e-6 + 0j))
 
     band = next(item for item in items if isinstance(item, Polygon))
     height = max(y for _, y in band.points) - min(y for _, y in band.points)
     stems = [line.y1 - line.y2 for line in items if isinstance(line, Line) and line.x1 == line.x2]
     assert band.fill is Colour.SHEET
-    assert stems == pytest.approx([0.5 * height, height])
+    assert stems == pytest.approx([*[0.5 * height] * 90, height])
+
+
+@given(
+    st.lists(st.floats(0.0, 100.0), min_size=1, max_size=12).map(sorted),
+    st.floats(0.0, 8.0),
+)
+def test_places_moved_apart_are_the_nearest_ones_that_keep_their_distance(places, gap):
+    moved = spread_places(places=places, gap=gap, left=-1000.0, right=1000.0)
+
+    assert moved is not None
+    assert all(after - before >= gap - 1e-9 for before, after in itertools.pairwise(moved))
+    # The same least squares by a solver that knows nothing of pooling.
+    shifted = np.asarray(places) - gap * np.arange(len(places))
+    expected = isotonic_regression(shifted).x + gap * np.arange(len(places))
+    assert moved == pytest.approx(tuple(expected), abs=1e-9)
+
+
+def test_places_that_do_not_fit_are_not_moved():
+    assert spread_places(places=(1.0, 2.0, 3.0), gap=5.0, left=0.0, right=9.0) is None
 
 
 def test_a_change_far_beyond_its_limit_ends_in_a_bar_before_it_meets_its_neighbour():
