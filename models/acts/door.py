@@ -32,10 +32,7 @@ from models.record.store import Store
 
 __all__ = ["Acts", "Reading", "Recorded"]
 
-
 Reading = RunoutReading | SizeReading | Hot | Warmth | GaugeTry
-
-
 _JUDGED_AT = (Mount, Settled, AttemptOpened)
 
 

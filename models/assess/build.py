@@ -4,8 +4,6 @@ from collections.abc import Iterable, Sequence
 from dataclasses import dataclass
 from functools import cached_property
 
-import msgspec
-
 from models.assess.attempts import (
     Attempt,
     assess_attempt,
@@ -123,8 +121,7 @@ def live_entries(job: Job) -> tuple[AnyEntry, ...]:
 def assess(job: Job) -> Assessment:
     """Work out and judge a whole job."""
     entries = live_entries(job)
-    ground = msgspec.structs.replace(job, entries=(), verdicts=(), head=None)
-    surveys = {one.id: read_survey(ground, one) for one in entries if isinstance(one, RunoutSurvey)}
+    surveys = {one.id: read_survey(job, one) for one in entries if isinstance(one, RunoutSurvey)}
     bare = [
         surveys[one.id]
         for one in entries

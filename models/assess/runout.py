@@ -8,6 +8,7 @@ from functools import lru_cache
 import numpy as np
 import numpy.typing as npt
 
+from models.assess.ground import Ground, ground_of
 from models.engineering.bow import KinkFit, fit_one_kink
 from models.engineering.errors import OutOfRangeError
 from models.engineering.harmonics import HarmonicFit, fit_harmonics
@@ -15,7 +16,7 @@ from models.engineering.indicator import lever_corrected
 from models.engineering.mount_change import ChangeBounds, change_at_stations, change_bounds
 from models.engineering.runout import datum_uncertainty, journal_datum
 from models.job import Job, RunoutSurvey, StationReadings
-from models.units import Length
+from models.units import Angle, Length
 
 __all__ = [
     "StationChange",
@@ -100,53 +101,104 @@ class StationChange:
     reading_uncertainty: float
 
 
+@dataclass(frozen=True)
+class _Means:
+    """All that a station's readings are turned into a vector with, beside the readings."""
+
+    position: float
+    angles: tuple[float, ...]
+    unit: str
+    counted_as_planned: bool
+    lever_angle: float | None
+    reading_uncertainty: float
+    mark_uncertainty: float
+
+    @classmethod
+    def of(cls, job: Job, survey: RunoutSurvey, station: str) -> "_Means":
+        lever = survey.set_up.lever_angle
+        return cls(
+            position=_position(job, station),
+            angles=_angles(survey.angles, survey.counted == "as planned"),
+            unit=survey.unit,
+            counted_as_planned=survey.counted == "as planned",
+            lever_angle=None if lever is None else math.radians(lever.si),
+            reading_uncertainty=reading_uncertainty(job, survey),
+            mark_uncertainty=_mark_uncertainty(job),
+        )
+
+    def value(self, text: str | None) -> float:
+        if text is None:
+            return math.nan
+        value = _metres(text, self.unit)
+        if self.lever_angle is None:
+            return value
+        return lever_corrected(reading=value, lever_angle=self.lever_angle)
+
+
 def read_station(job: Job, survey: RunoutSurvey, readings: StationReadings) -> StationRunout:
     """Turn the typed readings of one station into a vector with its uncertainty."""
-    plan = job.plan
-    position = plan.station(readings.station).position.si
-    angles = _angles(survey)
+    return _read_station(_Means.of(job, survey, readings.station), readings)
+
+
+# While a survey is read, one station changes with each key; the others are found here.
+@lru_cache(maxsize=8192)
+def _read_station(means: _Means, readings: StationReadings) -> StationRunout:
+    angles = np.array(means.angles, dtype=np.float64)
     values = np.array(
-        [_value(survey, text) for text in readings.typed]
+        [means.value(text) for text in readings.typed]
         + [math.nan] * (len(angles) - len(readings.typed)),
         dtype=np.float64,
     )
     count = int(np.sum(~np.isnan(values)))
     fit: HarmonicFit | None = None
     vector, uncertainty, total = complex(math.nan, math.nan), math.nan, math.nan
-    instrument = reading_uncertainty(job, survey)
     if count >= _LEAST_MARKS:
         try:
             fit = fit_harmonics(
                 angles=angles,
                 readings=values,
-                instrument_uncertainty=instrument,
-                indexing_uncertainty=_mark_uncertainty(job),
+                instrument_uncertainty=means.reading_uncertainty,
+                indexing_uncertainty=means.mark_uncertainty,
             )
         except OutOfRangeError:
             fit = None
     if fit is not None:
         vector, uncertainty, total = fit.eccentricity, fit.vector_uncertainty, fit.sampled_tir
     elif readings.total is not None:
-        total = _value(survey, readings.total)
+        total = means.value(readings.total)
         if readings.high_spot is not None:
-            turn = _turn(survey, math.radians(readings.high_spot.si))
+            turn = _turned(math.radians(readings.high_spot.si), means.counted_as_planned)
             vector = total / 2.0 * complex(math.cos(turn), math.sin(turn))
-            uncertainty = math.hypot(instrument, total / 2.0 * _mark_uncertainty(job))
+            uncertainty = math.hypot(
+                means.reading_uncertainty, total / 2.0 * means.mark_uncertainty
+            )
     closure = None
     if readings.again is not None and readings.typed and readings.typed[0] is not None:
-        closure = _value(survey, readings.again) - values[0]
+        closure = means.value(readings.again) - values[0]
     return StationRunout(
-        readings.station, position, angles, values, fit, vector, uncertainty, total, closure
+        readings.station,
+        means.position,
+        angles,
+        values,
+        fit,
+        vector,
+        uncertainty,
+        total,
+        closure,
     )
 
 
-@lru_cache(maxsize=1024)
 def read_survey(job: Job, survey: RunoutSurvey) -> SurveyRunout:
     """Turn a survey into vectors, and into the journal axis once both journals are read.
 
-    A survey read before is not read again; give the job without its entries, so that it is known
-    again after the next one.
+    A survey read before is not read again.
     """
+    return _read_survey(ground_of(job), survey)
+
+
+@lru_cache(maxsize=1024)
+def _read_survey(ground: Ground, survey: RunoutSurvey) -> SurveyRunout:
+    job = ground.job
     stations = tuple(read_station(job, survey, one) for one in survey.stations)
     keys = [one.key for one in stations]
     in_axis = uncertainty = None
@@ -258,25 +310,23 @@ def _or_zero(value: float) -> float:
     return 0.0 if math.isnan(value) else value
 
 
-def _turn(survey: RunoutSurvey, angle: float) -> float:
+def _turned(angle: float, as_planned: bool) -> float:
     """Count an angle as the plan does; a survey counted the other way is mirrored, not turned."""
-    return angle if survey.counted == "as planned" else -angle % (2.0 * math.pi)
+    return angle if as_planned else -angle % (2.0 * math.pi)
 
 
-def _angles(survey: RunoutSurvey) -> npt.NDArray[np.float64]:
-    return np.array(
-        [_turn(survey, math.radians(angle.si)) for angle in survey.angles], dtype=np.float64
-    )
+@lru_cache(maxsize=64)
+def _angles(typed: tuple[Angle, ...], as_planned: bool) -> tuple[float, ...]:
+    return tuple(_turned(math.radians(angle.si), as_planned) for angle in typed)
 
 
-def _value(survey: RunoutSurvey, text: str | None) -> float:
-    if text is None:
-        return math.nan
-    value = Length.read(text, survey.unit).si
-    lever = survey.set_up.lever_angle
-    if lever is None:
-        return value
-    return lever_corrected(reading=value, lever_angle=math.radians(lever.si))
+@lru_cache(maxsize=65536)
+def _metres(text: str, unit: str) -> float:
+    return Length.read(text, unit).si
+
+
+def _position(job: Job, station: str) -> float:
+    return job.plan.station(station).position.si
 
 
 def reading_uncertainty(job: Job, survey: RunoutSurvey) -> float:

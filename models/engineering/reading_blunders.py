@@ -6,8 +6,8 @@ from collections.abc import Sequence
 import numpy as np
 import numpy.typing as npt
 
+from models.engineering.circle import Circle
 from models.engineering.errors import OutOfRangeError
-from models.engineering.harmonics import fit_harmonics
 from models.engineering.suspicion import Mistake, Suspicion
 
 __all__ = ["copied_survey", "unclosed_circle", "wild_reading"]
@@ -77,34 +77,31 @@ def wild_reading(
     for name, size in (("scatter", scatter), ("resolution", resolution)):
         if not size > 0.0:
             raise OutOfRangeError(name, size, "be more than 0")
-    marks = np.asarray(angles, dtype=np.float64)
+    marks = Circle.checked(angles)
     row = np.asarray(readings, dtype=np.float64)
-    count = int(np.count_nonzero(~np.isnan(row)))
-    # Both fits need the same harmonics, and the one with a reading less allows fewer.
-    highest = 2 if count > _LEAST_READINGS else 1
-    whole = fit_harmonics(angles=marks, readings=row, highest=highest)
-    if count < _LEAST_READINGS:
+    there = np.flatnonzero(~np.isnan(row))
+    used, places = row[there], tuple(marks[there].tolist())
+    # The fit without a reading needs the same harmonics, and one with a mark less allows fewer.
+    highest = 2 if Circle.distinct(places) > _LEAST_READINGS else 1
+    circle = Circle.of(places, highest)
+    if used.size < _LEAST_READINGS:
         return None
-    worst = (0.0, 0, 0.0, 0.0)
-    for mark in np.flatnonzero(~np.isnan(row)).tolist():
-        others = row.copy()
-        others[mark] = np.nan
-        fit = fit_harmonics(angles=marks, readings=others, highest=highest)
-        forecast = _at(fit.mean, fit.eccentricity, fit.second, float(marks[mark]))
-        freedom = max(fit.degrees_of_freedom, 1)
-        seen = (
-            float(np.median(np.abs(fit.residuals[~np.isnan(fit.residuals)])))
-            * math.sqrt(fit.count / freedom)
-            / 0.6745
-        )
-        one = math.sqrt(max(scatter, seen) ** 2 + resolution**2 / 12.0)
-        # A deleted residual exceeds the plain one by 1 / (1 - h): so h need not be worked out.
-        off = float(row[mark]) - forecast
-        plain = abs(float(whole.residuals[mark]))
-        leverage_gap = min(plain / abs(off), 1.0) if off else 1.0
-        ratio = abs(off) * math.sqrt(leverage_gap) / (_SIGMAS * one)
-        worst = max(worst, (ratio, mark, forecast, one))
-    ratio, mark, forecast, one = worst
+    # With the hat matrix H = D S, leaving reading i out changes the other residuals by
+    # h_ij e_i / (1 - h_i) and foretells it e_i / (1 - h_i) off: no fit is made anew.
+    hat = circle.design @ circle.solver
+    room = np.maximum(1.0 - hat.diagonal(), 1e-9)
+    plain = used - hat @ used
+    off = plain / room
+    residuals = np.abs(plain + hat * off[:, np.newaxis])
+    count = used.size - 1
+    others = residuals[~np.eye(used.size, dtype=bool)].reshape(used.size, count)
+    freedom = max(count - circle.design.shape[1], 1)
+    seen = np.median(others, axis=1) * math.sqrt(count / freedom) / 0.6745
+    doubt = np.sqrt(np.maximum(scatter, seen) ** 2 + resolution**2 / 12.0)
+    ratios = np.abs(off) * np.sqrt(room) / (_SIGMAS * doubt)
+    worst = int(np.argmax(ratios))
+    ratio, one = float(ratios[worst]), float(doubt[worst])
+    mark, forecast = int(there[worst]), float(used[worst] - off[worst])
     if ratio <= 1.0:
         return None
     return Suspicion(
@@ -236,13 +233,6 @@ def copied_survey(
     if ratio <= 1.0:
         return None
     return Suspicion(Mistake.COPIED, evidence=ratio, mark=start)
-
-
-def _at(mean: float, offset: complex, second: complex, angle: float) -> float:
-    value = mean + offset.real * math.cos(angle) + offset.imag * math.sin(angle)
-    if math.isnan(second.real):
-        return value
-    return value + second.real * math.cos(2 * angle) + second.imag * math.sin(2 * angle)
 
 
 def _meant(reading: float, forecast: float, near: float) -> float:

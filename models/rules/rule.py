@@ -4,6 +4,7 @@ import inspect
 from collections.abc import Callable, Mapping
 from dataclasses import dataclass, field, fields
 from enum import Enum
+from functools import cache
 from typing import Any
 
 __all__ = ["Finding", "Judgement", "Rule", "Subject", "Value", "Verdict", "known", "words_for"]
@@ -93,13 +94,12 @@ class Rule:
     @property
     def inputs(self) -> tuple[str, ...]:
         """Names of the facts this rule needs."""
-        return tuple(inspect.signature(self.judge).parameters)
+        return _parameters(self.judge)[0]
 
     @property
     def may_lack(self) -> frozenset[str]:
         """Names of facts that may be missing: their parameter has None as its default."""
-        parameters = inspect.signature(self.judge).parameters.values()
-        return frozenset(one.name for one in parameters if one.default is None)
+        return _parameters(self.judge)[1]
 
     def apply(self, facts: Any, subject: Subject) -> "Finding":  # noqa: ANN401  (any facts class)
         """Judge the facts; a missing input is not judged, never within."""
@@ -123,6 +123,14 @@ class Rule:
             subject=subject,
             limit_origin=getattr(facts, "limit_origin", None),
         )
+
+
+@cache
+def _parameters(judge: Callable[..., Judgement]) -> tuple[tuple[str, ...], frozenset[str]]:
+    """Read a judge's parameters and those that may be missing; its source does not change."""
+    parameters = inspect.signature(judge).parameters
+    lacking = frozenset(one.name for one in parameters.values() if one.default is None)
+    return tuple(parameters), lacking
 
 
 @dataclass(frozen=True)

@@ -15,7 +15,6 @@ from reports.step_pages.sizes import sizes
 
 __all__ = ["step_pages"]
 
-
 _PER_SPREAD = 2
 
 

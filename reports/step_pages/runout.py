@@ -30,10 +30,7 @@ from reports.sheet.pictures import Curve, PlaneCurve
 
 __all__ = ["what_the_shaft_did"]
 
-
 _DIAL_WIDTH, _DIAL_HEIGHT = 46.0, 42.0
-
-
 _LAYOUT = replace(
     PAPER_LAYOUT,
     height=76.0,

@@ -15,11 +15,8 @@ from models.units import unit_set
 
 __all__ = ["closure_allowed", "runout_findings", "station_facts", "survey_findings"]
 
-
 # Where the plan sets no closure limit: common practice, as 2 µm or 5 % of the total.
 _CLOSURE_FLOOR = 2e-6
-
-
 _CLOSURE_SHARE = 0.05
 
 

@@ -4,10 +4,9 @@ from collections.abc import Sequence
 from dataclasses import replace
 from functools import lru_cache
 
-import msgspec
-
 from models.assess.attempts.findings import attempt_findings
 from models.assess.attempts.view import Attempt, ItemView
+from models.assess.ground import Ground, ground_of
 from models.assess.heat import item_heat
 from models.assess.runout import compare_surveys, read_survey, where_the_bend_sits
 from models.assess.sizes import land_fit
@@ -46,7 +45,7 @@ def assess_attempt(
     An attempt that was worked out before from the same facts is not worked out again: all of it is
     frozen, so that a new entry costs its own attempt only.
     """
-    ground = msgspec.structs.replace(job, entries=(), verdicts=(), head=None)
+    ground = ground_of(job)
     return _assess_attempt(
         ground, opened, tuple(entries), tuple(earlier_sizes), baseline, bare_shaft
     )
@@ -54,13 +53,14 @@ def assess_attempt(
 
 @lru_cache(maxsize=1024)
 def _assess_attempt(
-    job: Job,
+    ground: Ground,
     opened: AttemptOpened,
     entries: tuple[AnyEntry, ...],
     earlier_sizes: tuple[SizeSurvey, ...],
     named_baseline: RunoutSurvey | None,
     bare_shaft: RunoutSurvey | None,
 ) -> Attempt:
+    job = ground.job
     step = job.plan.step(opened.place.step or "")
     mine = tuple(read_survey(job, one) for one in entries if isinstance(one, RunoutSurvey))
     fresh = [one for one in mine if one.entry.purpose == "before" and one.entry.is_closed]

@@ -11,10 +11,7 @@ from models.rules.progress import Act, NextAct
 
 __all__ = ["confirmation_form"]
 
-
 _YES_NO = (("yes", "Yes"), ("no", "No"), ("does not apply", "Does not apply"))
-
-
 _CHECKS = (
     ("facing", "Facing the right way"),
     ("match mark", "Match mark found"),

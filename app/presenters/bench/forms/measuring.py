@@ -19,11 +19,8 @@ from models.units import Angle, Length
 
 __all__ = ["sizes_form"]
 
-
 # Where sizes are taken over a land, and how far from its ends (common practice).
 _FROM_END = 5e-3
-
-
 _SHORT_LAND = 0.05
 
 
