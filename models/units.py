@@ -14,10 +14,13 @@ from typing import Any, ClassVar, NamedTuple, Self
 __all__ = [
     "KINDS",
     "Angle",
+    "Conductivity",
+    "Density",
     "Duration",
     "Expansion",
     "FieldStrength",
     "Force",
+    "HeatCapacity",
     "Length",
     "Mass",
     "Power",
@@ -428,6 +431,54 @@ class FieldStrength(Quantity):
     )
 
 
+class Density(Quantity):
+    """A density; SI value in kg/m³."""
+
+    __slots__ = ()
+
+    name = "a density"
+    small_unit = "mg/m³"
+    si_unit = "kg/m³"
+    small_per_si = Decimal(10) ** 6
+    # 1 lb = 0.45359237 kg, 1 in = 0.0254 m.
+    units = _table(
+        _small("kg/m³", "1000000", "kg/m3"),
+        _small("g/cm³", "1000000000", "g/cm3"),
+        _small("lb/in³", "27679904710.2", "lb/in3"),
+    )
+
+
+class Conductivity(Quantity):
+    """A thermal conductivity; SI value in W/(m·K)."""
+
+    __slots__ = ()
+
+    name = "a thermal conductivity"
+    small_unit = "µW/(m·K)"
+    si_unit = "W/(m·K)"
+    small_per_si = Decimal(10) ** 6
+    # 1 Btu = 1055.05585262 J (international table).
+    units = _table(
+        _small("W/(m·K)", "1000000", "W/(m K)", "W/mK"),
+        _small("Btu/(h·ft·°F)", "1730734.6663713911"),
+    )
+
+
+class HeatCapacity(Quantity):
+    """A specific heat capacity; SI value in J/(kg·K)."""
+
+    __slots__ = ()
+
+    name = "a specific heat capacity"
+    small_unit = "mJ/(kg·K)"
+    si_unit = "J/(kg·K)"
+    small_per_si = Decimal(1000)
+    units = _table(
+        _small("J/(kg·K)", "1000", "J/(kg K)", "J/kgK"),
+        _small("Btu/(lb·°F)", "4186800"),
+    )
+
+
 KINDS: tuple[type[Quantity], ...] = (
     Length,
     Temperature,
@@ -444,6 +495,9 @@ KINDS: tuple[type[Quantity], ...] = (
     Expansion,
     Ratio,
     FieldStrength,
+    Density,
+    Conductivity,
+    HeatCapacity,
 )
 
 

@@ -11,10 +11,13 @@ from hypothesis import strategies as st
 from models.units import (
     KINDS,
     Angle,
+    Conductivity,
+    Density,
     Duration,
     Expansion,
     FieldStrength,
     Force,
+    HeatCapacity,
     Length,
     Mass,
     Power,
@@ -63,6 +66,12 @@ SAME = [
     (Expansion, "µin/(in·°F)", "microinch/inch/delta_degF", "1/kelvin"),
     (FieldStrength, "gauss", "shop_gauss", "T"), (FieldStrength, "mT", "mT", "T"),
     (FieldStrength, "µT", "uT", "T"),
+    (Density, "kg/m³", "kg/m**3", "kg/m**3"), (Density, "g/cm³", "g/cm**3", "kg/m**3"),
+    (Density, "lb/in³", "lb/inch**3", "kg/m**3"),
+    (Conductivity, "W/(m·K)", "W/m/kelvin", "W/m/kelvin"),
+    (Conductivity, "Btu/(h·ft·°F)", "Btu_it/hour/foot/delta_degF", "W/m/kelvin"),
+    (HeatCapacity, "J/(kg·K)", "J/kg/kelvin", "J/kg/kelvin"),
+    (HeatCapacity, "Btu/(lb·°F)", "Btu_it/lb/delta_degF", "J/kg/kelvin"),
 ]  # fmt: skip
 
 

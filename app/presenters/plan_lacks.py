@@ -6,7 +6,7 @@ from collections import defaultdict
 from collections.abc import Iterator, Mapping
 from dataclasses import dataclass
 
-from models.engineering.materials import MATERIALS
+from models.assess.materials import material_of
 from models.job import Item, Plan, Step
 
 __all__ = ["LackRow", "lacks_of"]
@@ -68,7 +68,7 @@ def _places_words(where: Mapping[int, str]) -> str:
 
 def _lacks_of_rotor(plan: Plan) -> Iterator[tuple[str, str]]:
     rotor = plan.rotor
-    if plan.shaft.material not in MATERIALS:
+    if material_of(plan, plan.shaft.material) is None:
         yield (
             f"material of the shaft (“{plan.shaft.material}” is unknown)",
             "fit and heat not judged",
@@ -98,7 +98,7 @@ def _lacks_of_item(plan: Plan, item: Item) -> Iterator[tuple[str, str]]:
         yield "axial position", "where the part rests not judged"
     if not item.lands:
         return
-    if item.material is None or item.material not in MATERIALS:
+    if material_of(plan, item.material) is None:
         yield "material", "fit, heat and strength not judged"
     if item.kind == "hot" and item.mounting_clearance is None:
         yield "clearance while mounting", "heat target not worked out"

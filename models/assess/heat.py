@@ -4,14 +4,15 @@ from collections.abc import Sequence
 from dataclasses import dataclass
 from functools import cached_property
 
-from models.assess.sizes import LandFit, expansion_of
+from models.assess.materials import expansion_of, material_of
+from models.assess.sizes import LandFit
 from models.engineering.cooling import HotPart
 from models.engineering.drop_window import DropWindow, drop_window
 from models.engineering.errors import OutOfRangeError
 from models.engineering.heating import gauge_diameter, target_temperature
-from models.engineering.materials import EXPANSION_SPREAD, MATERIALS
+from models.engineering.materials import EXPANSION_SPREAD
 from models.engineering.over_seat import Seat
-from models.job import Confirmation, GaugeTry, Heating, Hot, Item, Job
+from models.job import Confirmation, GaugeTry, Heating, Hot, Item, Job, Plan
 from models.rules.facts import HeatFacts
 from models.units import unit_set
 
@@ -36,8 +37,7 @@ class Heat:
     hottest: float | None
     spread: float | None
     fits: tuple[LandFit, ...]
-    shaft_material: str
-    shaft_bore: float
+    plan: Plan
 
     @cached_property
     def window(self) -> DropWindow | None:
@@ -75,8 +75,7 @@ def item_heat(job: Job, item: Item, fits: Sequence[LandFit], heatings: Sequence[
         hottest=max(hottest, default=None),
         spread=max(everywhere) - min(everywhere) if len(everywhere) > 1 else None,
         fits=tuple(fits),
-        shaft_material=job.plan.shaft.material,
-        shaft_bore=job.plan.shaft.bore.si if job.plan.shaft.bore else 0.0,
+        plan=job.plan,
     )
 
 
@@ -151,7 +150,8 @@ def _targets(
     job: Job, item: Item, fits: Sequence[LandFit], shaft_temperature: float | None
 ) -> tuple[float | None, float | None]:
     """Find the temperature every land opens at, with and without the margin for the spread."""
-    part, shaft = expansion_of(item.material), expansion_of(job.plan.shaft.material)
+    plan = job.plan
+    part, shaft = expansion_of(plan, item.material), expansion_of(plan, plan.shaft.material)
     measured = [fit for fit in fits if fit.interference is not None]
     if (
         part is None
@@ -188,7 +188,7 @@ def _gauge_sizes(
     job: Job, item: Item, fits: Sequence[LandFit], shaft_temperature: float | None
 ) -> tuple[tuple[str, float], ...]:
     """Size the gauge of each land: the greatest seat at its own temperature plus the clearance."""
-    shaft = expansion_of(job.plan.shaft.material)
+    shaft = expansion_of(job.plan, job.plan.shaft.material)
     if shaft is None or shaft_temperature is None or item.mounting_clearance is None:
         return ()
     return tuple(
@@ -208,9 +208,10 @@ def _gauge_sizes(
 
 def _window(heat: Heat) -> DropWindow | None:
     item = heat.item
-    part, shaft = MATERIALS.get(item.material or ""), MATERIALS.get(heat.shaft_material)
-    part_expansion = expansion_of(item.material)
-    shaft_expansion = expansion_of(heat.shaft_material)
+    plan = heat.plan
+    part, shaft = material_of(plan, item.material), material_of(plan, plan.shaft.material)
+    part_expansion = expansion_of(plan, item.material)
+    shaft_expansion = expansion_of(plan, plan.shaft.material)
     tight = [fit for fit in heat.fits if fit.interference is not None]
     if (
         part is None
@@ -246,7 +247,7 @@ def _window(heat: Heat) -> DropWindow | None:
                 density=shaft.density,
                 specific_heat=shaft.specific_heat,
                 expansion=shaft_expansion,
-                inner_diameter=heat.shaft_bore,
+                inner_diameter=plan.shaft.bore.si if plan.shaft.bore else 0.0,
             ),
             part_expansion=part_expansion,
             bore_temperature=heat.coldest_bore,

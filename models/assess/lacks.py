@@ -5,7 +5,7 @@ None of it keeps a plan from being issued; what rests on it is not judged.
 
 from collections.abc import Iterable
 
-from models.engineering.materials import MATERIALS
+from models.assess.materials import material_of
 from models.job import Item, Job, Land, Plan, Step
 
 __all__ = ["lacks"]
@@ -40,7 +40,7 @@ def _of_rotor(plan: Plan) -> Iterable[str]:
 
 def _of_shaft(plan: Plan) -> Iterable[str]:
     shaft = plan.shaft
-    if shaft.material not in MATERIALS:
+    if material_of(plan, shaft.material) is None:
         yield (
             f"Shaft: its material “{shaft.material}” is not in the table, so expansion, pressure, "
             "stress, sag and critical speed are not worked out."
@@ -72,12 +72,12 @@ def _of_item(plan: Plan, step: Step, item: Item) -> Iterable[str]:
     if item is step.items[0] and step.survey_due and step.change_limit is None:
         yield "the step has no change limit, so what its mount moves is not judged."
     if item.mass is None:
-        known = item.material in MATERIALS
+        known = material_of(plan, item.material) is not None
         how = "is estimated from its outline" if known else "is left out"
         yield f"no mass, so it {how} in journal loads, sag and critical speed."
     if item.kind != "hot":
         return
-    if item.material not in MATERIALS:
+    if material_of(plan, item.material) is None:
         named = f"its material “{item.material}” is not in the table"
         if not item.material:
             named = "no material"

@@ -8,6 +8,7 @@ import math
 from dataclasses import dataclass
 from typing import NamedTuple
 
+from models.assess.materials import material_of
 from models.engineering.beam import (
     CriticalSpeed,
     StaticDeflection,
@@ -15,7 +16,7 @@ from models.engineering.beam import (
     static_deflection,
 )
 from models.engineering.errors import OutOfRangeError
-from models.engineering.materials import MATERIALS, modulus
+from models.engineering.materials import modulus
 from models.engineering.shaft import (
     AddedMass,
     JournalLoads,
@@ -181,7 +182,7 @@ def journal_positions(plan: Plan) -> tuple[float, float]:
 
 def sections_of(plan: Plan) -> list[StepSection]:
     """Turn the drawn steps of the shaft into sections; empty where its material is unknown."""
-    found = MATERIALS.get(plan.shaft.material)
+    found = material_of(plan, plan.shaft.material)
     if found is None:
         return []
     stiffness = modulus(material=found, temperature=_REFERENCE_TEMPERATURE)
@@ -202,19 +203,19 @@ def masses_on(plan: Plan, *, up_to: str | None = None) -> Masses:
     """Weigh the parts on the shaft after a step (the last where none is named), in their order."""
     steps = plan.steps if up_to is None else plan.steps[: plan.step_number(up_to)]
     items = [item for step in steps for item in step.items]
-    found = [(item.key, _mass(item)) for item in items]
+    found = [(item.key, _mass(plan, item)) for item in items]
     return Masses(
         parts=tuple(part for _, part in found if part is not None),
         without=tuple(key for key, part in found if part is None),
     )
 
 
-def _mass(item: Item) -> PartMass | None:
+def _mass(plan: Plan, item: Item) -> PartMass | None:
     outline = item.outline
     middle = (outline.start.si + outline.end.si) / 2.0
     if item.mass is not None:
         return PartMass(item.key, item.name, middle, item.mass.si, calculated=False)
-    found = MATERIALS.get(item.material or "")
+    found = material_of(plan, item.material)
     if found is None:
         return None
     # A full ring: too heavy for a wheel, whose blades leave most of its width empty.

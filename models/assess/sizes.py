@@ -7,9 +7,8 @@ from dataclasses import dataclass
 import numpy as np
 import numpy.typing as npt
 
+from models.assess.materials import expansion_of
 from models.engineering.errors import OutOfRangeError
-from models.engineering.expansion import MeanExpansion
-from models.engineering.materials import MATERIALS, mean_expansion
 from models.engineering.size_uncertainty import SizeMeasurement, interference_uncertainty
 from models.engineering.sizes import (
     Interference,
@@ -21,7 +20,7 @@ from models.engineering.sizes import (
 from models.job import Item, Job, Land, SizeSurvey
 from models.units import Length
 
-__all__ = ["LandFit", "Sizes", "expansion_of", "land_fit", "read_sizes", "size_problem"]
+__all__ = ["LandFit", "Sizes", "land_fit", "read_sizes", "size_problem"]
 
 # A steel instrument where its card says nothing else (common practice).
 _GAUGE_EXPANSION = 11.5e-6
@@ -57,14 +56,6 @@ class LandFit:
         return all(
             one is not None and one.entry.closed_at is not None for one in (self.seat, self.bore)
         )
-
-
-def expansion_of(material: str | None) -> MeanExpansion | None:
-    """Give the mean coefficient of a material as a function of temperature."""
-    found = MATERIALS.get(material) if material else None
-    if found is None:
-        return None
-    return lambda temperature: mean_expansion(material=found, temperature=temperature)
 
 
 def read_sizes(survey: SizeSurvey) -> npt.NDArray[np.float64]:
@@ -134,7 +125,7 @@ def _sum_up(job: Job, material: str | None, survey: SizeSurvey) -> Sizes:
     order = np.argsort(places, kind="stable")
     ordered = [places[index] for index in order]
     as_read = summarise_sizes(diameters=diameters[order], axial_positions=ordered)
-    expansion = expansion_of(material)
+    expansion = expansion_of(job.plan, material)
     part = survey.part_temperature
     if part is None or expansion is None:
         return Sizes(survey, as_read, None, None)

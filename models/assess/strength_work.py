@@ -3,6 +3,7 @@
 from collections.abc import Sequence
 from dataclasses import dataclass, replace
 
+from models.assess.materials import material_of
 from models.assess.sizes import LandFit
 from models.assess.strength import FitStrength, LandAtSpeed, LandStrength, Release, Strength
 from models.engineering.errors import OutOfRangeError
@@ -14,7 +15,7 @@ from models.engineering.holding import (
     holding_torque,
     torque_from_power,
 )
-from models.engineering.materials import MATERIALS, Material, modulus
+from models.engineering.materials import Material, modulus
 from models.engineering.rotation import (
     Joint,
     growth_at_speed,
@@ -81,7 +82,7 @@ def fit_strength(plan: Plan, item: Item, fits: Sequence[LandFit]) -> FitStrength
 
 
 def _pair(plan: Plan, item: Item) -> _Pair | None:
-    hub, shaft = MATERIALS.get(item.material or ""), MATERIALS.get(plan.shaft.material)
+    hub, shaft = material_of(plan, item.material), material_of(plan, plan.shaft.material)
     if hub is None or shaft is None:
         return None
     return _Pair(

@@ -8,6 +8,7 @@ clock angles from the reference mark, the way the rotor names.
 from typing import Literal
 
 from models.job.base import Frozen
+from models.job.material import OwnMaterial
 from models.units import (
     Angle,
     Length,
@@ -274,6 +275,8 @@ class Plan(Frozen, frozen=True, kw_only=True):
     bare_shaft_limit: LengthLimit | None = None
     smoothing_factor: float | None = None
     smoothing_edition: str = ""
+    # Copies of the shop's own materials that this plan rests on; by name before the table.
+    materials: tuple[OwnMaterial, ...] = ()
 
     def step(self, key: str) -> Step:
         """Find a step by its key."""

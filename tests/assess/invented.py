@@ -99,8 +99,7 @@ def with_material(
         moduli=[(20.0, modulus)],
         **more,
     )
-    for module in ("shaft", "strength_work"):
-        monkeypatch.setattr(f"models.assess.{module}.MATERIALS", {"own": own})
+    monkeypatch.setattr("models.assess.materials.MATERIALS", {"own": own})
 
 
 def fit(land: Land, least: float, greatest: float, unsure: float | None = None) -> LandFit:

@@ -1,7 +1,7 @@
 """Whether an attempt may be read, from its temperatures."""
 
 from models.assess.attempts.view import Attempt
-from models.assess.sizes import expansion_of
+from models.assess.materials import expansion_of
 from models.engineering.bow_shape import side_to_side_bow
 from models.job import Cooling, Job
 from models.rules.facts import CoolFacts
@@ -16,7 +16,6 @@ def cooling_matters(attempt: Attempt) -> bool:
 
 
 def cool_facts(job: Job, attempt: Attempt) -> CoolFacts:
-    """Gather what says whether the shaft may be read."""
     """State how warm the rotor last was, from the temperatures taken before the survey judged."""
     limits = job.plan.cooling
     cooling = _cooling_before(attempt)
@@ -52,7 +51,7 @@ def _cooling_before(attempt: Attempt) -> Cooling | None:
 
 def _bow_per_kelvin(job: Job) -> float | None:
     """Work out the mid-span bow per kelvin across, from the thinnest stretch between journals."""
-    expansion = expansion_of(job.plan.shaft.material)
+    expansion = expansion_of(job.plan, job.plan.shaft.material)
     if expansion is None:
         return None
     first = job.plan.station(job.plan.first_journal).position.si
