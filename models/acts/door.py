@@ -4,6 +4,7 @@ from collections.abc import Callable
 from dataclasses import dataclass
 from datetime import datetime
 
+from models.acts.materials import keep_material, materials_kept
 from models.acts.permissions import demand, permission_for
 from models.acts.verdicts import (
     changed_verdicts,
@@ -21,6 +22,8 @@ from models.job import (
     Hot,
     Job,
     Mount,
+    OwnMaterial,
+    Person,
     Question,
     RunoutReading,
     Settled,
@@ -68,6 +71,16 @@ class Acts:
         """Read one job whole."""
         with self._store.reading() as session:
             return queries.read_job(session, number)
+
+    def materials(self) -> tuple[OwnMaterial, ...]:
+        """List the shop's own materials."""
+        return materials_kept(self._store)
+
+    def keep_material(self, material: OwnMaterial, *, person: Person, act_id: str) -> Recorded:
+        """Keep a material that the shop answers for, or its next version."""
+        at = self.now()
+        sequence = keep_material(self._store, material, person=person, act_id=act_id, at=at)
+        return Recorded(sequence, at)
 
     def bring_in(self, job: Job, *, by: str, act_id: str) -> None:
         """Take a whole job from a job file into the record; one that is there is refused."""

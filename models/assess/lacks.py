@@ -5,7 +5,7 @@ None of it keeps a plan from being issued; what rests on it is not judged.
 
 from collections.abc import Iterable
 
-from models.assess.materials import material_of
+from models.assess.materials import material_of, material_problem
 from models.job import Item, Job, Land, Plan, Step
 
 __all__ = ["lacks"]
@@ -40,6 +40,10 @@ def _of_rotor(plan: Plan) -> Iterable[str]:
 
 def _of_shaft(plan: Plan) -> Iterable[str]:
     shaft = plan.shaft
+    for own in plan.materials:
+        problem = material_problem(own)
+        if problem is not None:
+            yield f"Material “{own.name}”: it cannot be worked with, {problem}."
     if material_of(plan, shaft.material) is None:
         yield (
             f"Shaft: its material “{shaft.material}” is not in the table, so expansion, pressure, "

@@ -28,6 +28,7 @@ from models.job import (
     Step,
 )
 from models.jobfile.faults import MISSING, Fault, Words
+from models.jobfile.material_checks import material_faults
 from models.units import Angle, Length, Quantity, UnreadableNumberError
 
 __all__ = ["faults"]
@@ -142,6 +143,9 @@ def _plan(place: str, plan: Plan) -> Iterator[Fault]:
     for index, step in enumerate(plan.steps):
         yield from _step(f"{place}.steps[{index}]", step, seen)
     yield from _clock(f"{place}.runout.marks", plan.runout.marks)
+    yield from _once(f"{place}.materials", "name", (own.name for own in plan.materials))
+    for index, own in enumerate(plan.materials):
+        yield from material_faults(f"{place}.materials[{index}]", own)
 
 
 def _journals(place: str, plan: Plan) -> Iterator[Fault]:

@@ -13,6 +13,7 @@ from models.job import (
     Head,
     Instrument,
     Job,
+    OwnMaterial,
     Person,
     Plan,
     Question,
@@ -20,7 +21,7 @@ from models.job import (
 )
 from models.record import gate, tables
 from models.record.canonical import normal
-from models.record.documents import inputs_text, plan_text
+from models.record.documents import inputs_text, material_text, plan_text
 from models.record.entry_rows import Line, entry_lines, new_key, question_line
 from models.record.errors import JobKnownError, UnknownJobError, UnknownPersonError
 from models.record.flat import Cell, columns_of
@@ -149,6 +150,16 @@ class Act:
         """Add components, or what changed about them."""
         for component in components:
             self._add_version(tables.Component, ("serial", "item"), columns_of(component))
+
+    def add_materials(self, materials: Iterable[OwnMaterial]) -> None:
+        """Add materials of the shop's own, or what changed about them; the old version stays."""
+        for one in materials:
+            row: dict[str, Cell] = {
+                "name": one.name,
+                "source": one.source,
+                "document_json": material_text(one),
+            }
+            self._add_version(tables.ShopMaterial, ("name",), row)
 
     def add_plan(self, plan: Plan) -> None:
         """Add a plan revision as issued; the last one again is not added twice."""

@@ -1,4 +1,4 @@
-"""Whole documents as canonical JSON text: plans as issued, and the inputs of verdicts.
+"""Whole documents as canonical JSON text: plans as issued, materials, the inputs of verdicts.
 
 Every field is written, also one at its default, so that a later default cannot change what was
 issued. A number with a fraction stands as text in an object of its own.
@@ -9,11 +9,18 @@ from typing import Any
 
 import msgspec
 
-from models.job import Plan
+from models.job import OwnMaterial, Plan
 from models.record.canonical import Plain, canonical_text, normal
 from models.units import Quantity, decode
 
-__all__ = ["inputs_from", "inputs_text", "plan_from", "plan_text"]
+__all__ = [
+    "inputs_from",
+    "inputs_text",
+    "material_from",
+    "material_text",
+    "plan_from",
+    "plan_text",
+]
 
 _FRACTION = "decimal"
 
@@ -26,6 +33,16 @@ def plan_text(plan: Plan) -> str:
 def plan_from(text: str) -> Plan:
     """Read a plan back."""
     return msgspec.convert(_with_fractions(msgspec.json.decode(text)), Plan, dec_hook=decode)
+
+
+def material_text(material: OwnMaterial) -> str:
+    """Write a material of the shop's own as canonical JSON."""
+    return canonical_text(_plain(material))
+
+
+def material_from(text: str) -> OwnMaterial:
+    """Read a material back."""
+    return msgspec.convert(_with_fractions(msgspec.json.decode(text)), OwnMaterial, dec_hook=decode)
 
 
 def inputs_text(inputs: Mapping[str, float | str | bool | None]) -> str:

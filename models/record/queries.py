@@ -6,9 +6,9 @@ from typing import Any
 from sqlalchemy import Select, and_, func, select
 from sqlalchemy.orm import Session
 
-from models.job import Component, Head, Instrument, Job, Person, StoredVerdict
+from models.job import Component, Head, Instrument, Job, OwnMaterial, Person, StoredVerdict
 from models.record import tables
-from models.record.documents import inputs_from, plan_from
+from models.record.documents import inputs_from, material_from, plan_from
 from models.record.entry_reader import EntryReader
 from models.record.errors import UnknownJobError
 from models.record.flat import struct_from
@@ -16,7 +16,16 @@ from models.record.gate import GOOD_OUTCOMES
 from models.record.lookups import chain_of_job, head_of, instruments_in_force, shop_chain
 from models.record.tables import Base, table
 
-__all__ = ["JobRow", "head", "instruments", "job_rows", "people", "read_job", "shelf_query"]
+__all__ = [
+    "JobRow",
+    "head",
+    "instruments",
+    "job_rows",
+    "materials",
+    "people",
+    "read_job",
+    "shelf_query",
+]
 
 
 @dataclass(frozen=True, kw_only=True)
@@ -89,6 +98,15 @@ def instruments(session: Session) -> tuple[Instrument, ...]:
     """List the shop's instruments."""
     chain_id = shop_chain(session)
     return () if chain_id is None else _instruments(session, chain_id)
+
+
+def materials(session: Session) -> tuple[OwnMaterial, ...]:
+    """List the materials that the shop answers for, each as it knows it now."""
+    chain_id = shop_chain(session)
+    if chain_id is None:
+        return ()
+    rows = _newest(session, tables.ShopMaterial, chain_id, ("name",))
+    return tuple(material_from(row["document_json"]) for row in rows)
 
 
 def job_rows(session: Session) -> tuple[JobRow, ...]:

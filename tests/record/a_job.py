@@ -12,6 +12,7 @@ from models.job import (
     CoolingLimits,
     Correction,
     Decision,
+    ExpansionAt,
     GaugeTry,
     Handling,
     Heating,
@@ -21,10 +22,12 @@ from models.job import (
     Job,
     Land,
     LengthLimit,
+    ModulusAt,
     Mount,
     Note,
     Origin,
     Outline,
+    OwnMaterial,
     Person,
     Place,
     Plan,
@@ -46,9 +49,30 @@ from models.job import (
     TemperatureLimit,
     Warmth,
 )
-from models.units import Angle, Expansion, Length, Ratio, Temperature, TemperatureStep
+from models.units import (
+    Angle,
+    Conductivity,
+    Density,
+    Expansion,
+    HeatCapacity,
+    Length,
+    Pressure,
+    Ratio,
+    Temperature,
+    TemperatureStep,
+)
 
-__all__ = ["ANGLES", "NUMBER", "a_job", "a_survey", "an_attempt", "at", "attempt_at", "settled"]
+__all__ = [
+    "ANGLES",
+    "FORGING",
+    "NUMBER",
+    "a_job",
+    "a_survey",
+    "an_attempt",
+    "at",
+    "attempt_at",
+    "settled",
+]
 
 NUMBER = "R-17"
 ANGLES = tuple(Angle.read(f"{degrees}°") for degrees in (0, 90, 180, 270))
@@ -65,6 +89,23 @@ def celsius(text: str) -> Temperature:
 
 def limit(text: str, unit: str = "µm") -> LengthLimit:
     return LengthLimit(value=Length.read(text, unit), origin=DRAWING)
+
+
+# As a shop types it from the certificate of an invented forge.
+FORGING = OwnMaterial(
+    name="own forging",
+    source="certificate 17",
+    density=Density.read("0.2836 lb/in³"),
+    poisson=Ratio.read("0.29"),
+    expansions=(
+        ExpansionAt(temperature=celsius("100"), coefficient=Expansion.read("12 µm/(m·K)")),
+        ExpansionAt(temperature=celsius("300"), coefficient=Expansion.read("13 µm/(m·K)")),
+    ),
+    moduli=(ModulusAt(temperature=celsius("20"), modulus=Pressure.read("206 GPa")),),
+    conductivity=Conductivity.read("42 W/(m·K)"),
+    specific_heat=HeatCapacity.read("470 J/(kg·K)"),
+    yield_strength=Pressure.read("640 MPa"),
+)
 
 
 def at(minute: int) -> str:
@@ -146,6 +187,7 @@ def a_plan(revision: str = "A", reason: str = "first issue") -> Plan:
             origin=DRAWING,
         ),
         smoothing_factor=0.1,
+        materials=(FORGING,),
     )
 
 

@@ -16,7 +16,7 @@ from models.record.places import AnyReading
 from models.record.store import Store
 from models.record.tables import CHANGEABLE
 from models.units import Angle
-from tests.record.a_job import ANGLES, NUMBER, a_job, a_survey, at, celsius, mm
+from tests.record.a_job import ANGLES, FORGING, NUMBER, a_job, a_survey, at, celsius, mm
 
 __all__ = ["behind_the_back", "fill", "one_act", "tables_of"]
 
@@ -41,9 +41,11 @@ def fill(store: Store) -> None:
     with one_act(store, "shop", chain=journal.SHOP) as act:
         act.add_people(job.people)
         act.add_instruments(job.instruments)
+        act.add_materials([FORGING])
     with one_act(store, "shop again", chain=journal.SHOP) as act:
         act.add_people([msgspec.structs.replace(job.people[0], role="inspector")])
         act.add_instruments([msgspec.structs.replace(job.instruments[0], range="0 to 2 mm")])
+        act.add_materials([msgspec.structs.replace(FORGING, source="certificate 18")])
     with one_act(store, "facts again") as act:
         act.add_components([msgspec.structs.replace(job.components[0], revision="C")])
     with one_act(store, "opened") as act:

@@ -7,6 +7,7 @@ from models.record.tables.chains import *  # noqa: F403
 from models.record.tables.entries import *  # noqa: F403
 from models.record.tables.facts import *  # noqa: F403
 from models.record.tables.readings import *  # noqa: F403
+from models.record.tables.shop_materials import *  # noqa: F403
 
 __all__ = ["CHANGEABLE", "Base", "recorded_tables", "table"]
 

@@ -2,6 +2,8 @@
 
 from collections.abc import Callable
 
+from models.record.migrations.form_2 import shop_materials
+
 __all__: list[str] = []
 
 revision = "0002"
@@ -10,7 +12,7 @@ branch_labels = None
 depends_on = None
 
 # In the order in which their tables rest on each other.
-_LAID: tuple[Callable[[], None], ...] = ()
+_LAID: tuple[Callable[[], None], ...] = (shop_materials.lay,)
 
 
 def upgrade() -> None:
