@@ -1,0 +1,53 @@
+"""Killed at every statement boundary of every kind of act: nothing acknowledged is lost."""
+
+import json
+import subprocess
+import sys
+from pathlib import Path
+from typing import Any
+
+import pytest
+
+from tests.journeys.test_random_rotors import slice_of_this_commit
+from tests.record.survival.cases import CASES
+from tests.record.survival.live_code import kinds_of_acts
+
+ROOT = Path(__file__).resolve().parents[3]
+# A run takes one boundary in so many; which ones changes with the commit.
+_ONE_IN = 25
+
+
+def test_every_kind_of_act_that_the_program_has_is_killed_here() -> None:
+    assert kinds_of_acts() - CASES.keys() == set(), "add a case in tests/record/survival/cases.py"
+    assert CASES.keys() - kinds_of_acts() == set()
+
+
+def killed(folder: Path, *, part: int, of: int) -> dict[str, Any]:
+    """Run the program that kills, in a process that has nothing open."""
+    done = subprocess.run(
+        [sys.executable, "-m", "tests.record.survival.killed", str(folder), str(part), str(of)],
+        cwd=ROOT,
+        capture_output=True,
+        text=True,
+        timeout=3000,
+        check=False,
+    )
+    assert done.returncode == 0, done.stderr
+    found: dict[str, Any] = json.loads(done.stdout)
+    return found
+
+
+def test_a_slice_of_all_boundaries_leaves_the_act_whole_or_absent(tmp_path: Path) -> None:
+    found = killed(tmp_path, part=slice_of_this_commit(), of=_ONE_IN)
+
+    assert found["faults"] == []
+    assert min(found["boundaries"].values()) > 10
+    assert found["lives"] >= sum(found["boundaries"].values()) // _ONE_IN
+
+
+@pytest.mark.whole
+def test_every_boundary_leaves_the_act_whole_or_absent(tmp_path: Path) -> None:
+    found = killed(tmp_path, part=0, of=1)
+
+    assert found["faults"] == []
+    assert found["lives"] == sum(found["boundaries"].values()) > 2000
