@@ -28,7 +28,7 @@ from models.job import (
 from models.record.store import Store
 from models.record.verify import verify
 from models.units import Angle
-from tests.record.a_job import ANGLES, NUMBER, a_job, a_survey, at, celsius, common, mm
+from tests.record.a_job import ANGLES, FORGING, NUMBER, a_job, a_survey, at, celsius, common, mm
 
 __all__ = ["CASES", "Case", "verified"]
 
@@ -181,6 +181,10 @@ def _bring_in(store: Store) -> None:
     Acts(store).bring_in(job, by="tom", act_id=ID)
 
 
+def _keep_material(store: Store) -> object:
+    return Acts(store).keep_material(FORGING, person=_JOB.people[2], act_id=ID)
+
+
 CASES: dict[str, Case] = {
     "bring_in": Case(_nothing, _bring_in),
     **dict(_entry_cases()),
@@ -189,5 +193,6 @@ CASES: dict[str, Case] = {
         for kind in _READINGS
     },
     "answer": Case(_with_open_entries, _answer),
+    "keep_material": Case(_nothing, _keep_material),
     "close_survey": Case(_with_open_entries, _close_survey),
 }

@@ -9,17 +9,10 @@ from typing import Any
 import pytest
 
 from tests.journeys.test_random_rotors import slice_of_this_commit
-from tests.record.survival.cases import CASES
-from tests.record.survival.live_code import kinds_of_acts
 
 ROOT = Path(__file__).resolve().parents[3]
 # A run takes one boundary in so many; which ones changes with the commit.
 _ONE_IN = 25
-
-
-def test_every_kind_of_act_that_the_program_has_is_killed_here() -> None:
-    assert kinds_of_acts() - CASES.keys() == set(), "add a case in tests/record/survival/cases.py"
-    assert CASES.keys() - kinds_of_acts() == set()
 
 
 def killed(folder: Path, *, part: int, of: int) -> dict[str, Any]:
