@@ -9,7 +9,8 @@ its reason in `out_of_order` is taken and becomes a finding. Nothing ever stands
 """
 
 from models.acts.door import Acts, Reading, Recorded
+from models.acts.keys import Keys, KeyStanding
 from models.acts.permissions import NotAllowedError
 from models.acts.verdicts import new_id
 
-__all__ = ["Acts", "NotAllowedError", "Reading", "Recorded", "new_id"]
+__all__ = ["Acts", "KeyStanding", "Keys", "NotAllowedError", "Reading", "Recorded", "new_id"]

@@ -27,16 +27,30 @@ from models.job import (
     Question,
     RunoutReading,
     Settled,
+    Signature,
     SizeReading,
     Warmth,
 )
 from models.record import journal, queries
-from models.record.store import Store
+from models.record.key_rows import add_key_signature, authority_of_the_shop
+from models.record.signed_text import read_text, to_sign
+from models.record.store import Session, Store
+from models.rules.progress import Permission
 
-__all__ = ["Acts", "Reading", "Recorded"]
+__all__ = ["Acts", "Reading", "Recorded", "SignedWith"]
 
 Reading = RunoutReading | SizeReading | Hot | Warmth | GaugeTry
 _JUDGED_AT = (Mount, Settled, AttemptOpened)
+
+
+@dataclass(frozen=True)
+class SignedWith:
+    """The value behind a signature: what was signed, the value in base64, the papers in PEM."""
+
+    text: str
+    value: str
+    certificate: str
+    authority: str
 
 
 @dataclass(frozen=True)
@@ -49,6 +63,28 @@ class Recorded:
 
 def _local_now() -> datetime:
     return datetime.now().astimezone()
+
+
+def key_permission(
+    session: Session, number: str, entry: Signature, signed: SignedWith | None
+) -> Permission:
+    """Ask for a key behind a signature, over what the record holds at this moment."""
+    if signed is None:
+        if authority_of_the_shop(session) is None:
+            return Permission(True)
+        return Permission(
+            False,
+            "signature-needs-key",
+            "This shop signs with keys. Open a sitting with the passphrase, then sign.",
+        )
+    name = str(read_text(signed.text)["name"])
+    if to_sign(session, number, entry, name=name).text != signed.text:
+        return Permission(
+            False,
+            "moved-on-since-seen",
+            "The record has moved on since you looked at what you sign. Look again, then sign.",
+        )
+    return Permission(True)
 
 
 class Acts:
@@ -82,20 +118,33 @@ class Acts:
         sequence = keep_material(self._store, material, person=person, act_id=act_id, at=at)
         return Recorded(sequence, at)
 
-    def bring_in(self, job: Job, *, by: str, act_id: str) -> None:
-        """Take a whole job from a job file into the record; one that is there is refused."""
+    def bring_in(
+        self, job: Job, *, by: str, act_id: str, signer: journal.Signer | None = None
+    ) -> None:
+        """Take a whole job from a job file into the record; one that is there is refused.
+
+        `signer` puts a key behind each signature as it comes in; without one a signature keeps
+        the value that the file holds for it, or stands on trust.
+        """
         with self._store.writing() as session:
-            journal.bring_in(session, job, by=by, act_id=act_id)
+            journal.bring_in(session, job, by=by, act_id=act_id, signer=signer)
 
     def record(
-        self, number: str, entry: AnyEntry, *, act_id: str | None = None, head: int | None = None
+        self,
+        number: str,
+        entry: AnyEntry,
+        *,
+        act_id: str | None = None,
+        head: int | None = None,
+        signed: SignedWith | None = None,
     ) -> Recorded:
         """Record a whole entry, or an empty one that readings will be added to.
 
         Raises
         ------
         NotAllowedError
-            If the order of the work does not allow it and the entry gives no reason.
+            If the order of the work does not allow it and the entry gives no reason, or if it is a
+            signature in a shop that has keys and no key stands behind it.
         """
         with self._store.writing() as session:
             job = queries.read_job(session, number)
@@ -104,6 +153,8 @@ class Acts:
             is_new = all(one.id != entry.id for one in job.entries)
             if entry.out_of_order is None and is_new:
                 demand(permission_for(view, entry))
+            if isinstance(entry, Signature) and is_new:
+                demand(key_permission(session, number, entry, signed))
             at = self.now()
             with journal.act(
                 session,
@@ -115,6 +166,15 @@ class Acts:
                 expected_head=head,
             ) as act:
                 act.add_entry(entry)
+                if signed is not None:
+                    add_key_signature(
+                        act,
+                        entry=entry.id,
+                        text=signed.text,
+                        value=signed.value,
+                        certificate=signed.certificate,
+                        authority=signed.authority,
+                    )
                 if isinstance(entry, _JUDGED_AT):
                     later = with_entry(job, entry)
                     act.add_verdicts(verdicts_due(later, entry, at))

@@ -29,6 +29,7 @@ __all__ = [
     "Head",
     "Instrument",
     "Job",
+    "KeySignature",
     "Person",
     "StoredVerdict",
 ]
@@ -111,6 +112,21 @@ class StoredVerdict(Frozen, frozen=True, kw_only=True):
     attempt: int | None = None
 
 
+class KeySignature(Frozen, frozen=True, kw_only=True):
+    """The value behind a signature entry: whoever has the job can check it without the shop.
+
+    `text` is what was signed: canonical JSON that names person, role, meaning, what is covered and
+    the head of the chain then. `value` is the signature of the certificate's key over it, in
+    base64; certificate and authority are PEM.
+    """
+
+    entry: str
+    text: str
+    value: str
+    certificate: str
+    authority: str
+
+
 class Head(Frozen, frozen=True, kw_only=True):
     """The last link of the job's chain at the moment the job was read from a record."""
 
@@ -133,6 +149,7 @@ class Job(Frozen, frozen=True, kw_only=True):
     plans: tuple[Plan, ...]
     entries: tuple[AnyEntry, ...] = ()
     verdicts: tuple[StoredVerdict, ...] = ()
+    key_signatures: tuple[KeySignature, ...] = ()
     head: Head | None = None
 
     @property

@@ -270,6 +270,15 @@ class Act:
             inputs = {"inputs_json": inputs_text(verdict.inputs)}
             self._put(Line(tables.Verdict, {"key": verdict.id, **row, **inputs}))
 
+    @property
+    def session(self) -> Session:
+        """The transaction that this act is part of."""
+        return self._session
+
+    def put(self, line: Line) -> None:
+        """Add a row that a writer of its own subject has laid out."""
+        self._put(line)
+
     def flush(self) -> None:
         """Send the waiting rows to the database, still within the transaction."""
         grouped: dict[type[Base], list[dict[str, Any]]] = {}

@@ -20,6 +20,8 @@ _SETTINGS = (
     ("recursive_triggers", "ON", "1"),
     ("trusted_schema", "OFF", "0"),
     ("cell_size_check", "ON", "1"),
+    # What changes is overwritten: an old wrap of a key must not linger in the file.
+    ("secure_delete", "ON", "1"),
 )
 
 

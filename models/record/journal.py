@@ -1,26 +1,29 @@
 """The only writer of the record: one act, one transaction, one link of a chain."""
 
 import uuid
-from collections.abc import Iterator
+from collections.abc import Callable, Iterator
 from contextlib import AbstractContextManager, contextmanager
 from datetime import UTC, datetime
 
 from sqlalchemy import insert, select
 from sqlalchemy.orm import Session
 
-from models.job import Head, Job
+from models.job import Head, Job, KeySignature, Signature
 from models.record import tables
 from models.record.act import BROUGHT_IN, Act
 from models.record.canonical import FIRST_PREVIOUS, normal
 from models.record.errors import ActDiffersError, HeadMovedError, JobKnownError
 from models.record.flat import Cell, Row
+from models.record.key_rows import add_key_signature
 from models.record.links import BODY_EDITION, digest_of, rows_text
 from models.record.lookups import chain_of_job, last_act, shop_chain
 from models.record.store import Store
 from models.record.tables import table
 
-__all__ = ["BROUGHT_IN", "SHOP", "Act", "act", "bring_in"]
+__all__ = ["BROUGHT_IN", "SHOP", "Act", "Signer", "act", "bring_in"]
 
+# Puts a key behind a signature that comes in, over what the record holds then.
+Signer = Callable[[Session, str, Signature], KeySignature | None]
 # The chain of the shop itself: its people and instruments.
 SHOP = None
 
@@ -140,10 +143,13 @@ def _entered(now: datetime, last: Row | None) -> tuple[str, bool]:
     return entered, False
 
 
-def bring_in(session: Session, job: Job, *, by: str, act_id: str) -> Head:
+def bring_in(
+    session: Session, job: Job, *, by: str, act_id: str, signer: Signer | None = None
+) -> Head:
     """Record a whole job from elsewhere: its facts, then an act for each entry, then verdicts.
 
-    Entries and verdicts keep their own ids and times; the acts say when they came in. The same
+    `signer` puts a key behind each signature; without one it keeps the value that the job holds for
+    it. Entries and verdicts keep their own ids and times; the acts say when they came in. The same
     `act_id` again brings nothing in a second time.
 
     Raises
@@ -161,9 +167,22 @@ def bring_in(session: Session, job: Job, *, by: str, act_id: str) -> Head:
 
     with one("") as opening:
         opening.add_job(job)
+    values = {one.entry: one for one in job.key_signatures}
     for number, entry in enumerate(job.entries, start=1):
+        value = values.get(entry.id)
+        if signer is not None and isinstance(entry, Signature) and again is None:
+            value = signer(session, job.number, entry)
         with one(f"/entry {number}") as one_entry:
             one_entry.add_entry(entry)
+            if value is not None:
+                add_key_signature(
+                    one_entry,
+                    entry=entry.id,
+                    text=value.text,
+                    value=value.value,
+                    certificate=value.certificate,
+                    authority=value.authority,
+                )
     with one("/verdicts") as closing:
         closing.add_verdicts(job.verdicts)
     assert closing.head is not None

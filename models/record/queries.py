@@ -6,7 +6,16 @@ from typing import Any
 from sqlalchemy import Select, and_, func, select
 from sqlalchemy.orm import Session
 
-from models.job import Component, Head, Instrument, Job, OwnMaterial, Person, StoredVerdict
+from models.job import (
+    Component,
+    Head,
+    Instrument,
+    Job,
+    KeySignature,
+    OwnMaterial,
+    Person,
+    StoredVerdict,
+)
 from models.record import tables
 from models.record.documents import inputs_from, material_from, plan_from
 from models.record.entry_reader import EntryReader
@@ -68,6 +77,16 @@ def read_job(session: Session, number: str) -> Job:
             "plans": tuple(plan_from(row["document_json"]) for row in plans),
             "entries": EntryReader(session, chain_id).entries(),
             "verdicts": _verdicts(session, chain_id),
+            "key_signatures": tuple(
+                KeySignature(
+                    entry=row["key"],
+                    text=row["signed_text"],
+                    value=row["value_base64"],
+                    certificate=row["certificate_pem"],
+                    authority=row["authority_pem"],
+                )
+                for row in _rows(session, tables.KeySignature, chain_id)
+            ),
             "head": head_of(session, chain_id),
         },
     )

@@ -9,7 +9,7 @@ from sqlalchemy import Connection
 from sqlalchemy.dialects import sqlite
 from sqlalchemy.schema import CreateIndex, CreateTable
 
-from models.record.tables import CHANGEABLE, Base
+from models.record.tables import CHANGEABLE, OF_A_LIBRARY, Base
 from models.record.triggers import trigger_texts
 
 __all__ = ["differences", "expected_objects", "found_objects"]
@@ -40,7 +40,7 @@ def found_objects(connection: Connection) -> dict[tuple[str, str], str]:
     return {
         (kind, name): _plain(text)
         for kind, name, text in rows
-        if name not in CHANGEABLE and not name.startswith("sqlite_")
+        if name not in OF_A_LIBRARY and not name.startswith("sqlite_")
     }
 
 

@@ -37,7 +37,7 @@ from models.record.tables import CHANGEABLE
 from models.record.trouble import sentence_for
 from models.record.verify import verify
 
-__all__ = ["FILE_NAME", "Store"]
+__all__ = ["FILE_NAME", "Session", "Store"]
 
 FILE_NAME = "shop.thirdjournal"
 

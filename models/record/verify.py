@@ -18,6 +18,7 @@ from models.record.chain_check import ChainCheck, Trouble
 from models.record.errors import UnknownJobError
 from models.record.lookups import chain_of_job
 from models.record.schema import differences
+from models.record.signature_check import signature_troubles
 from models.record.tables import recorded_tables, table
 
 __all__ = ["SHOP_NAME", "Trouble", "Verification", "verify"]
@@ -64,6 +65,7 @@ def verify(
     for chain_id, name in _chains(session, number).items():
         chain = ChainCheck(session, chain_id, name)
         troubles += chain.troubles()
+        troubles += signature_troubles(session, chain_id, name)
         acts += len(chain.acts)
         if chain.head is not None:
             heads[name] = chain.head

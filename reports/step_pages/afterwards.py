@@ -5,10 +5,11 @@ from collections.abc import Iterator, Sequence
 from reportlab.platypus import Flowable
 
 from models.assess import Attempt
-from models.job import Handling, Job, Note
+from models.job import Handling, Job, Note, Signature
 from models.rules.rule import Verdict
 from reports.front_pages import shown_time
 from reports.parts import Signed, head, signatures, struck, text, words
+from reports.signed import behind_words
 from reports.step_pages.mounting import judged_rows
 from reports.step_pages.sizes import columns
 
@@ -126,23 +127,30 @@ def signature_boxes(job: Job, attempt: Attempt) -> Flowable:
     """Give the boxes under which people sign."""
     meanings = ["performed", "inspected"]
     if any(point.role == "witness" for point in attempt.step.points) or any(
-        one.meaning == "witnessed" for one in attempt.signatures
+        one.meaning == "witnessed" for one in (*attempt.signatures, *attempt.signatures_before)
     ):
         meanings.append("witnessed")
     boxes = []
     for meaning in meanings:
         given = [one for one in attempt.signatures if one.meaning == meaning]
+        before = [one for one in attempt.signatures_before if one.meaning == meaning]
+        if not given and before:
+            boxes.append(_signed(job, before[-1], "for an earlier state; to sign again"))
+            continue
         if not given:
             boxes.append(Signed(meaning))
             continue
-        person = job.person(given[-1].by)
-        boxes.append(
-            Signed(
-                meaning,
-                name=person.name,
-                more=f"{person.role}, {person.employer or job.shop}".rstrip(", "),
-                at=shown_time(given[-1].done_at),
-                covers=given[-1].covers,
-            )
-        )
+        boxes.append(_signed(job, given[-1]))
     return signatures(boxes)
+
+
+def _signed(job: Job, signature: Signature, more: str = "") -> Signed:
+    person = job.person(signature.by)
+    behind = behind_words(job, signature)
+    return Signed(
+        signature.meaning,
+        name=person.name,
+        more=f"{person.role}, {person.employer or job.shop}".rstrip(", "),
+        at=shown_time(signature.done_at),
+        covers="; ".join(part for part in (signature.covers, behind, more) if part),
+    )

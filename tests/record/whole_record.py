@@ -1,20 +1,33 @@
 """A record with a row in every table, and ways to work on its file behind the program's back."""
 
 import sqlite3
+from base64 import b64encode
 from collections.abc import Iterator
 from contextlib import contextmanager
+from datetime import UTC, datetime
 
 import msgspec
 from sqlalchemy import create_engine
 from sqlalchemy.orm import Session
 from sqlalchemy.pool import StaticPool
 
-from models.job import GaugeTry, Hot, Place, Question, RunoutReading, SizeReading, Warmth
-from models.record import journal
+from models.job import (
+    GaugeTry,
+    Hot,
+    Place,
+    Question,
+    RunoutReading,
+    Signature,
+    SizeReading,
+    Warmth,
+)
+from models.record import journal, key_rows
 from models.record.act import Act
 from models.record.places import AnyReading
+from models.record.signed_text import to_sign
 from models.record.store import Store
 from models.record.tables import CHANGEABLE
+from models.trust.certificates import issue, make_authority, new_key, sign
 from models.units import Angle
 from tests.record.a_job import ANGLES, FORGING, NUMBER, a_job, a_survey, at, celsius, mm
 
@@ -46,6 +59,7 @@ def fill(store: Store) -> None:
         act.add_people([msgspec.structs.replace(job.people[0], role="inspector")])
         act.add_instruments([msgspec.structs.replace(job.instruments[0], range="0 to 2 mm")])
         act.add_materials([msgspec.structs.replace(FORGING, source="certificate 18")])
+    _give_keys(store)
     with one_act(store, "facts again") as act:
         act.add_components([msgspec.structs.replace(job.components[0], revision="C")])
     with one_act(store, "opened") as act:
@@ -57,6 +71,44 @@ def fill(store: Store) -> None:
         act.add_question(
             "open",
             Question(where=("middle", "0"), question="7?", answer="yes", by="tom", at=at(201)),
+        )
+
+
+def _give_keys(store: Store) -> None:
+    """Name the shop and its authority, give Tom a key, and have him sign."""
+    now = datetime(2026, 12, 1, 10, 0, tzinfo=UTC)
+    authority, mine = make_authority("Shop", now=now), new_key()
+    paper = issue(authority, private_key=mine, name="Tom", person="tom", shop="Shop", now=now)
+    with one_act(store, "keys", chain=journal.SHOP) as act:
+        key_rows.add_shop(act, name="Shop", place="Nowhere")
+        above = key_rows.add_authority(
+            act, name="Shop", origin="made here", certificate=authority.certificate
+        )
+        key_rows.add_certificate(
+            act, person="tom", authority_key=above, certificate=paper, reason="first"
+        )
+        text = "unlocked, because he came in person"
+        value = b64encode(sign(mine, text)).decode()
+        key_rows.add_event(
+            act, person="tom", event="unlocked", words="came", signed=(text, value, paper)
+        )
+    with one_act(store, "shop named anew", chain=journal.SHOP) as act:
+        key_rows.add_shop(act, name="Shop and Sons", place="Nowhere")
+    signature = Signature(
+        id="with a key", place=Place(kind="final"), by="tom", done_at=at(202), entered_at=at(202),
+        plan="B", role="technician", meaning="performed", covers="the whole build",
+    )  # fmt: skip
+    with store.reading() as session:
+        seen = to_sign(session, NUMBER, signature, name="Tom")
+    with one_act(store, "signed with a key") as act:
+        act.add_entry(signature)
+        key_rows.add_key_signature(
+            act,
+            entry=signature.id,
+            text=seen.text,
+            value=b64encode(sign(mine, seen.text)).decode(),
+            certificate=paper,
+            authority=authority.certificate,
         )
 
 

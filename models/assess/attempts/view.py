@@ -70,6 +70,8 @@ class Attempt:
     drift: tuple[StationChange, ...]
     settled: Settled | None
     signatures: tuple[Signature, ...]
+    # Given for an earlier state: something was recorded or corrected since.
+    signatures_before: tuple[Signature, ...]
     decisions: tuple[Decision, ...]
     findings: tuple[Finding, ...]
 

@@ -9,6 +9,7 @@ from models.assess.attempts.view import Attempt, ItemView
 from models.assess.ground import Ground, ground_of
 from models.assess.heat import item_heat
 from models.assess.runout import compare_surveys, read_survey, where_the_bend_sits
+from models.assess.signed import given_for_now
 from models.assess.sizes import land_fit
 from models.assess.strength_work import fit_strength
 from models.job import (
@@ -25,7 +26,6 @@ from models.job import (
     Removal,
     RunoutSurvey,
     Settled,
-    Signature,
     SizeSurvey,
 )
 
@@ -74,6 +74,7 @@ def _assess_attempt(
     changes = compare_surveys(job, baseline, judged) if baseline and judged else ()
     bare = read_survey(job, bare_shaft) if bare_shaft else None
     settled = [one for one in entries if isinstance(one, Settled)]
+    signed_now, signed_before = given_for_now(entries)
     attempt = Attempt(
         plan=job.plan,
         step=step,
@@ -90,7 +91,8 @@ def _assess_attempt(
         seat_survey=seat[-1] if seat else None,
         drift=compare_surveys(job, bare, judged) if bare and judged else (),
         settled=settled[-1] if settled else None,
-        signatures=tuple(one for one in entries if isinstance(one, Signature)),
+        signatures=signed_now,
+        signatures_before=signed_before,
         decisions=tuple(one for one in entries if isinstance(one, Decision)),
         findings=(),
     )
