@@ -12,6 +12,7 @@ from contextlib import contextmanager
 from dataclasses import dataclass
 from datetime import datetime
 from pathlib import Path
+from typing import TypeVar
 
 from models.acts.door import Acts, Recorded, SignedWith
 from models.job import Person, Signature
@@ -39,6 +40,7 @@ LOCKED_AFTER = 8
 _LONGEST_WAIT = 300.0
 _OWN, _AUTHORITY = "own key", "authority"
 _TRIES = ("tried", "wrong PIN")
+_T = TypeVar("_T")
 _FORGIVES = ("proved", "unlocked", "key replaced", "enrolled")
 
 
@@ -126,7 +128,14 @@ class Keys:
     # First start, people ----------------------------------------------------------------------
 
     def set_up(
-        self, *, name: str, place: str, inspector: Person, passphrase: str, pin: str
+        self,
+        *,
+        name: str,
+        place: str,
+        inspector: Person,
+        passphrase: str,
+        pin: str,
+        act_id: str | None = None,
     ) -> None:
         """Make the shop, its authority and its first inspector.
 
@@ -137,8 +146,6 @@ class Keys:
         TrustError
             If the shop has its keys already, or the first person is no inspector.
         """
-        if self.shop is not None:
-            raise TrustError("The shop has its keys already.")
         if inspector.role != "inspector":
             raise TrustError("The first person of a shop is an inspector; others follow.")
         wrapping.refuse_weak_passphrase(passphrase)
@@ -149,7 +156,11 @@ class Keys:
             authority, private_key=private, name=inspector.name, person=inspector.key,
             shop=name, now=now,
         )  # fmt: skip
-        with self._act("shop set up", inspector.key) as (session, act):
+        with self._act("shop set up", inspector.key, act_id) as (session, act):
+            if act.already_recorded:
+                return
+            if key_rows.shop_name(session) is not None:
+                raise TrustError("The shop has its keys already.")
             act.add_people([inspector])
             key_rows.add_shop(act, name=name, place=place)
             # The secret goes to its place before anything is recorded that needs it.
@@ -167,23 +178,37 @@ class Keys:
             )
 
     def enrol(
-        self, person: Person, *, passphrase: str, pin: str, by: str, by_passphrase: str
+        self,
+        person: Person,
+        *,
+        passphrase: str,
+        pin: str,
+        by: Sitting,
+        by_pin: str,
+        act_id: str | None = None,
     ) -> None:
-        """Give a person a key and a certificate; an inspector does it, with the passphrase.
+        """Give a person a key and a certificate; an inspector does it, in a sitting.
 
         Raises
         ------
         TrustError
-            If `by` is no inspector with the shop's authority, or a secret does not serve.
+            If `by` is no inspector with the shop's authority, the person has a key already, or a
+            secret does not serve.
         """
-        wrapping.refuse_weak_passphrase(passphrase)
-        wrapping.refuse_weak_pin(pin)
-        if self.standing(person.key).has_key:
-            raise TrustError(f"{person.name} has a key already; replace it if it is lost.")
-        self._give_key(person, passphrase, pin, by, by_passphrase, "enrolled", "first")
+        self._give_key(
+            person, passphrase, pin, by, by_pin, event="enrolled", reason="first", act_id=act_id
+        )
 
     def replace_key(
-        self, person: Person, *, passphrase: str, pin: str, by: str, by_passphrase: str, reason: str
+        self,
+        person: Person,
+        *,
+        passphrase: str,
+        pin: str,
+        by: Sitting,
+        by_pin: str,
+        reason: str,
+        act_id: str | None = None,
     ) -> None:
         """Give a person a new key for a lost one; another inspector approves it.
 
@@ -192,16 +217,24 @@ class Keys:
         TrustError
             If `by` is the person itself or no inspector, or a secret does not serve.
         """
-        if by == person.key:
+        if by.whose.person == person.key:
             raise TrustError("Nobody replaces their own key; another inspector does it.")
-        wrapping.refuse_weak_passphrase(passphrase)
-        wrapping.refuse_weak_pin(pin)
-        self._give_key(person, passphrase, pin, by, by_passphrase, "key replaced", reason)
+        self._give_key(
+            person, passphrase, pin, by, by_pin, event="key replaced", reason=reason, act_id=act_id
+        )
 
     def bring_papers(
-        self, person: Person, *, pkcs12: bytes, its_passphrase: str, passphrase: str, pin: str,
-        by: str, by_passphrase: str,
-    ) -> None:  # fmt: skip
+        self,
+        person: Person,
+        *,
+        pkcs12: bytes,
+        its_passphrase: str,
+        passphrase: str,
+        pin: str,
+        by: Sitting,
+        by_pin: str,
+        act_id: str | None = None,
+    ) -> None:
         """Take a person's own key and certificate from a PKCS#12 file, and who stands above it.
 
         Raises
@@ -209,12 +242,16 @@ class Keys:
         CertificateError
             If the file does not serve.
         TrustError
-            If `by` is no inspector, or a secret does not serve.
+            If `by` is no inspector with the shop's authority, or a secret does not serve.
         """
+        wrapping.refuse_weak_passphrase(passphrase)
+        wrapping.refuse_weak_pin(pin)
         brought = read_pkcs12(pkcs12, its_passphrase)
-        self._authority_of(by, by_passphrase)
+        self._authority_of(by, by_pin)
         secret = self.secret_place().read()
-        with self._act("papers brought in", by) as (session, act):
+        with self._act("papers brought in", by.whose.person, act_id) as (session, act):
+            if act.already_recorded:
+                return
             act.add_people([person])
             above = key_rows.add_authority(
                 act,
@@ -257,7 +294,9 @@ class Keys:
                         session, person, what, held.private_key, new_passphrase, new_pin, secret
                     )
 
-    def retire(self, person: Person, *, reason: str, by: Sitting, pin: str) -> None:
+    def retire(
+        self, person: Person, *, reason: str, by: Sitting, pin: str, act_id: str | None = None
+    ) -> None:
         """Let a person sign no more; what they signed stays good.
 
         Raises
@@ -268,9 +307,11 @@ class Keys:
         self._inspector(by.whose.person)
         if by.whose.person == person.key:
             raise TrustError("Nobody retires themselves; another inspector does it.")
-        self._event("retired", person, reason, by, pin, drop=True)
+        self._event("retired", person, reason, by, pin, drop=True, act_id=act_id)
 
-    def unlock(self, person: Person, *, reason: str, by: Sitting, pin: str) -> None:
+    def unlock(
+        self, person: Person, *, reason: str, by: Sitting, pin: str, act_id: str | None = None
+    ) -> None:
         """Give a locked person their tries back.
 
         Raises
@@ -281,7 +322,7 @@ class Keys:
         self._inspector(by.whose.person)
         if by.whose.person == person.key:
             raise TrustError("Nobody unlocks themselves; another inspector does it.")
-        self._event("unlocked", person, reason, by, pin, drop=False)
+        self._event("unlocked", person, reason, by, pin, drop=False, act_id=act_id)
 
     # Sittings and signatures --------------------------------------------------------------------
 
@@ -296,12 +337,14 @@ class Keys:
             If the shop secret is not on this computer.
         """
         opened = self._proved(person, passphrase, _OWN)
+        authority = self._unwrapped(person, passphrase, _AUTHORITY)
         paper = self.papers()[person]
         whose = Whose(person, self._name(person), paper.certificate, paper.authority)
         return Sitting(
             whose,
             opened,
             shop_secret=self.secret_place().read(),
+            authority_key=None if authority is None else authority.private_key,
             steady=self._steady,
         )
 
@@ -332,6 +375,10 @@ class Keys:
     # What it rests on ---------------------------------------------------------------------------
 
     def _signed(self, sitting: Sitting, text: str, pin: str) -> str:
+        return self._confirmed(sitting, lambda: b64encode(sitting.sign(text, pin=pin)).decode())
+
+    def _confirmed(self, sitting: Sitting, use: Callable[[], _T]) -> _T:
+        """Use a sitting's key; a wrong PIN is counted on the record."""
         person = sitting.whose.person
         standing = self.standing(person)
         if standing.retired:
@@ -340,7 +387,7 @@ class Keys:
             sitting.close()
             raise LockedError(sitting.whose.name)
         try:
-            return b64encode(sitting.sign(text, pin=pin)).decode()
+            return use()
         except WrongSecretError:
             with self._act("wrong PIN", person) as (_, act):
                 key_rows.add_event(act, person=person, event="wrong PIN")
@@ -382,24 +429,33 @@ class Keys:
         secret = self.secret_place().read()
         return wrapping.unwrap(wrapped, passphrase=passphrase, person=person, shop_secret=secret)
 
-    def _authority_of(self, by: str, passphrase: str) -> Identity:
-        self._inspector(by)
-        self._proved(by, passphrase, _OWN)
-        opened = self._unwrapped(by, passphrase, _AUTHORITY)
+    def _authority_of(self, by: Sitting, pin: str) -> Identity:
+        self._inspector(by.whose.person)
+        private = self._confirmed(by, lambda: by.authority_key(pin=pin))
         with self._store.reading() as session:
             known = key_rows.authority_of_the_shop(session)
-        if opened is None or known is None:
+        if private is None or known is None:
             raise TrustError(
-                f"{self._name(by)} does not hold the shop's authority; an inspector who does "
+                f"{by.whose.name} does not hold the shop's authority; an inspector who does "
                 "gives keys."
             )
-        return Identity(opened.private_key, known[1])
+        return Identity(private, known[1])
 
     def _give_key(
-        self, person: Person, passphrase: str, pin: str, by: str, by_passphrase: str,
-        event: str, reason: str,
-    ) -> None:  # fmt: skip
-        authority = self._authority_of(by, by_passphrase)
+        self,
+        person: Person,
+        passphrase: str,
+        pin: str,
+        by: Sitting,
+        by_pin: str,
+        *,
+        event: str,
+        reason: str,
+        act_id: str | None,
+    ) -> None:
+        wrapping.refuse_weak_passphrase(passphrase)
+        wrapping.refuse_weak_pin(pin)
+        authority = self._authority_of(by, by_pin)
         shop = self.shop
         assert shop is not None
         private = new_key()
@@ -408,7 +464,11 @@ class Keys:
             shop=shop.name, now=self._now(),
         )  # fmt: skip
         secret = self.secret_place().read()
-        with self._act(event, by) as (session, act):
+        with self._act(event, by.whose.person, act_id) as (session, act):
+            if act.already_recorded:
+                return
+            if event == "enrolled" and key_rows.wrap_of(session, person.key, _OWN) is not None:
+                raise TrustError(f"{person.name} has a key already; replace it if it is lost.")
             act.add_people([person])
             known = key_rows.authority_of_the_shop(session)
             assert known is not None
@@ -423,7 +483,15 @@ class Keys:
                 )
 
     def _event(
-        self, event: str, person: Person, reason: str, by: Sitting, pin: str, *, drop: bool
+        self,
+        event: str,
+        person: Person,
+        reason: str,
+        by: Sitting,
+        pin: str,
+        *,
+        drop: bool,
+        act_id: str | None,
     ) -> None:
         if not reason.strip():
             raise TrustError("Say why; it stands on the record.")
@@ -432,7 +500,9 @@ class Keys:
              "by": by.whose.person, "at": self._acts.now()}
         )  # fmt: skip
         value = self._signed(by, text, pin)
-        with self._act(event, by.whose.person) as (session, act):
+        with self._act(event, by.whose.person, act_id) as (session, act):
+            if act.already_recorded:
+                return
             key_rows.add_event(
                 act,
                 person=person.key,
@@ -463,11 +533,12 @@ class Keys:
         return next((one.name for one in self.people() if one.key == person), person)
 
     @contextmanager
-    def _act(self, kind: str, by: str) -> Iterator[tuple[Session, Act]]:
+    def _act(self, kind: str, by: str, act_id: str | None = None) -> Iterator[tuple[Session, Act]]:
         with (
             self._store.writing() as session,
             journal.act(
-                session, chain=journal.SHOP, kind=kind, by=by, act_id=str(uuid.uuid4()),
+                session, chain=journal.SHOP, kind=kind, by=by,
+                act_id=act_id or str(uuid.uuid4()),
                 done_at=self._acts.now(),
             ) as act,
         ):  # fmt: skip

@@ -40,11 +40,13 @@ class Sitting:
         opened: Opened,
         *,
         shop_secret: bytes,
+        authority_key: bytes | None = None,
         steady: Callable[[], float] = time.monotonic,
     ) -> None:
         self.whose = whose
         self._opened: Opened | None = opened
         self._shop_secret = shop_secret
+        self._authority_key = authority_key
         self._steady = steady
         self._begun = self._used = steady()
         self._wrong = 0
@@ -58,8 +60,19 @@ class Sitting:
         return self._opened is not None
 
     def close(self) -> None:
-        """End the sitting; the key is dropped."""
-        self._opened = None
+        """End the sitting; the keys are dropped."""
+        self._opened = self._authority_key = None
+
+    def authority_key(self, *, pin: str) -> bytes | None:
+        """Give the key of the shop's authority once the PIN has confirmed it; None without one.
+
+        Raises
+        ------
+        SittingClosedError, WrongSecretError
+            As `confirm` does.
+        """
+        self.confirm(pin)
+        return self._authority_key
 
     def confirm(self, pin: str) -> None:
         """Hold a PIN against the one that was set.

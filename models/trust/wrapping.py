@@ -173,7 +173,8 @@ def unwrap(wrapped: str, *, passphrase: str, person: str, shop_secret: bytes) ->
             "give the person a new key."
         ) from error
     inside = json.loads(plain)
-    return Opened(*(_bytes(inside[name]) for name in ("key", "pin_salt", "pin_print")), cost=cost)
+    key, pin_salt, pin_print = (_bytes(inside[name]) for name in ("key", "pin_salt", "pin_print"))
+    return Opened(key, pin_salt, pin_print, cost)
 
 
 def pin_fits(opened: Opened, pin: str, *, person: str, shop_secret: bytes) -> bool:

@@ -95,8 +95,9 @@ def made(tmp_path_factory: pytest.TempPathFactory) -> Path:
     shop.keys.set_up(
         name="Shop (invented)", place="Nowhere", inspector=INSPECTOR, passphrase=WORDS, pin=PIN
     )
+    by = shop.sit(INSPECTOR)
     for person in (TECHNICIAN, SECOND):
-        shop.keys.enrol(person, passphrase=WORDS, pin=PIN, by=INSPECTOR.key, by_passphrase=WORDS)
+        shop.keys.enrol(person, passphrase=WORDS, pin=PIN, by=by, by_pin=PIN)
     shop.acts.bring_in(JOB, by=TECHNICIAN.key, act_id="demo")
     shop.store.close()
     return home
@@ -158,7 +159,7 @@ def test_without_the_shop_secret_nobody_signs_and_no_try_is_lost(shop):
 def test_a_technician_gives_nobody_a_key(shop):
     other = Person(key="XX", name="Somebody", initials="XX", role="technician")
     with pytest.raises(TrustError, match="no inspector"):
-        shop.keys.enrol(other, passphrase=WORDS, pin=PIN, by=TECHNICIAN.key, by_passphrase=WORDS)
+        shop.keys.enrol(other, passphrase=WORDS, pin=PIN, by=shop.sit(TECHNICIAN), by_pin=PIN)
     assert not shop.keys.standing("XX").has_key
 
 
@@ -292,7 +293,7 @@ def test_a_changed_secret_leaves_nothing_under_the_old_one(shop):
     sitting.confirm(NEW_PIN)
     # The authority came along: keys can still be given.
     other = Person(key="XX", name="Somebody", initials="XX", role="witness")
-    shop.keys.enrol(other, passphrase=WORDS, pin=PIN, by=INSPECTOR.key, by_passphrase=NEW_WORDS)
+    shop.keys.enrol(other, passphrase=WORDS, pin=PIN, by=sitting, by_pin=NEW_PIN)
     shop.store.close()
     file = (shop.folder / FILE_NAME).read_bytes()
     assert len(before) == 2
@@ -305,10 +306,10 @@ def test_a_lost_key_is_replaced_by_another_inspector_and_old_signatures_stay(sho
     old = shop.keys.papers()[TECHNICIAN.key].certificate
     with pytest.raises(TrustError, match="their own key"):
         shop.keys.replace_key(
-            INSPECTOR, passphrase=WORDS, pin=PIN, by=INSPECTOR.key, by_passphrase=WORDS, reason="x"
+            INSPECTOR, passphrase=WORDS, pin=PIN, by=shop.sit(INSPECTOR), by_pin=PIN, reason="x"
         )
     shop.keys.replace_key(
-        TECHNICIAN, passphrase=NEW_WORDS, pin=NEW_PIN, by=SECOND.key, by_passphrase=WORDS,
+        TECHNICIAN, passphrase=NEW_WORDS, pin=NEW_PIN, by=shop.sit(SECOND), by_pin=PIN,
         reason="passphrase forgotten",
     )  # fmt: skip
     assert shop.keys.papers()[TECHNICIAN.key].certificate != old
@@ -449,7 +450,7 @@ def test_a_signature_of_an_authority_made_up_elsewhere_is_told(shop, tmp_path):
     forger.keys.set_up(
         name="Shop (invented)", place="Nowhere", inspector=INSPECTOR, passphrase=WORDS, pin=PIN
     )
-    forger.keys.enrol(TECHNICIAN, passphrase=WORDS, pin=PIN, by=INSPECTOR.key, by_passphrase=WORDS)
+    forger.keys.enrol(TECHNICIAN, passphrase=WORDS, pin=PIN, by=forger.sit(INSPECTOR), by_pin=PIN)
     entry = a_signature()
     seen = shop.keys.preview(NUMBER, entry)
     forged = forger.sit()

@@ -29,6 +29,7 @@ from models.record.store import Store
 from models.record.verify import verify
 from models.units import Angle
 from tests.record.a_job import ANGLES, FORGING, NUMBER, a_job, a_survey, at, celsius, common, mm
+from tests.record.survival.key_cases import key_cases
 
 __all__ = ["CASES", "Case", "verified"]
 
@@ -195,4 +196,5 @@ CASES: dict[str, Case] = {
     "answer": Case(_with_open_entries, _answer),
     "keep_material": Case(_nothing, _keep_material),
     "close_survey": Case(_with_open_entries, _close_survey),
+    **{name: Case(*case) for name, case in key_cases(_JOB).items()},
 }

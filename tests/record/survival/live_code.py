@@ -70,7 +70,7 @@ def _kinds(path: Path, name: str) -> Iterator[str]:
     takes_reason = "reason" in inspect.signature(found).parameters
     for kind in kinds[0] if kinds else [""]:
         yield f"{short} {kind}".strip()
-        if takes_reason:
+        if takes_reason and kind:
             yield f"{short} {kind} corrected"
 
 
