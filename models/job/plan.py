@@ -8,7 +8,15 @@ clock angles from the reference mark, the way the rotor names.
 from typing import Literal
 
 from models.job.base import Frozen
+from models.job.loads import (
+    BalanceReason,
+    ForceCarried,
+    PressureLimit,
+    RoughnessKind,
+    RunningWarmth,
+)
 from models.job.material import OwnMaterial
+from models.job.origin import Origin
 from models.units import (
     Angle,
     Length,
@@ -29,7 +37,6 @@ __all__ = [
     "ItemKind",
     "Land",
     "LengthLimit",
-    "Origin",
     "Outline",
     "OutlineKind",
     "Plan",
@@ -53,20 +60,6 @@ OutlineKind = Literal[
 ]
 StationKind = Literal["journal", "shaft", "seat", "probe track", "part"]
 PointKind = Literal["hold", "witness", "review"]
-
-
-class Origin(Frozen, frozen=True, kw_only=True):
-    """Where a limit comes from: a drawing with revision and note, or what else stands behind it."""
-
-    document: str
-    revision: str = ""
-    note: str = ""
-
-    @property
-    def words(self) -> str:
-        """The origin in one phrase."""
-        revision = f"revision {self.revision}" if self.revision else ""
-        return ", ".join(part for part in (self.document, revision, self.note) if part)
 
 
 class LengthLimit(Frozen, frozen=True, kw_only=True):
@@ -112,6 +105,8 @@ class Rotor(Frozen, frozen=True, kw_only=True):
     trip_speed: Speed | None = None
     power: Power | None = None
     invented: bool = False
+    # What its owner says that speaks for a balance at speed.
+    balance_reasons: tuple[BalanceReason, ...] = ()
 
 
 class ShaftStep(Frozen, frozen=True, kw_only=True):
@@ -131,6 +126,8 @@ class Shaft(Frozen, frozen=True, kw_only=True):
     bore: Length | None = None
     roughness: Length | None = None
     yield_strength: Pressure | None = None
+    roughness_kind: RoughnessKind = "Rz"
+    shear_limit: PressureLimit | None = None
 
 
 class Station(Frozen, frozen=True, kw_only=True):
@@ -203,6 +200,9 @@ class Item(Frozen, frozen=True, kw_only=True):
     friction_origin: Origin | None = None
     carried_torque_share: Ratio | None = None
     yield_strength: Pressure | None = None
+    roughness_kind: RoughnessKind = "Rz"
+    thrust: ForceCarried | None = None
+    running: RunningWarmth | None = None
 
 
 class Point(Frozen, frozen=True, kw_only=True):
