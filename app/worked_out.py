@@ -67,6 +67,23 @@ def _rotor(shaft: ShaftView) -> dict[str, Any]:
         "greatest_sag [m]": _number(sag.greatest if sag else None),
         "first_critical_speed [rad/s]": _number(shaft.critical.speed if shaft.critical else None),
         "shear_at_coupling [Pa]": _number(shaft.shear_at_coupling),
+        "torque_along_the_shaft": [
+            {
+                "item": one.item.key,
+                "takes [N·m]": _number(one.own),
+                "in_shaft_towards_coupling [N·m]": _number(one.in_shaft),
+            }
+            for one in shaft.torques
+        ],
+        "shear_at_seats": [
+            {
+                "item": one.item.key,
+                "land": one.land.key,
+                "torque [N·m]": _number(one.torque),
+                "shear [Pa]": _number(one.shear),
+            }
+            for one in shaft.shears
+        ],
         "masses_calculated": list(shaft.calculated),
         "masses_unknown": list(shaft.without_mass),
         "in words": list(shaft.sentences),
@@ -119,6 +136,9 @@ def _land(strength: FitStrength | None, key: str) -> dict[str, Any]:
         "equivalent_stress_in_shaft [Pa]": _number(land.shaft_stress),
         "margin_of_hub [-]": _number(land.hub_margin),
         "margin_of_shaft [-]": _number(land.shaft_margin),
+        "pressure_uncertainty [Pa]": _number(land.pressure_uncertainty),
+        "pressure_at_yield_of_hub [Pa]": _number(land.hub_pressure_at_yield),
+        "pressure_at_yield_of_shaft [Pa]": _number(land.shaft_pressure_at_yield),
         "at_speed": [
             {
                 "at": one.name,
@@ -129,6 +149,10 @@ def _land(strength: FitStrength | None, key: str) -> dict[str, Any]:
                 "pressure_as_whole_disc [Pa]": _number(one.least_pressure),
                 "pressure_as_hub_alone [Pa]": _number(one.greatest_pressure),
                 "pressure_by_designer [Pa]": _number(one.pressure_by_designer),
+                "added_by_running_temperatures [m]": _number(one.warmth),
+                "expanded_uncertainty [m]": _number(one.uncertainty),
+                "equivalent_stress_at_bore_as_uniform_disc [Pa]": _number(one.hub_stress),
+                "equivalent_stress_in_shaft [Pa]": _number(one.shaft.von_mises),
             }
             for one in land.at_speed
         ],
@@ -139,14 +163,20 @@ def _land(strength: FitStrength | None, key: str) -> dict[str, Any]:
 
 
 def _holding(strength: FitStrength) -> dict[str, Any]:
+    held = strength.holding
     return {
-        "holding_torque [N·m]": _number(strength.holding_torque),
-        "holding_force [N]": _number(strength.holding_force),
-        "holding_torque_at_continuous_speed [N·m]": _number(strength.holding_torque_at_continuous),
-        "torque_to_carry [N·m]": _number(strength.torque_to_carry),
+        "holding_torque [N·m]": _number(held.torque),
+        "holding_torque_uncertainty [N·m]": _number(held.torque_uncertainty),
+        "holding_force [N]": _number(held.force),
+        "holding_force_uncertainty [N]": _number(held.force_uncertainty),
+        "holding_torque_at_continuous_speed [N·m]": _number(held.torque_at_continuous),
+        "holding_force_at_continuous_speed [N]": _number(held.force_at_continuous),
+        "torque_to_carry [N·m]": _number(held.torque_to_carry),
+        "thrust_to_carry [N]": _number(held.thrust),
+        "thrust_and_torque_as_one_force [N]": _number(held.demanded),
         "holding_factor [-]": _number(strength.holding_factor),
-        "friction [-]": strength.friction,
-        "friction_source": strength.friction_source,
+        "friction [-]": held.friction,
+        "friction_source": held.friction_source,
         "smoothing": strength.smoothing_source,
         "yield_strength_of_hub [Pa]": strength.hub_yield.value if strength.hub_yield else None,
         "yield_strength_of_hub_source": strength.hub_yield.origin if strength.hub_yield else None,

@@ -7,6 +7,7 @@ from collections.abc import Iterator, Mapping
 from dataclasses import dataclass
 
 from models.assess.materials import material_of
+from models.assess.torque import carries_torque
 from models.job import Item, Plan, Step
 
 __all__ = ["LackRow", "lacks_of"]
@@ -108,7 +109,7 @@ def _lacks_of_item(plan: Plan, item: Item) -> Iterator[tuple[str, str]]:
         yield "yield strength", "stress shown, not judged"
     if any(land.growth is None for land in item.lands):
         yield "growth with speed from its designer", "grip at speed estimated, not judged"
-    if item.carried_torque_share is None and not item.keyed:
+    if not carries_torque(plan, item) and not item.keyed:
         yield "share of the torque", "holding by friction not judged"
     roughness = (item.roughness, plan.shaft.roughness, plan.smoothing_factor)
     if any(part is None for part in roughness):

@@ -10,6 +10,7 @@ from models.assess.attempts import (
     finding_key,
     points_open,
 )
+from models.assess.plan_findings import plan_findings
 from models.assess.runout import SurveyRunout, read_survey
 from models.assess.shaft import ShaftView, shaft_view
 from models.assess.stand import StandRepeatability, stand_repeatability
@@ -129,7 +130,8 @@ def assess(job: Job) -> Assessment:
     ]
     bare_shaft = bare[-1] if bare else None
     attempts = tuple(_attempts(job, entries, bare_shaft.entry if bare_shaft else None))
-    findings = tuple(_standing(attempts, _final_findings(job, attempts)))
+    of_job = (*plan_findings(job.plan), *_final_findings(job, attempts))
+    findings = tuple(_standing(attempts, of_job))
     progress = _progress(job, entries, attempts, bare_shaft)
     return Assessment(
         job=job,

@@ -6,6 +6,7 @@ None of it keeps a plan from being issued; what rests on it is not judged.
 from collections.abc import Iterable
 
 from models.assess.materials import material_of, material_problem
+from models.assess.torque import carries_torque
 from models.job import Item, Job, Land, Plan, Step
 
 __all__ = ["lacks"]
@@ -95,7 +96,7 @@ def _of_item(plan: Plan, step: Step, item: Item) -> Iterable[str]:
     if item.friction is None:
         yield "no coefficient of friction, so the lowest known one is taken."
     carries = item.outline.kind in _CARRY_TORQUE and not item.keyed
-    if carries and item.carried_torque_share is None:
+    if carries and not carries_torque(plan, item):
         yield "no share of the torque, so what friction holds is shown and not judged."
     if plan.smoothing_factor is not None and item.roughness is None:
         yield "no roughness, so smoothing is not counted."

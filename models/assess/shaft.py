@@ -9,6 +9,7 @@ from dataclasses import dataclass
 from typing import NamedTuple
 
 from models.assess.materials import material_of
+from models.assess.torque import PartTorque, SeatShear, seat_shears, torques_along
 from models.engineering.beam import (
     CriticalSpeed,
     StaticDeflection,
@@ -81,6 +82,16 @@ class ShaftView:
     problem: str | None
 
     @property
+    def torques(self) -> tuple[PartTorque, ...]:
+        """What the shaft carries from the free end to the coupling."""
+        return torques_along(self.plan)
+
+    @property
+    def shears(self) -> tuple[SeatShear, ...]:
+        """The shear in the shaft under every seat."""
+        return seat_shears(self.plan)
+
+    @property
     def look_again(self) -> bool:
         """Whether the span is long for its diameter, as common practice has it."""
         ratio = self.span_over_diameter
@@ -114,7 +125,13 @@ class ShaftView:
     @property
     def sentences(self) -> tuple[str, ...]:
         """What was worked out, in words, with what it rests on."""
-        found = (self._load_words(), self._span_words(), self._sag_words(), self._speed_words())
+        found = (
+            self._load_words(),
+            self._span_words(),
+            self._sag_words(),
+            self._speed_words(),
+            self._shear_words(),
+        )
         return tuple(one for one in (*found, self.problem) if one)
 
     def _load_words(self) -> str:
@@ -170,6 +187,21 @@ class ShaftView:
         return (
             f"First critical speed on rigid bearings {units.show(self.critical.speed, 'speed')}"
             f"{beside}; real bearings lower it."
+        )
+
+    def _shear_words(self) -> str:
+        shears = self.shears
+        if not shears:
+            return ""
+        units = unit_set(self.plan.rotor.units)
+        worst = max(shears, key=lambda one: one.shear)
+        limit = self.plan.shaft.shear_limit
+        beside = "no limit in the plan, so not judged"
+        if limit is not None:
+            beside = f"{units.show(limit.value.si, 'pressure')} allowed"
+        return (
+            f"Greatest shear in the shaft {units.both(worst.shear, 'pressure')} under "
+            f"{worst.item.name}, which passes {units.both(worst.torque, 'torque')}; {beside}."
         )
 
 

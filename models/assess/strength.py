@@ -7,11 +7,12 @@ on the greatest, of which smoothing is not taken. Both at the reference temperat
 import math
 from dataclasses import dataclass
 
-from models.engineering.fit_stress import HubStresses, ShaftStresses
+from models.engineering.fit_stress import HubStresses, ShaftStresses, SurfaceStress
+from models.engineering.stress_at_speed import ShaftAtSpeed
 from models.job import Item
 from models.units import UnitSet
 
-__all__ = ["FitStrength", "LandAtSpeed", "LandStrength", "Release", "Strength"]
+__all__ = ["FitStrength", "Holding", "LandAtSpeed", "LandStrength", "Release", "Strength"]
 
 
 @dataclass(frozen=True)
@@ -39,6 +40,19 @@ class LandAtSpeed:
     least_pressure: float
     greatest_pressure: float
     pressure_by_designer: float | None
+    # What running temperatures have added to the interference; 0 where the plan gives none.
+    warmth: float
+    # Expanded, of the interference left.
+    uncertainty: float | None
+    # Under the greatest interference; estimates like the discs that they rest on.
+    hub_as_whole_disc: SurfaceStress
+    hub_alone: SurfaceStress
+    shaft: ShaftAtSpeed
+
+    @property
+    def hub_stress(self) -> float:
+        """The greater equivalent stress at the bore of the two discs, in Pa; not judged."""
+        return max(self.hub_as_whole_disc.von_mises, self.hub_alone.von_mises)
 
 
 @dataclass(frozen=True)
@@ -66,8 +80,11 @@ class LandStrength:
     shaft: ShaftStresses
     hub_margin: float | None
     shaft_margin: float | None
+    hub_pressure_at_yield: float | None
+    shaft_pressure_at_yield: float | None
     at_speed: tuple[LandAtSpeed, ...]
     release: Release
+    pressure_per_interference: float
 
     @property
     def hub_stress(self) -> float:
@@ -83,6 +100,34 @@ class LandStrength:
         """Find what is left at a speed by its name."""
         return next((one for one in self.at_speed if one.name == name), None)
 
+    def pressure_uncertainty_at(self, name: str) -> float | None:
+        """Give the expanded uncertainty of the pressure at a speed, in Pa."""
+        found = self.at(name)
+        if found is None or found.uncertainty is None:
+            return None
+        return found.uncertainty * self.pressure_per_interference
+
+
+@dataclass(frozen=True)
+class Holding:
+    """Torque and force that friction holds, with expanded uncertainties, and what it must carry."""
+
+    friction: float
+    friction_source: str
+    torque: float
+    force: float
+    torque_uncertainty: float | None
+    force_uncertainty: float | None
+    torque_at_continuous: float | None
+    force_at_continuous: float | None
+    torque_uncertainty_at_continuous: float | None
+    force_uncertainty_at_continuous: float | None
+    torque_to_carry: float | None
+    thrust: float | None
+    # Thrust and torque as one force, in N; None where the plan gives no thrust.
+    demanded: float | None
+    demanded_at_continuous: float | None
+
 
 @dataclass(frozen=True, eq=False)
 class FitStrength:
@@ -90,14 +135,8 @@ class FitStrength:
 
     item: Item
     lands: tuple[LandStrength, ...]
-    friction: float
-    friction_source: str
     smoothing_source: str
-    holding_torque: float
-    holding_force: float
-    holding_torque_uncertainty: float | None
-    holding_torque_at_continuous: float | None
-    torque_to_carry: float | None
+    holding: Holding
     hub_yield: Strength | None
     shaft_yield: Strength | None
     trip_speed: float | None
@@ -105,12 +144,15 @@ class FitStrength:
 
     @property
     def holding_factor(self) -> float | None:
-        """How many times the torque to carry friction holds at rest; no safety for a keyed part."""
-        if self.torque_to_carry is None:
+        """How many times torque and thrust friction holds at rest; no safety for a keyed part."""
+        held = self.holding
+        if held.demanded is not None:
+            return held.force / held.demanded if held.demanded > 0.0 else math.inf
+        if held.torque_to_carry is None:
             return None
-        if self.torque_to_carry == 0.0:
+        if held.torque_to_carry == 0.0:
             return math.inf
-        return self.holding_torque / abs(self.torque_to_carry)
+        return held.torque / abs(held.torque_to_carry)
 
     @property
     def release_speed(self) -> float | None:
@@ -144,12 +186,13 @@ class FitStrength:
         least = min(land.least_pressure for land in self.lands)
         words = (
             f"It grips with at least {self.units.both(least, 'pressure')} and friction holds "
-            f"{self.units.both(self.holding_torque, 'torque')}"
+            f"{self.units.both(self.holding.torque, 'torque')}"
         )
-        if self.torque_to_carry is not None:
-            words += (
-                f" where {self.units.show(abs(self.torque_to_carry), 'torque')} are to be carried"
-            )
+        carried, thrust = self.holding.torque_to_carry, self.holding.thrust
+        loads = [] if carried is None else [self.units.show(abs(carried), "torque")]
+        loads += [] if thrust is None else [f"{self.units.show(abs(thrust), 'force')} of thrust"]
+        if loads:
+            words += f" where {' and '.join(loads)} are to be carried"
         return words + (", though its key carries first" if self.item.keyed else "")
 
     def _stress_words(self) -> str:
@@ -166,12 +209,21 @@ class FitStrength:
     def _speed_words(self) -> str:
         trip = f" (trip {self.units.show(self.trip_speed, 'speed')})" if self.trip_speed else ""
         if self.release_speed is not None:
-            return f"it opens at {self._speed(self.release_speed)} by its designer's growth{trip}"
+            return (
+                f"{self._warm_words()}it opens at {self._speed(self.release_speed)} by its "
+                f"designer's growth{trip}"
+            )
         low, high = self.release_estimate
         return (
-            f"as a uniform disc it would open between {self._speed(low)} and "
+            f"{self._warm_words()}as a uniform disc it would open between {self._speed(low)} and "
             f"{self._speed(high)}{trip}, an estimate that is not judged"
         )
+
+    def _warm_words(self) -> str:
+        running = self.item.running
+        if running is None:
+            return ""
+        return f"at {running.part.written} on a shaft at {running.shaft.written} "
 
     def _speed(self, speed: float) -> str:
         return "no speed" if math.isinf(speed) else self.units.show(speed, "speed")

@@ -8,6 +8,7 @@ from collections.abc import Iterable
 from dataclasses import replace
 
 from models.assess.strength import FitStrength, LandStrength
+from models.assess.torque import carries_torque
 from models.job import Item, Land, Plan
 from models.rules import rule
 from models.rules.rule import Finding, Subject
@@ -35,13 +36,20 @@ def strength_findings(
                 yield rule(rule_id).apply(
                     replace(facts, limit_origin=origin), replace(subject, land=land.key)
                 )
-    # Friction is no safety for a keyed part: the key carries first.
-    if item.carried_torque_share is None or item.keyed or not item.lands:
+    if not item.lands:
         return
-    holding = _holding_facts(plan, strength)
-    yield rule("fit-holds-torque").apply(holding, subject)
-    if all(land.growth is not None for land in item.lands):
-        yield rule("fit-holds-torque-at-speed").apply(holding, subject)
+    holding = _holding_facts(plan, item, strength)
+    grows = all(land.growth is not None for land in item.lands)
+    # Friction is no safety for a keyed part: the key carries the torque first.
+    if carries_torque(plan, item) and not item.keyed:
+        yield rule("fit-holds-torque").apply(holding, subject)
+        if grows:
+            yield rule("fit-holds-torque-at-speed").apply(holding, subject)
+    if item.thrust is not None:
+        about = replace(holding, limit_origin=item.thrust.origin.words)
+        yield rule("fit-holds-thrust").apply(about, subject)
+        if grows:
+            yield rule("fit-holds-thrust-at-speed").apply(about, subject)
 
 
 def _of_land(strength: FitStrength | None, key: str) -> LandStrength | None:
@@ -63,9 +71,7 @@ def _land_facts(plan: Plan, item: Item, land: Land, found: LandStrength | None) 
         shaft_stress_uncertainty=_unsure(found, found.shaft_stress if found else 0.0, proved),
         shaft_yield_strength=shaft.si if shaft else None,
         interference_at_trip=trip.by_designer if trip else None,
-        interference_uncertainty=(
-            (found.interference_uncertainty if found else None) if proved else 0.0
-        ),
+        interference_uncertainty=((trip.uncertainty if trip else None) if proved else 0.0),
         release_speed=found.release.by_designer if found else None,
         proved=proved,
     )
@@ -83,18 +89,28 @@ def _unsure(found: LandStrength | None, stress: float, proved: bool) -> float | 
     return stress * found.pressure_uncertainty / found.greatest_pressure
 
 
-def _holding_facts(plan: Plan, strength: FitStrength | None) -> HoldingFacts:
+def _holding_facts(plan: Plan, item: Item, strength: FitStrength | None) -> HoldingFacts:
     proved = plan.decision_rule == "proved"
+    thrust = item.thrust.value.si if item.thrust else None
     if strength is None:
-        return HoldingFacts(units=unit_set(plan.rotor.units), proved=proved)
+        return HoldingFacts(units=unit_set(plan.rotor.units), proved=proved, thrust=thrust)
+    held = strength.holding
     return HoldingFacts(
         units=strength.units,
-        holding_torque=strength.holding_torque,
-        holding_torque_at_speed=strength.holding_torque_at_continuous,
-        holding_uncertainty=strength.holding_torque_uncertainty if proved else 0.0,
-        torque_to_carry=strength.torque_to_carry,
-        friction=strength.friction,
-        friction_source=strength.friction_source,
+        holding_torque=held.torque,
+        holding_torque_at_speed=held.torque_at_continuous,
+        holding_uncertainty=held.torque_uncertainty if proved else 0.0,
+        speed_uncertainty=held.torque_uncertainty_at_continuous if proved else 0.0,
+        torque_to_carry=held.torque_to_carry,
+        holding_force=held.force,
+        holding_force_at_speed=held.force_at_continuous,
+        force_uncertainty=held.force_uncertainty if proved else 0.0,
+        force_speed_uncertainty=held.force_uncertainty_at_continuous if proved else 0.0,
+        force_demanded=held.demanded,
+        force_demanded_at_speed=held.demanded_at_continuous,
+        thrust=held.thrust,
+        friction=held.friction,
+        friction_source=held.friction_source,
         proved=proved,
-        limit_origin="the plan's share of the torque",
+        limit_origin="the rotor's power and the plan's share of the torque",
     )

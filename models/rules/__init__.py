@@ -1,6 +1,6 @@
 """Judgements on plain facts: every rule, in the order people read them."""
 
-from models.rules import fit, heat, mount, people, runout, sizes, strength
+from models.rules import fit, heat, holding, mount, people, runout, sizes, strength
 from models.rules.rule import Rule
 
 __all__ = ["ALL_RULES", "rule"]
@@ -9,6 +9,7 @@ ALL_RULES: tuple[Rule, ...] = (
     *sizes.RULES,
     *fit.RULES,
     *strength.RULES,
+    *holding.SHAFT_RULES,
     *heat.RULES,
     *mount.RULES,
     *runout.RULES,

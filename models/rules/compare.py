@@ -9,6 +9,7 @@ acceptance it does not.
 from models.rules.rule import Verdict
 
 __all__ = [
+    "FORCE_STEP",
     "LENGTH_STEP",
     "PRESSURE_STEP",
     "TEMPERATURE_STEP",
@@ -25,6 +26,7 @@ TEMPERATURE_STEP = 10e-3
 # Coarse enough to absorb the arithmetic of a formula, far finer than anything that is known.
 PRESSURE_STEP = 1e3
 TORQUE_STEP = 10e-3
+FORCE_STEP = 10e-3
 
 
 def steps(difference: float, resolution: float) -> int:

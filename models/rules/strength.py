@@ -1,6 +1,7 @@
 """Judgements on what a fit is stressed by and what it holds."""
 
 from models.rules.compare import LENGTH_STEP, PRESSURE_STEP, TORQUE_STEP, at_least, at_most
+from models.rules.holding import HOLDING_RULES
 from models.rules.rule import Judgement, Rule, Verdict
 from models.rules.strength_facts import HoldingFacts, LandFacts
 from models.units import UnitSet
@@ -127,7 +128,7 @@ def fit_holds_torque_at_speed(
     *,
     units: UnitSet,
     holding_torque_at_speed: float,
-    holding_uncertainty: float,
+    speed_uncertainty: float,
     torque_to_carry: float,
     friction: float,
     friction_source: str,
@@ -138,7 +139,7 @@ def fit_holds_torque_at_speed(
         units,
         "at maximum continuous speed",
         holding_torque_at_speed,
-        holding_uncertainty,
+        speed_uncertainty,
         torque_to_carry,
         f"{friction:.2f}, {friction_source}",
         proved,
@@ -212,5 +213,7 @@ RULES = (
         source=f"the designer's growth and the plan's share of the torque; {_LAME}, equation 7-49",
         facts=HoldingFacts,
         judge=fit_holds_torque_at_speed,
+        edition=2,
     ),
+    *HOLDING_RULES,
 )

@@ -150,5 +150,5 @@ def test_an_invented_rotor_weighs_its_shaft_and_its_parts(name):
     assert view.load_at_first_journal + view.load_at_second_journal == pytest.approx(
         9.80665 * view.loads.mass
     )
-    assert len(view.sentences) == 4
+    assert len(view.sentences) == 5
     assert view.critical.change_on_refinement < 1e-6

@@ -111,9 +111,9 @@ def test_friction_holds_what_its_source_says(row, monkeypatch):
 
     found = strength(a_plan(), item, fit(land, interference, 2.0 * interference))
 
-    assert found.holding_torque == printed(row.printed, row.si_per_unit)
-    assert found.holding_force * diameter / 2.0 == pytest.approx(found.holding_torque)
-    assert found.friction_source == ORIGIN.words
+    assert found.holding.torque == printed(row.printed, row.si_per_unit)
+    assert found.holding.force * diameter / 2.0 == pytest.approx(found.holding.torque)
+    assert found.holding.friction_source == ORIGIN.words
 
 
 def test_two_lands_hold_what_one_of_their_length_does(monkeypatch):
@@ -124,7 +124,7 @@ def test_two_lands_hold_what_one_of_their_length_does(monkeypatch):
     two = strength(a_plan(), an_item(*half), *(fit(land, 2e-4, 3e-4) for land in half))
     one = strength(a_plan(), an_item(whole), fit(whole, 2e-4, 3e-4))
 
-    assert two.holding_torque == pytest.approx(one.holding_torque, rel=1e-12)
+    assert two.holding.torque == pytest.approx(one.holding.torque, rel=1e-12)
 
 
 def test_the_lowest_friction_is_the_default_and_names_its_source(monkeypatch):
@@ -132,8 +132,8 @@ def test_the_lowest_friction_is_the_default_and_names_its_source(monkeypatch):
 
     found = strength(a_plan(), an_item(land), fit(land, 3e-4, 3e-4))
 
-    assert found.friction == min(one.coefficient for one in FRICTIONS)
-    assert "DIN 7190, from memory" in found.friction_source
+    assert found.holding.friction == min(one.coefficient for one in FRICTIONS)
+    assert "DIN 7190, from memory" in found.holding.friction_source
 
 
 def test_smoothing_is_off_until_both_roughnesses_and_a_factor_are_given(monkeypatch):
@@ -148,7 +148,7 @@ def test_smoothing_is_off_until_both_roughnesses_and_a_factor_are_given(monkeypa
     # 0.8 · (4.8 + 4.8) = 7.68 µm, by hand; stress keeps what smoothing takes.
     assert counted.lands[0].least_interference == printed("292.32", 1e-6)
     assert counted.lands[0].greatest_pressure == printed("132.48", 1e6)
-    assert "taken as Rz, 1988 and 2001" in counted.smoothing_source
+    assert "given as Rz, 1988 and 2001" in counted.smoothing_source
     for found in (no_bore, no_factor):
         assert found.lands[0].smoothing_loss == 0.0
         assert found.smoothing_source == "smoothing not counted"
@@ -165,8 +165,10 @@ def test_the_torque_to_carry_is_the_parts_share_of_power_over_speed(row, monkeyp
 
     found = strength(a_plan(rotor=rotor), item, fit(land, 3e-4, 3e-4))
 
-    assert 4.0 * found.torque_to_carry == printed(row.printed, row.si_per_unit)
-    assert found.holding_factor == pytest.approx(found.holding_torque / found.torque_to_carry)
+    assert 4.0 * found.holding.torque_to_carry == printed(row.printed, row.si_per_unit)
+    assert found.holding_factor == pytest.approx(
+        found.holding.torque / found.holding.torque_to_carry
+    )
 
 
 @pytest.mark.parametrize("row", TIP_SPEEDS, ids=lambda row: row.case)
@@ -213,8 +215,8 @@ def test_the_designers_growth_goes_before_the_estimate(monkeypatch):
     assert found.release_speed * 30.0 / math.pi == printed("12000.0")
     assert found.release_over_trip == printed("1.3333")
     # 180 of 240 µm hold three quarters.
-    assert found.holding_torque_at_continuous == pytest.approx(0.75 * found.holding_torque)
-    assert without.holding_torque_at_continuous is None
+    assert found.holding.torque_at_continuous == pytest.approx(0.75 * found.holding.torque)
+    assert without.holding.torque_at_continuous is None
     assert without.release_over_trip is None
 
 
@@ -236,7 +238,7 @@ def test_a_clearance_grips_nothing_and_opens_at_no_speed(monkeypatch):
     found = strength(a_plan(), an_item(land), fit(land, -20e-6, -10e-6))
 
     assert found.lands[0].least_pressure == 0.0
-    assert found.holding_torque == 0.0
+    assert found.holding.torque == 0.0
     assert found.release_estimate == (0.0, 0.0)
     assert found.means.startswith("It grips with at least 0.0 MPa")
 

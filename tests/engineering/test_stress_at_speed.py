@@ -99,8 +99,9 @@ def test_the_axis_of_a_solid_shaft_has_half_the_stress_of_a_pin_hole():
 def test_rotation_never_relieves_a_hub_of_one_material_on_a_solid_shaft(speed, bore, width, nu):
     pressed, density = 300e6, 7850.0
     loss = (3.0 + nu) * density * speed**2 * bore**2 * (width**2 - 1.0) / 32.0
-    facts = {"interface_diameter": bore, "hub_outer_diameter": bore * width,
-             "spinning_outer_diameter": bore * width, "poisson": nu, "density": density}  # fmt: skip
+    outer = bore * width
+    facts = {"interface_diameter": bore, "hub_outer_diameter": outer,
+             "spinning_outer_diameter": outer, "poisson": nu, "density": density}  # fmt: skip
     still = hub_bore_stress_at_speed(**facts, pressure=pressed, speed=0.0)
     assume(loss < pressed)
     turning = hub_bore_stress_at_speed(**facts, pressure=pressed - loss, speed=speed)

@@ -3,7 +3,7 @@
 from typing import Any
 
 from models.rules.rule import Verdict
-from models.rules.strength_facts import HoldingFacts, LandFacts
+from models.rules.strength_facts import HoldingFacts, LandFacts, ShearFacts
 
 __all__ = ["CASES", "GOOD"]
 
@@ -27,11 +27,20 @@ GOOD: dict[type, Any] = {
         holding_torque=5000.0,
         holding_torque_at_speed=3000.0,
         holding_uncertainty=200.0,
+        speed_uncertainty=150.0,
+        holding_force=80000.0,
+        holding_force_at_speed=50000.0,
+        force_uncertainty=3000.0,
+        force_speed_uncertainty=3500.0,
+        force_demanded=25000.0,
+        force_demanded_at_speed=26000.0,
+        thrust=15000.0,
         torque_to_carry=1000.0,
         friction=0.12,
         friction_source="DIN 7190, from memory",
         proved=True,
     ),
+    ShearFacts: ShearFacts(shear=24 * MPA, shear_limit=40 * MPA, torque=5000.0, diameter=0.1),
 }
 
 # Rule, what the row is for, what differs from good facts, verdict.
@@ -82,7 +91,30 @@ CASES: list[tuple[str, str, dict[str, Any], Verdict]] = [
     ("fit-holds-torque-at-speed", "outside", {"holding_torque_at_speed": 0.0}, OUT),
     ("fit-holds-torque-at-speed", "cannot tell", {"holding_torque_at_speed": 900.0}, DOUBT),
     ("fit-holds-torque-at-speed", "on the limit",
-     {"holding_torque_at_speed": 1000.0, "holding_uncertainty": 0.0}, IN),
-    ("fit-holds-torque-at-speed", "on the guarded limit", {"holding_torque_at_speed": 1200.0}, IN),
+     {"holding_torque_at_speed": 1000.0, "speed_uncertainty": 0.0}, IN),
+    ("fit-holds-torque-at-speed", "on the guarded limit", {"holding_torque_at_speed": 1150.0}, IN),
     ("fit-holds-torque-at-speed", "unknown", {"holding_torque_at_speed": None}, UNKNOWN),
+    ("fit-holds-thrust", "within", {}, IN),
+    ("fit-holds-thrust", "outside", {"holding_force": 20000.0}, OUT),
+    ("fit-holds-thrust", "cannot tell", {"holding_force": 26000.0}, DOUBT),
+    ("fit-holds-thrust", "cannot tell from below", {"holding_force": 22500.0}, DOUBT),
+    ("fit-holds-thrust", "thrust the other way", {"thrust": -15000.0}, IN),
+    ("fit-holds-thrust", "simple acceptance", {"holding_force": 26000.0, "proved": False}, IN),
+    ("fit-holds-thrust", "on the limit",
+     {"holding_force": 25000.0, "force_uncertainty": 0.0}, IN),
+    ("fit-holds-thrust", "unknown", {"holding_force": None}, UNKNOWN),
+    ("fit-holds-thrust", "no torque known", {"force_demanded": None}, UNKNOWN),
+    ("fit-holds-thrust-at-speed", "within", {}, IN),
+    ("fit-holds-thrust-at-speed", "outside", {"holding_force_at_speed": 0.0}, OUT),
+    ("fit-holds-thrust-at-speed", "cannot tell", {"holding_force_at_speed": 27000.0}, DOUBT),
+    ("fit-holds-thrust-at-speed", "on the limit",
+     {"holding_force_at_speed": 26000.0, "force_speed_uncertainty": 0.0}, IN),
+    ("fit-holds-thrust-at-speed", "on the guarded limit",
+     {"holding_force_at_speed": 29500.0}, IN),
+    ("fit-holds-thrust-at-speed", "unknown", {"holding_force_at_speed": None}, UNKNOWN),
+    ("shaft-shear-allowed", "within", {}, IN),
+    ("shaft-shear-allowed", "outside", {"shear": 41 * MPA}, OUT),
+    ("shaft-shear-allowed", "on the limit", {"shear": 40 * MPA}, IN),
+    ("shaft-shear-allowed", "unknown", {"shear": None}, UNKNOWN),
+    ("shaft-shear-allowed", "no limit", {"shear_limit": None}, UNKNOWN),
 ]  # fmt: skip

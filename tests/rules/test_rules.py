@@ -274,7 +274,8 @@ def test_rule_has_cases_for_all_that_can_happen(judged: Any) -> None:
         assert OUT in verdicts
     limits = {"limit", "closure_allowed", "target_temperature", "side_to_side_allowed",
               "axial_tolerance", "least_allowed", "due_on", "hub_yield_strength",
-              "shaft_yield_strength", "interference_at_trip", "torque_to_carry"}  # fmt: skip
+              "shaft_yield_strength", "interference_at_trip", "torque_to_carry",
+              "force_demanded", "force_demanded_at_speed", "shear_limit"}  # fmt: skip
     if limits & set(judged.inputs):
         assert judged.id in _COMPARING
 
