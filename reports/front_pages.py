@@ -8,6 +8,7 @@ from dataclasses import replace
 from reportlab.platypus import Flowable, PageBreak
 
 from models.assess import Assessment, Attempt
+from models.assess.land_limits import limits_of
 from models.job import Item, Job, Plan, Signature
 from models.rules.rule import Verdict
 from models.units import unit_set
@@ -298,7 +299,7 @@ def limits(view: Assessment) -> Iterator[Flowable]:
             )
         for item in step.items:
             for land in item.lands:
-                least, greatest = land.least_interference, land.greatest_interference
+                least, greatest = limits_of(land)
                 rows.append(
                     [
                         f"{number}",

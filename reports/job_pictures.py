@@ -5,6 +5,7 @@ import math
 from collections.abc import Collection, Mapping, Sequence
 
 from models.assess import Assessment, Attempt, LandFit, StationChange, StationRunout, SurveyRunout
+from models.assess.land_limits import limits_of
 from models.job import Item, Job, Step
 from models.rules.rule import Finding, Verdict
 from models.units import Length, UnitSet, unit_set
@@ -342,7 +343,7 @@ def fit_picture(
                 tells=finding.message if finding else "",
             )
         )
-    least, greatest = land.least_interference, land.greatest_interference
+    least, greatest = limits_of(land)
     return RangePicture(
         bars=tuple(bars),
         lower=Length.in_unit(least.value.si, unit),

@@ -6,6 +6,7 @@ from collections import defaultdict
 from collections.abc import Iterator
 from dataclasses import dataclass
 
+from models.assess.land_limits import limits_of
 from models.job import Item, Land, LengthLimit, Plan, Station, Step
 
 __all__ = ["MethodRow", "StationRow", "StepRow", "method_rows", "station_row", "step_rows"]
@@ -91,16 +92,16 @@ def _land_words(land: Land | None) -> str:
 def _fit_words(land: Land | None) -> str:
     if land is None:
         return ""
-    least, greatest = land.least_interference, land.greatest_interference
-    return f"{least.value.written} to\n{greatest.value.written}"
+    least, greatest = limits_of(land)
+    name = f"{land.fit_by_name}\n" if land.least_interference is None else ""
+    return f"{name}{least.value.written} to\n{greatest.value.written}"
 
 
 def _origins(step: Step, item: Item, land: Land | None) -> str:
     """Name each document once, with the limits that come from it."""
     limits: list[tuple[str, str]] = []
     if land is not None:
-        limits += [("fit", land.least_interference.origin.words)]
-        limits += [("fit", land.greatest_interference.origin.words)]
+        limits += [("fit", limit.origin.words) for limit in limits_of(land)]
     if item.highest_temperature is not None:
         limits += [("heat", item.highest_temperature.origin.words)]
     if item.axial is not None:

@@ -166,9 +166,11 @@ class Land(Frozen, frozen=True, kw_only=True):
     end: Length
     nominal_diameter: Length
     hub_outer_diameter: Length
-    least_interference: LengthLimit
-    greatest_interference: LengthLimit
+    least_interference: LengthLimit | None = None
+    greatest_interference: LengthLimit | None = None
     growth: Growth | None = None
+    # Stands for the figures where they are left out: H7/s6, FN2.
+    fit_by_name: str = ""
 
 
 class AxialPlace(Frozen, frozen=True, kw_only=True):

@@ -28,6 +28,7 @@ from models.job import (
     Step,
 )
 from models.jobfile.faults import MISSING, Fault, Words
+from models.jobfile.fit_checks import interference_faults
 from models.jobfile.material_checks import material_faults
 from models.units import Angle, Length, Quantity, UnreadableNumberError
 
@@ -200,10 +201,7 @@ def _land(place: str, land: Land) -> Iterator[Fault]:
         ("nominal_diameter", land.nominal_diameter),
         ("hub_outer_diameter", land.hub_outer_diameter),
     )
-    least, greatest = land.least_interference.value, land.greatest_interference.value
-    if greatest.whole < least.whole:
-        expected = f"not less than the least, {least.written}"
-        yield Fault(f"{place}.greatest_interference.value", greatest.written, expected)
+    yield from interference_faults(place, land)
     if land.growth is not None:
         yield from _positive(f"{place}.growth.value", land.growth.value)
         yield from _positive(f"{place}.growth.speed", land.growth.speed)

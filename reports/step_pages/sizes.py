@@ -5,6 +5,7 @@ from collections.abc import Iterator, Sequence
 from reportlab.platypus import Flowable, Table
 
 from models.assess import Attempt, ItemView, LandFit
+from models.assess.land_limits import limits_of
 from models.job import Job
 from models.rules.rule import Finding, Verdict
 from models.units import unit_set
@@ -91,7 +92,7 @@ def sizes(
     if picture is not None:
         yield gap(1.5)
         yield ranges(picture)
-        limit = views[0].fits[0].land.least_interference
+        limit = limits_of(views[0].fits[0].land).least
         yield note(words(f"The limits come from {limit.origin.words}; whisker ± k = 2."))
         yield gap(1)
     strength = views[-1].strength

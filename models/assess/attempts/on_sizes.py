@@ -5,6 +5,7 @@ from dataclasses import replace
 
 from models.assess.attempts.on_people import instrument_finding
 from models.assess.attempts.view import Attempt, ItemView, attempt_subject
+from models.assess.land_limits import limits_of
 from models.assess.sizes import LandFit
 from models.job import Job
 from models.rules import rule
@@ -46,6 +47,7 @@ def fit_facts(job: Job, fit: LandFit) -> FitFacts:
     """State how bore and seat of a land fit, for the rules."""
     proved = job.plan.decision_rule == "proved"
     found = fit.interference
+    least, greatest = limits_of(fit.land)
     return FitFacts(
         units=unit_set(job.plan.rotor.units),
         least_interference=found.least if found else None,
@@ -53,8 +55,8 @@ def fit_facts(job: Job, fit: LandFit) -> FitFacts:
         greatest_interference=found.greatest if found else None,
         # Simple acceptance needs no uncertainty; proving does.
         expanded_uncertainty=fit.expanded_uncertainty if proved else 0.0,
-        least_allowed=fit.land.least_interference.value.si,
-        greatest_allowed=fit.land.greatest_interference.value.si,
+        least_allowed=least.value.si,
+        greatest_allowed=greatest.value.si,
         proved=proved,
-        limit_origin=fit.land.least_interference.origin.words,
+        limit_origin=least.origin.words,
     )
