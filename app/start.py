@@ -36,12 +36,13 @@ from models.record.errors import (
     LockedRecordError,
     ReadOnlyError,
     RecordError,
+    RecordMovedError,
 )
 from models.record.store import Store
 
 __all__ = ["SURROUNDINGS", "Opened", "run"]
 
-SURROUNDINGS = (LockedRecordError, DiskFullError, DiskFaultError, ReadOnlyError)
+SURROUNDINGS = (LockedRecordError, DiskFullError, DiskFaultError, ReadOnlyError, RecordMovedError)
 """Trouble that may be over when the same act is tried again."""
 
 

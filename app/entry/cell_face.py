@@ -17,9 +17,10 @@ from reports.palette import Colour
 from reports.sheet.medium import LineWidth, Size
 from reports.typeface import Weight
 
-__all__ = ["CellFace", "paint_cell", "place_cell"]
+__all__ = ["CellFace", "notice_fits", "paint_cell", "place_cell"]
 
 _PADDING = 10.0
+_NOTICE_LINES = 2
 _USUAL_OTHER = "−0.0 µm"
 
 
@@ -141,14 +142,38 @@ def _unit_width(face: CellFace, size: QSize, look: Look) -> float:
     return max(widest, title.horizontalAdvance(face.symbol)) + _PADDING
 
 
+def notice_fits(face: CellFace, size: QSize, look: Look) -> bool:
+    """Tell whether a cell has room for the whole of its sentence.
+
+    Parameters
+    ----------
+    face : CellFace
+        What is seen.
+    size : QSize
+        Size of the cell [px].
+    look : Look
+        Its look.
+
+    Returns
+    -------
+    bool
+        False where the end of the sentence is left out.
+    """
+    width = _notice_width(face, size, look)
+    return len(wrapped(face.notice, _note(size, look), width=width)) <= _NOTICE_LINES
+
+
+def _notice_width(face: CellFace, size: QSize, look: Look) -> float:
+    room = size.width() - 2.0 * _PADDING
+    return room - _help_width(face, look) - _PADDING if face.help_words else room
+
+
 def _notice_lines(face: CellFace, size: QSize, look: Look) -> tuple[list[str], float]:
     if not face.notice:
         return [], 0.0
     font = _note(size, look)
-    room = size.width() - 2.0 * _PADDING
-    if face.help_words:
-        room -= _help_width(face, look) + _PADDING
-    lines = wrapped(face.notice, font, width=room, most=2)
+    width = _notice_width(face, size, look)
+    lines = wrapped(face.notice, font, width=width, most=_NOTICE_LINES)
     return lines, font.pixelSize() * 1.15 * len(lines)
 
 

@@ -9,7 +9,7 @@ from PySide6.QtCore import QSize, Qt
 from PySide6.QtGui import QMouseEvent, QPaintEvent, QResizeEvent
 from PySide6.QtWidgets import QWidget
 
-from app.entry.cell_face import CellFace, paint_cell, place_cell
+from app.entry.cell_face import CellFace, notice_fits, paint_cell, place_cell
 from app.entry.cell_state import BUSY, CORRECTION_REASONS, Asked, CellState
 from app.entry.cell_strokes import CellStrokes
 from app.entry.cell_unit import CellUnit
@@ -82,16 +82,20 @@ class ReadingCell(CellStrokes):
         self._finish()
         self._settle()
 
-    def refuse(self, *, what: str, where: str, way_out: str) -> None:
+    def refuse(self, *, what: str, where: str, way_out: str, text: str = "") -> None:
         """Say that the reading could not be written; it stays in the cell to be tried again.
 
         Parameters
         ----------
         what, where, way_out : str
             What went wrong, with what, and what to do.
+        text : str
+            The reading, where the cell has gone on to ask for the next one meanwhile.
         """
         self._writing = False
         self._trouble = f"{what}, {where}. {way_out}"
+        if text:
+            self._edit.setText(text)
         self._settle()
 
     def lock(self, sentence: str) -> None:
@@ -153,6 +157,11 @@ class ReadingCell(CellStrokes):
     def change_sign(self) -> None:
         """Change the sign of what is typed."""
         self._receive(Stroke(act=Act.CHANGE_SIGN, at=self._clock()))
+
+    @property
+    def has_room_for_notice(self) -> bool:
+        """Whether the sentence can be read whole in the cell."""
+        return notice_fits(self._face(), self.size(), self._look)
 
     @property
     def notice(self) -> str:

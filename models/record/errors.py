@@ -20,6 +20,7 @@ __all__ = [
     "RecordError",
     "RecordIsFinalError",
     "RecordMissingError",
+    "RecordMovedError",
     "SchemaDiffersError",
     "SurveyClosedError",
     "TornRecordError",
@@ -48,6 +49,16 @@ class RecordMissingError(RecordError):
     def __init__(self, path: Path) -> None:
         super().__init__(
             f"There is no record at {path}. Choose the folder that holds it, or start a new one."
+        )
+
+
+class RecordMovedError(RecordError):
+    """The file was taken away while it was open."""
+
+    def __init__(self, path: Path) -> None:
+        super().__init__(
+            f"{path} is no longer where it was opened: it, or its folder, was moved or removed. "
+            "Nothing of this act was recorded; put it back where it was, and try again."
         )
 
 

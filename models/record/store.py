@@ -4,12 +4,10 @@ The file is never opened, hashed or copied by other means than the one database 
 process: closing any other handle on it would drop the lock under a writer.
 """
 
-import errno
-import os
 import platform
 import uuid
 from collections.abc import Callable, Iterator
-from contextlib import contextmanager
+from contextlib import contextmanager, suppress
 from datetime import datetime
 from importlib.metadata import PackageNotFoundError, version
 from pathlib import Path
@@ -20,21 +18,19 @@ from sqlalchemy.orm import Session
 
 from models.record.connections import BUSY_SECONDS, engine_for
 from models.record.errors import (
-    DiskFullError,
     EmptyFileError,
     FolderMissingError,
     NewerRecordError,
     NotARecordError,
-    ReadOnlyError,
-    RecordError,
     RecordMissingError,
     SchemaDiffersError,
     TornRecordError,
 )
+from models.record.making import free_place, make_empty, make_record, put_in_place
 from models.record.migrations import APPLICATION_ID, FORM, bring_up_to_date
 from models.record.schema import differences
 from models.record.tables import CHANGEABLE
-from models.record.trouble import sentence_for
+from models.record.trouble import sentences
 from models.record.verify import verify
 
 __all__ = ["FILE_NAME", "Session", "Store"]
@@ -92,7 +88,7 @@ class Store:
         if not path.exists():
             if not create:
                 raise RecordMissingError(path)
-            _make(path)
+            make_record(path)
         store = cls(
             path,
             clock=clock,
@@ -138,7 +134,7 @@ class Store:
 
     @contextmanager
     def _session(self, engine: Engine) -> Iterator[Session]:
-        with _sentences(self.path):
+        with sentences(self.path):
             session = Session(engine, autoflush=False, expire_on_commit=False)
             session.info["store"] = self
             with session, session.begin():
@@ -147,19 +143,19 @@ class Store:
     def _examine(self) -> None:
         if self.path.stat().st_size == 0:
             raise EmptyFileError(self.path)
-        with _sentences(self.path), self._reader.connect() as connection:
+        with sentences(self.path), self._reader.connect() as connection:
             found = _form(self.path, connection)
             _refuse_torn(self.path, connection)
         if found < FORM:
             self._migrate(found)
-        with _sentences(self.path), self._reader.connect() as connection:
+        with sentences(self.path), self._reader.connect() as connection:
             said = differences(connection)
         if said:
             raise SchemaDiffersError(self.path, said)
 
     def _migrate(self, found: int) -> None:
-        with _sentences(self.path):
-            self._keep_copy(self.path.with_name(f"{self.path.stem} of form {found}.thirdjournal"))
+        with sentences(self.path):
+            self._keep_copy(f"{self.path.stem} of form {found}")
             with self._writer.connect() as connection, connection.begin():
                 bring_up_to_date(connection, changeable=CHANGEABLE)
                 whole = verify(Session(connection))
@@ -167,15 +163,20 @@ class Store:
                     said = tuple(trouble.words for trouble in whole.troubles)
                     raise SchemaDiffersError(self.path, said)
 
-    def _keep_copy(self, copy: Path) -> None:
-        """Keep the record as it was before it takes its next form."""
-        copy.unlink(missing_ok=True)
-        _touch(copy)
-        connection = self._writer.raw_connection()
+    def _keep_copy(self, name: str) -> None:
+        """Keep the record as it was before it takes its next form; an earlier copy stays."""
+        draft = self.path.with_name(f".{name}.new-{uuid.uuid4()}")
         try:
-            connection.cursor().execute("VACUUM INTO ?", (str(copy),))
+            make_empty(draft)
+            connection = self._writer.raw_connection()
+            try:
+                connection.cursor().execute("VACUUM INTO ?", (str(draft),))
+            finally:
+                connection.close()
+            put_in_place(draft, free_place(self.path.parent, name))
         finally:
-            connection.close()
+            with suppress(OSError):
+                draft.unlink(missing_ok=True)
 
 
 def _form(path: Path, connection: Connection) -> int:
@@ -197,63 +198,3 @@ def _refuse_torn(path: Path, connection: Connection) -> None:
     found = connection.exec_driver_sql("PRAGMA quick_check(1)").scalar_one()
     if found != "ok":
         raise TornRecordError(path, found)
-
-
-def _make(path: Path) -> None:
-    """Make a new record beside its place and put it there whole, or not at all."""
-    draft = path.with_name(f".{path.name}.new-{uuid.uuid4()}")
-    try:
-        _touch(draft)
-    except OSError as error:
-        if error.errno in (errno.EACCES, errno.EPERM, errno.EROFS):
-            raise ReadOnlyError(path) from error
-        if error.errno in (errno.ENOSPC, errno.EDQUOT):
-            raise DiskFullError(path) from error
-        raise
-    try:
-        engine = engine_for(draft, writing=True)
-        try:
-            with _sentences(path), engine.connect() as connection, connection.begin():
-                bring_up_to_date(connection, changeable=CHANGEABLE)
-        finally:
-            engine.dispose()
-        _put_in_place(draft, path)
-    finally:
-        draft.unlink(missing_ok=True)
-
-
-def _touch(path: Path) -> None:
-    """Make an empty file that only its owner may read."""
-    os.close(os.open(path, os.O_CREAT | os.O_EXCL | os.O_WRONLY, 0o600))
-
-
-def _put_in_place(draft: Path, path: Path) -> None:
-    try:
-        # Unlike a rename, a link never takes the place of a record that another window has made
-        # in the meantime.
-        os.link(draft, path)
-    except FileExistsError:
-        return
-    except OSError:
-        if not path.exists():
-            draft.rename(path)
-    if os.name != "posix":
-        return
-    folder = os.open(path.parent, os.O_RDONLY)
-    try:
-        os.fsync(folder)
-    finally:
-        os.close(folder)
-
-
-@contextmanager
-def _sentences(path: Path) -> Iterator[None]:
-    try:
-        yield
-    except RecordError:
-        raise
-    except Exception as error:
-        sentence = sentence_for(error, path)
-        if sentence is None:
-            raise
-        raise sentence from error

@@ -75,6 +75,7 @@ class BenchPage(BenchParts):
         presenter = self._presenter
         presenter.changed.connect(self.show_state)
         presenter.refused.connect(self._refuse)
+        presenter.in_hand.connect(self.reading.hold)
         presenter.troubled.connect(self._trouble)
         presenter.recovered.connect(self._recover)
         cell, beside = self.reading.cell, self.beside
@@ -224,8 +225,10 @@ class BenchPage(BenchParts):
         self._troubled = True
         if isinstance(self._presenter.state.task, ReadingTask):
             self.reading.trouble(what=what, where=where, way_out=way_out)
-            return
-        self.message.set_message(Message(what=what, where=where, way_out=way_out, key="Try again"))
+        if self.reading.isHidden() or not self.reading.cell.has_room_for_notice:
+            key = "Try again" if self.reading.isHidden() else ""
+            said = Message(what=what, where=f"{where}.", way_out=way_out, key=key)
+            self.message.set_message(said)
         self._place_message()
 
     def _recover(self) -> None:

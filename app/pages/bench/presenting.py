@@ -24,6 +24,10 @@ class BenchPresenting(Protocol):
         """Something was not taken: a sentence."""
 
     @property
+    def in_hand(self) -> SignalInstance:
+        """A reading that could not be written: its text."""
+
+    @property
     def troubled(self) -> SignalInstance:
         """The surroundings failed: what, where, the way out."""
 

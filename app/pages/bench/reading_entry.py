@@ -55,6 +55,7 @@ class ReadingEntry(PlainWidget):
         self._reader = reader
         self._place: object = None
         self._half = ""
+        self._held = ""
         self._shown: ReadingTask | None = None
         self.prompt = PromptBlock(Prompt(mark=""), look=self._look, parent=self)
         self.prompt.setObjectName("prompt")
@@ -112,6 +113,16 @@ class ReadingEntry(PlainWidget):
             self.cell.ask(asked_of(self._shown))
             self.cell.write(text)
 
+    def hold(self, text: str) -> None:
+        """Keep a reading that could not be written, to be seen in the cell with its trouble.
+
+        Parameters
+        ----------
+        text : str
+            The reading as typed.
+        """
+        self._held = text
+
     def trouble(self, *, what: str, where: str, way_out: str) -> None:
         """Say in the cell that a reading could not be written.
 
@@ -122,7 +133,8 @@ class ReadingEntry(PlainWidget):
         """
         # What is being typed by now belongs to the next mark, not to the reading that failed.
         self._half = "" if self.cell.state is CellState.WRITING else self.cell.text
-        self.cell.refuse(what=what, where=where, way_out=way_out)
+        self.cell.refuse(what=what, where=where, way_out=way_out, text=self._held)
+        self._held = ""
 
     def go_on(self) -> None:
         """Wait for a reading again after trouble; the presenter has what was in hand."""

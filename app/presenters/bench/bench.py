@@ -57,6 +57,8 @@ class BenchPresenter(QObject):
     """The state is another; read it again."""
     refused = Signal(str)
     """Something was not taken; the sentence says what, and what to do."""
+    in_hand = Signal(str)
+    """A reading that could not be written, just before the trouble is told; it is still held."""
     troubled = Signal(str, str, str)
     """The surroundings failed: what, where, the way out. Nothing typed is lost."""
     recovered = Signal()
@@ -600,9 +602,13 @@ class BenchPresenter(QObject):
         self.refused.emit(str(error))
 
     def _on_trouble(self, error: Exception) -> None:
-        self.troubled.emit(
-            "This is not on the disk yet", str(error), "Mend it, then press “try again”."
-        )
+        what = "This is not on the disk yet"
+        held = self._reading.in_hand if self._reading is not None else None
+        if held is not None:
+            typed, mark = held
+            what = f"{typed or 'No surface'} at {mark} is not on the disk yet"
+            self.in_hand.emit(typed or "")
+        self.troubled.emit(what, str(error).rstrip("."), "Mend it, then press “try again”.")
 
     def try_again(self) -> None:
         """Write again what is not on the disk yet."""

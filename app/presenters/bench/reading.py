@@ -68,7 +68,8 @@ class Reading:
         )
         self.correcting: Spot | None = None
         self.live: str | None = None
-        self.unwritten: set[Spot] = set()
+        # What was typed there, in the order in which it is being written.
+        self.unwritten: dict[Spot, str | None] = {}
         self.struck: dict[Spot, tuple[str, ...]] = self._struck_before()
         self._asked: dict[str, tuple[Asked, ...]] = {}
         for station in self._stations_touched():
@@ -129,14 +130,22 @@ class Reading:
         if was_read and old is not None:
             self.struck[spot] = (*self.struck.get(spot, ()), old)
         self.survey = with_reading(self.survey, spot, typed)
-        self.unwritten.add(spot)
+        self.unwritten[spot] = typed
         self.correcting = None
         self.live = None
         self._ask(spot.station)
 
     def written(self, spot: Spot) -> None:
         """Note that a reading is on the disk."""
-        self.unwritten.discard(spot)
+        self.unwritten.pop(spot, None)
+
+    @property
+    def in_hand(self) -> tuple[str | None, str] | None:
+        """The first value that is not on the disk yet, and its mark."""
+        for spot, typed in self.unwritten.items():
+            angle = self.survey.angles[0 if spot.is_again else int(spot.mark)]
+            return typed, f"{angle.typed}°"
+        return None
 
     def keep(self, question: Question) -> None:
         """Note that a question was answered."""

@@ -8,6 +8,7 @@ from models.units import Length, UnreadableNumberError, inch_set
 class FakeBench(QObject):
     changed = Signal()
     refused = Signal(str)
+    in_hand = Signal(str)
     troubled = Signal(str, str, str)
     recovered = Signal()
 

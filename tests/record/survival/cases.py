@@ -5,6 +5,7 @@ the program's own writer), and the act, with an `act_id` that a retry gives agai
 """
 
 from collections.abc import Callable, Iterator
+from contextlib import contextmanager
 from dataclasses import dataclass
 from functools import partial
 from pathlib import Path
@@ -66,11 +67,11 @@ class Case:
         with Store.open(folder) as store:
             self.fill(store)
 
-    def run(self, folder: Path, began: Callable[[], object]) -> None:
-        """Open the record, tell that the act begins, and do it."""
+    @contextmanager
+    def opened(self, folder: Path) -> Iterator[Callable[[], object]]:
+        """Open the record and hand out the act, which may be done again and again."""
         with Store.open(folder) as store:
-            began()
-            self.act(store)
+            yield partial(self.act, store)
 
     def repeat(self, folder: Path) -> list[str]:
         """Open the record as after a restart, do the act twice, and say what does not verify."""

@@ -23,7 +23,7 @@ from typing import Any
 
 from sqlalchemy import Engine, event
 
-from models.record import store as store_module
+from models.record import making, store
 from models.record.connections import engine_for
 from models.record.store import FILE_NAME, Store
 from tests.record.survival.cases import CASES, Case
@@ -60,7 +60,8 @@ def watch_statements(heard: Callable[[str], None]) -> None:
             event.listen(engine, "connect", lambda raw, _: raw.set_trace_callback(heard))
         return engine
 
-    store_module.engine_for = watched  # type: ignore[assignment]
+    for module in (store, making):
+        module.engine_for = watched  # type: ignore[assignment]
 
 
 class Killing:
@@ -86,7 +87,9 @@ class Killing:
         tell(state_of(folder))
         statements: list[str] = []
         watch_statements(statements.append)
-        self.case.run(folder, statements.clear)
+        with self.case.opened(folder) as act:
+            statements.clear()
+            act()
         tell(state_of(folder))
         tell(statements)
 
@@ -114,11 +117,10 @@ class Killing:
                 os.kill(os.getpid(), signal.SIGKILL)
             left[0] -= 1
 
-        def begin() -> None:
-            left[0] = number
-
         watch_statements(heard)
-        self.case.run(folder, begin)
+        with self.case.opened(folder) as act:
+            left[0] = number
+            act()
         if number > len(self.statements):
             tell("acknowledged")
         os.kill(os.getpid(), signal.SIGKILL)
@@ -184,7 +186,8 @@ def warm(bases: Bases, folder: Path) -> None:
     for number, case in enumerate({**OPENINGS, **CASES}.values()):
         work = folder / str(number)
         shutil.copytree(bases.before(case), work)
-        case.run(work, lambda: None)
+        with case.opened(work) as act:
+            act()
         case.repeat(work)
     gc.collect()
     gc.freeze()

@@ -1,7 +1,8 @@
 """Openings of a record that write: a new one is made, an older form is brought up to today's."""
 
 import gzip
-from collections.abc import Callable
+from collections.abc import Callable, Iterator
+from contextlib import contextmanager
 from dataclasses import dataclass
 from functools import partial
 from pathlib import Path
@@ -19,10 +20,10 @@ class Opening:
 
     before: Callable[[Path], None]
 
-    def run(self, folder: Path, began: Callable[[], object]) -> None:
-        """Open the record."""
-        began()
-        Store.open(folder).close()
+    @contextmanager
+    def opened(self, folder: Path) -> Iterator[Callable[[], object]]:
+        """Hand out the opening, which may be done again and again."""
+        yield lambda: Store.open(folder).close()
 
     def repeat(self, folder: Path) -> list[str]:
         """Open it twice more, and say what does not verify."""
