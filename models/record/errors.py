@@ -5,6 +5,7 @@ from pathlib import Path
 __all__ = [
     "ActDiffersError",
     "AlreadyReplacedError",
+    "CommitUnknownError",
     "DiskFaultError",
     "DiskFullError",
     "EmptyFileError",
@@ -140,6 +141,18 @@ class DiskFaultError(RecordError):
         super().__init__(
             f"The disk that holds {path} reported a fault ({found}). Nothing of this act was "
             "recorded; check the disk and its cable, then open the record again."
+        )
+
+
+class CommitUnknownError(DiskFaultError):
+    """The disk failed at the very end of an act, which may be in the record or not."""
+
+    def __init__(self, path: Path, found: str) -> None:
+        RecordError.__init__(
+            self,
+            f"The disk that holds {path} reported a fault ({found}) at the last moment, so this act "
+            "may be in the record or not. Check the disk and its cable, then try again: what is "
+            "there already is not recorded a second time.",
         )
 
 

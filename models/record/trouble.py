@@ -11,6 +11,7 @@ from sqlalchemy.exc import DBAPIError
 
 from models.record.errors import (
     AlreadyReplacedError,
+    CommitUnknownError,
     DiskFaultError,
     DiskFullError,
     LockedRecordError,
@@ -28,6 +29,9 @@ __all__ = ["sentence_for", "sentences"]
 _READ_ONLY = (errno.EACCES, errno.EPERM, errno.EROFS)
 _NO_ROOM = (errno.ENOSPC, errno.EDQUOT, errno.EFBIG)
 _GONE = (errno.ENOENT, errno.ENOTDIR, errno.ESTALE)
+
+# The journal is removed, or is being removed: that is what makes an act count.
+_AFTER_THE_COMMIT = (sqlite3.SQLITE_IOERR_DIR_FSYNC, sqlite3.SQLITE_IOERR_DELETE)
 
 
 @contextmanager
@@ -59,6 +63,8 @@ def sentence_for(error: BaseException, path: Path) -> RecordError | None:
         replaced = words.startswith("UNIQUE") and ".supersedes" in words
         return AlreadyReplacedError() if replaced else None
     code = getattr(original, "sqlite_errorcode", 0)
+    if code in _AFTER_THE_COMMIT:
+        return CommitUnknownError(path, words)
     if code == sqlite3.SQLITE_READONLY_DBMOVED or (
         code & 0xFF == sqlite3.SQLITE_CANTOPEN and not path.exists()
     ):

@@ -16,7 +16,7 @@ from collections.abc import Callable
 from pathlib import Path
 from typing import Any
 
-from models.record.errors import DiskFaultError, DiskFullError, RecordError
+from models.record.errors import CommitUnknownError, DiskFaultError, DiskFullError, RecordError
 from models.record.tables import recorded_tables
 from tests.record.survival.cases import CASES
 from tests.record.survival.children import in_a_child
@@ -32,8 +32,8 @@ KINDS = {
     for name in ("bring_in", "record Mount", "add_reading RunoutReading", "close_survey")
 } | OPENINGS
 SENTENCES = {
-    Fault.IO_ERROR_ONCE: (DiskFaultError,),
-    Fault.IO_ERROR_FOR_EVER: (DiskFaultError,),
+    Fault.IO_ERROR_ONCE: (DiskFaultError, CommitUnknownError),
+    Fault.IO_ERROR_FOR_EVER: (DiskFaultError, CommitUnknownError),
     Fault.FULL_ONCE: (DiskFullError,),
     Fault.FULL_FOR_EVER: (DiskFullError,),
 }
