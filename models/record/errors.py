@@ -150,7 +150,7 @@ class CommitUnknownError(DiskFaultError):
     def __init__(self, path: Path, found: str) -> None:
         RecordError.__init__(
             self,
-            f"The disk that holds {path} reported a fault ({found}) at the last moment, so this act "
+            f"The disk that holds {path} reported a fault ({found}) at the last moment: this act "
             "may be in the record or not. Check the disk and its cable, then try again: what is "
             "there already is not recorded a second time.",
         )
