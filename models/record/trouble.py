@@ -100,6 +100,8 @@ def _by_code(code: int, words: str, path: Path) -> RecordError | None:
         return DiskFaultError(path, words)
     if code == sqlite3.SQLITE_NOTADB:
         return NotARecordError(path)
-    if code == sqlite3.SQLITE_CORRUPT or "Could not decode" in words:
+    # A length that no row of ours has is a torn one too.
+    torn = code in (sqlite3.SQLITE_CORRUPT, sqlite3.SQLITE_TOOBIG)
+    if torn or "Could not decode" in words:
         return TornRecordError(path, words)
     return None
