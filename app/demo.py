@@ -5,6 +5,7 @@ import uuid
 from dataclasses import dataclass
 from pathlib import Path
 
+from app.demo_keys import SECRET_WORDS, DemoKeys
 from app.findings_text import summary
 from models.acts import Acts
 from models.assess import assess
@@ -28,8 +29,11 @@ class Made:
     words: str
 
 
-def make(folder: Path | None) -> Made:
-    """Make the demo shop in a folder, judge its jobs and write their travelers."""
+def make(folder: Path | None, *, secrets: Path | None = None) -> Made:
+    """Make the demo shop in a folder, judge its jobs and write their travelers.
+
+    Everybody has a key, under secrets that are printed: the demo's cost of guessing is nothing.
+    """
     from reports import traveler
 
     home = folder if folder is not None else Path(tempfile.mkdtemp(prefix="thirdjournal-demo-"))
@@ -38,12 +42,20 @@ def make(folder: Path | None) -> Made:
     lines = ["The demo shop: two rotors, people and readings that are invented.", ""]
     with Store.open(home) as store:
         acts = Acts(store)
+        keys = DemoKeys(store, acts, secrets=secrets)
+        keys.make((unfinished, pump()))
         for job in (unfinished, pump()):
-            acts.bring_in(job, by=_technician(job), act_id=str(uuid.uuid5(_NAMESPACE, job.number)))
+            acts.bring_in(
+                job,
+                by=_technician(job),
+                act_id=str(uuid.uuid5(_NAMESPACE, job.number)),
+                signer=keys.signer,
+            )
             view = assess(acts.read(job.number))
             written = home / f"traveler {job.number}.pdf"
             traveler.write(view, written)
             lines += [*summary(view), f"  traveler: {written}", f"  next: {view.next.words}", ""]
+    lines += [SECRET_WORDS, ""]
     lines.append(f"Record: {home}")
     lines.append(f"Open it with: thirdjournal --shop {home}")
     return Made(home, unfinished.number, _technician(unfinished), "\n".join(lines))

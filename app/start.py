@@ -16,12 +16,15 @@ from app.pages.bench.page import BenchPage
 from app.pages.inspection import InspectionPage
 from app.pages.jobs import JobsPage
 from app.pages.plan import PlanPage
+from app.pages.register.page import RegisterPage
 from app.pages.story import StoryPage
 from app.presenters.background import Background
 from app.presenters.bench.bench import BenchPresenter
 from app.presenters.inspection import InspectionPresenter
 from app.presenters.jobs import JobsPresenter
+from app.presenters.keys import KeysPresenter
 from app.presenters.plan import PlanPresenter
+from app.presenters.register import RegisterPresenter
 from app.presenters.shop import ShopPresenter
 from app.presenters.story import StoryPresenter
 from app.presenters.writing import Writer
@@ -29,7 +32,7 @@ from app.settings import Settings, shop_folder
 from app.style.theme import apply_theme
 from app.style.tokens import load_fonts
 from app.window import BENCH, Window
-from models.acts import Acts
+from models.acts import Acts, Keys
 from models.record.errors import (
     DiskFaultError,
     DiskFullError,
@@ -49,13 +52,14 @@ SURROUNDINGS = (LockedRecordError, DiskFullError, DiskFaultError, ReadOnlyError,
 class Opened:
     """A shop that is open in a window, and everything that has to be closed with it."""
 
-    def __init__(self, store: Store, settings: Settings) -> None:
+    def __init__(self, store: Store, settings: Settings, *, secrets: Path | None = None) -> None:
         self._store = store
         self.settings = settings
         self._acts = Acts(store)
         self.writer = Writer(surroundings=SURROUNDINGS)
         self.background = Background()
-        self.shop = ShopPresenter(self._acts, self.writer, self.background)
+        self.keys = KeysPresenter(Keys(store, self._acts, secrets=secrets), self.writer)
+        self.shop = ShopPresenter(self._acts, self.writer, self.background, keys=self.keys)
         self.window = Window(self.shop, settings, make_bench=self._make_bench)
         self._add_desks()
 
@@ -73,9 +77,11 @@ class Opened:
         inspection = InspectionPresenter(self.shop)
         window.add_desk("Inspection", InspectionPage(inspection, look=look))
         window.add_desk("Witness", StoryPage(StoryPresenter(self.shop), look=look))
+        register = RegisterPresenter(self.shop, self.keys)
+        window.add_desk("Register", RegisterPage(register, look=look))
 
     def _make_bench(self, job: str, person: str, look: Look, parent: QWidget) -> Bench:
-        presenter = BenchPresenter(self._acts, self.writer, job, person)
+        presenter = BenchPresenter(self._acts, self.writer, job, person, keys=self.keys)
         page = BenchPage(presenter, look, parent=parent)
         presenter.setParent(page)
         page.foot.pressed.connect(self._leave)

@@ -13,8 +13,10 @@ from app.benches import Benches, MakeBench
 from app.frame.desks import DesksLine
 from app.frame.look import Look
 from app.frame.messages import Message, MessageStrip
+from app.pages.ask_form import AskForm
 from app.pages.desk import DeskPage
 from app.pages.people import PeopleDialog
+from app.presenters.keys import Asking
 from app.presenters.shop import Said, ShopPresenter
 from app.presenters.wording import person_words
 from app.settings import Settings
@@ -52,6 +54,7 @@ class Window(QWidget):
         self._close_anyway = False
         self._last_in: dict[QWidget, QWidget] = {}
         self._pages: dict[str, QWidget] = {}
+        self._form: AskForm | None = None
         self._look = self._wanted_look()
         self.setWindowTitle("Third Journal")
         self.setMinimumSize(1024, 640)
@@ -73,6 +76,9 @@ class Window(QWidget):
         shop.person_changed.connect(self._person_changed)
         shop.job_changed.connect(self._job_changed)
         shop.shelf_changed.connect(self._shelf_changed)
+        if shop.keys is not None:
+            shop.keys.asked.connect(self.ask_form)
+            shop.keys.refused.connect(self._say_refused)
 
     # -- desks
 
@@ -209,6 +215,36 @@ class Window(QWidget):
         chosen = dialog.chosen
         dialog.deleteLater()
         return chosen
+
+    def ask_form(self, asking: Asking) -> None:
+        """Show a form of the keys; it stays until it is done or given up.
+
+        Parameters
+        ----------
+        asking : Asking
+            What it says and asks.
+        """
+        keys = self._shop.keys
+        if keys is None:
+            return
+        dialog = AskForm(asking, look=self._look, parent=self)
+        dialog.answered.connect(keys.answer)
+        dialog.given_up.connect(keys.give_up)
+        self._form = dialog
+        keys.refused.connect(dialog.refuse)
+        keys.finished.connect(dialog.accept)
+        dialog.finished.connect(self._form_is_gone)
+        dialog.open()
+
+    def _form_is_gone(self) -> None:
+        if self._form is not None:
+            self._form.deleteLater()
+            self._form = None
+
+    def _say_refused(self, words: str) -> None:
+        """Say what was refused before there was a form to say it in."""
+        if self._form is None:
+            self._say(Said(what=words))
 
     # -- what is said
 

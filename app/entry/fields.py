@@ -6,7 +6,15 @@ from dataclasses import dataclass
 
 from app.entry.cell_unit import CellUnit
 
-__all__ = ["CHECK_ANSWERS", "ChoiceField", "FormField", "NumberField", "TextField", "check_field"]
+__all__ = [
+    "CHECK_ANSWERS",
+    "ChoiceField",
+    "FormField",
+    "NumberField",
+    "SecretField",
+    "TextField",
+    "check_field",
+]
 
 CHECK_ANSWERS = ("yes", "no", "does not apply")
 """Answers to a check, in this order."""
@@ -47,6 +55,11 @@ class NumberField(FormField):
 @dataclass(frozen=True, slots=True, kw_only=True)
 class TextField(FormField):
     """A few words: a serial, a remark."""
+
+
+@dataclass(frozen=True, slots=True, kw_only=True)
+class SecretField(FormField):
+    """A passphrase or a PIN; what is typed is never shown."""
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)

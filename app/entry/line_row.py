@@ -6,7 +6,7 @@ from PySide6.QtCore import QEvent, QPointF, QRectF, Qt, Signal
 from PySide6.QtGui import QFontMetricsF, QKeyEvent, QPainter, QPaintEvent, QPalette
 from PySide6.QtWidgets import QLineEdit, QWidget
 
-from app.entry.fields import FormField, NumberField
+from app.entry.fields import FormField, NumberField, SecretField
 from app.entry.form_rows import ENTER_KEYS, FormRow
 from app.frame.lettering import draw_at
 from app.frame.look import Look
@@ -73,6 +73,8 @@ class LineRow(FormRow):
         self._line = _Line(row=self)
         symbol = f" in {self._unit.symbol}" if self._unit and self._unit.symbol else ""
         self._line.setAccessibleName(field.label + symbol)
+        if isinstance(field, SecretField):
+            self._line.setEchoMode(QLineEdit.EchoMode.Password)
         self._line.entered.connect(self._take)
         self._line.textEdited.connect(self._edited)
         self.setFocusProxy(self._line)
@@ -80,8 +82,9 @@ class LineRow(FormRow):
 
     @property
     def answer(self) -> str:
-        """What is typed."""
-        return self._line.text().strip()
+        """What is typed; of a secret every character counts."""
+        text = self._line.text()
+        return text if isinstance(self._field, SecretField) else text.strip()
 
     def set_answer(self, text: str) -> None:
         """Show an answer without telling anybody."""

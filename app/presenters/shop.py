@@ -9,10 +9,11 @@ from typing import Any
 from PySide6.QtCore import QObject, Signal
 
 from app.presenters.background import Background
+from app.presenters.keys import KeysPresenter
 from app.presenters.writing import Writer
 from models.acts import Acts, NotAllowedError, Recorded
 from models.assess import Assessment, assess
-from models.job import AnyEntry, Job, Person
+from models.job import AnyEntry, Job, Person, Signature
 from models.record.errors import RecordError
 from models.record.queries import JobRow
 
@@ -45,9 +46,12 @@ class ShopPresenter(QObject):
         writer: Writer,
         background: Background,
         parent: QObject | None = None,
+        *,
+        keys: KeysPresenter | None = None,
     ) -> None:
         super().__init__(parent)
         self.acts = acts
+        self.keys = keys
         self.writer = writer
         self.background = background
         self._rows: tuple[JobRow, ...] = ()
@@ -191,7 +195,9 @@ class ShopPresenter(QObject):
         return next((one for one in self.people if one.key == self._person), None)
 
     def sign_in(self, key: str) -> None:
-        """Sign somebody in; names are taken on trust.
+        """Let somebody sit at the window; a sitting of somebody else ends.
+
+        Whoever only looks and records is taken at their word; a signature asks for secrets.
 
         Parameters
         ----------
@@ -200,6 +206,8 @@ class ShopPresenter(QObject):
         """
         if key != self._person:
             self._person = key
+            if self.keys is not None:
+                self.keys.leave()
             self.person_changed.emit()
 
     # -- acts
@@ -226,6 +234,9 @@ class ShopPresenter(QObject):
             done(recorded)
             self.refresh()
 
+        if isinstance(entry, Signature) and self.keys is not None and self.keys.needs_key:
+            self.keys.ask_to_sign(number, entry, done=written)
+            return
         self.writer.write(
             lambda: self.acts.record(number, entry), done=written, refused=self._refused
         )

@@ -27,6 +27,7 @@ from app.presenters.bench.verdicts import (
     verdict_so_far,
 )
 from app.presenters.bench.walk import Spot
+from app.presenters.keys import KeysPresenter
 from app.presenters.writing import Writer
 from models.acts import Acts, NotAllowedError, Recorded, new_id
 from models.assess import Assessment, Attempt, assess
@@ -71,9 +72,12 @@ class BenchPresenter(QObject):
         job_number: str,
         person: str,
         parent: QObject | None = None,
+        *,
+        keys: KeysPresenter | None = None,
     ) -> None:
         super().__init__(parent)
         self._acts = acts
+        self._signing = keys
         self._writer = writer
         self._number = job_number
         self._person = person
@@ -581,7 +585,14 @@ class BenchPresenter(QObject):
             meaning=meanings.get(role, "decided"),  # type: ignore[arg-type]  # one of its words
             covers=f"step {number}, attempt {view.next.attempt}",
         )
+        if self._signing is not None and self._signing.needs_key:
+            self._signing.ask_to_sign(self._number, entry, done=self._signed)
+            return
         self._write_made(Made((entry,)))
+
+    def _signed(self, recorded: Recorded) -> None:
+        self._note_written(recorded)
+        self.reload()
 
     # The writer's answers ------------------------------------------------------------------
 
@@ -698,7 +709,7 @@ def _sign_task(
         "Sign the step",
         (
             f"{who.name}, {who.role}, {words[1]}.",
-            "Until keys are set up a name is taken on trust.",
+            "What it covers is shown before the secret is asked.",
         ),
         (Key("sign", f"Sign as {who.name}"),),
     )
