@@ -5,9 +5,13 @@ Everything that judges, draws or prints a job starts from these types. They hold
 """
 
 from models.job.base import *  # noqa: F403
+from models.job.cooling_watch import *  # noqa: F403
+from models.job.draw_up import *  # noqa: F403
 from models.job.entries import *  # noqa: F403
 from models.job.job import *  # noqa: F403
+from models.job.limits import *  # noqa: F403
 from models.job.loads import *  # noqa: F403
 from models.job.material import *  # noqa: F403
 from models.job.origin import *  # noqa: F403
 from models.job.plan import *  # noqa: F403
+from models.job.taper import *  # noqa: F403

@@ -3,6 +3,8 @@
 from typing import Literal
 
 from models.job.base import Frozen
+from models.job.cooling_watch import StationWatched
+from models.job.draw_up import DrawUp
 from models.job.entries import (
     AttemptOpened,
     AxialMeasured,
@@ -40,6 +42,7 @@ AnyEntry = (
     | Confirmation
     | Cooling
     | Decision
+    | DrawUp
     | Handling
     | Heating
     | Mount
@@ -49,6 +52,7 @@ AnyEntry = (
     | Settled
     | Signature
     | SizeSurvey
+    | StationWatched
 )
 
 

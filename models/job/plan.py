@@ -8,6 +8,7 @@ clock angles from the reference mark, the way the rotor names.
 from typing import Literal
 
 from models.job.base import Frozen
+from models.job.limits import LengthLimit, TemperatureLimit
 from models.job.loads import (
     BalanceReason,
     ForceCarried,
@@ -17,6 +18,7 @@ from models.job.loads import (
 )
 from models.job.material import OwnMaterial
 from models.job.origin import Origin
+from models.job.taper import TaperFit
 from models.units import (
     Angle,
     Length,
@@ -25,7 +27,6 @@ from models.units import (
     Pressure,
     Ratio,
     Speed,
-    Temperature,
     TemperatureStep,
 )
 
@@ -36,7 +37,6 @@ __all__ = [
     "Item",
     "ItemKind",
     "Land",
-    "LengthLimit",
     "Outline",
     "OutlineKind",
     "Plan",
@@ -50,7 +50,6 @@ __all__ = [
     "Station",
     "StationKind",
     "Step",
-    "TemperatureLimit",
 ]
 
 Role = Literal["technician", "inspector", "engineer", "witness"]
@@ -60,20 +59,6 @@ OutlineKind = Literal[
 ]
 StationKind = Literal["journal", "shaft", "seat", "probe track", "part"]
 PointKind = Literal["hold", "witness", "review"]
-
-
-class LengthLimit(Frozen, frozen=True, kw_only=True):
-    """A limit on a length, with its origin."""
-
-    value: Length
-    origin: Origin
-
-
-class TemperatureLimit(Frozen, frozen=True, kw_only=True):
-    """A limit on a temperature, with its origin."""
-
-    value: Temperature
-    origin: Origin
 
 
 class Growth(Frozen, frozen=True, kw_only=True):
@@ -205,6 +190,7 @@ class Item(Frozen, frozen=True, kw_only=True):
     roughness_kind: RoughnessKind = "Rz"
     thrust: ForceCarried | None = None
     running: RunningWarmth | None = None
+    taper: TaperFit | None = None
 
 
 class Point(Frozen, frozen=True, kw_only=True):

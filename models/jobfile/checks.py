@@ -14,6 +14,7 @@ from models.job import (
     AttemptOpened,
     Cooling,
     Correction,
+    DrawUp,
     Heating,
     Item,
     Job,
@@ -25,6 +26,7 @@ from models.job import (
     Settled,
     Shaft,
     SizeSurvey,
+    StationWatched,
     Step,
 )
 from models.jobfile.faults import MISSING, Fault, Words
@@ -352,6 +354,20 @@ class _EntryChecks:
         for index, warmth in enumerate(entry.temperatures):
             yield from _round_the_clock(f"{self.place}.temperatures[{index}].angle", warmth.angle)
 
+    def _drawn_up(self, entry: DrawUp) -> Iterator[Fault]:
+        if not entry.advances:
+            found = Words("an empty list")
+            yield Fault(
+                f"{self.place}.advances", found, "a stand-off at one clock position or more"
+            )
+        for index, one in enumerate(entry.advances):
+            yield from _round_the_clock(f"{self.place}.advances[{index}].angle", one.angle)
+
+    def _watched(self, entry: StationWatched) -> Iterator[Fault]:
+        known = [station.key for station in self.plan.stations] if self.plan else []
+        yield from _known(f"{self.place}.station", entry.station, known, "station")
+        yield from _round_the_clock(f"{self.place}.angle", entry.angle)
+
     _OWN: ClassVar[dict[type, Callable[..., Iterator[Fault]]]] = {
         AttemptOpened: _attempt,
         SizeSurvey: _sizes,
@@ -360,6 +376,8 @@ class _EntryChecks:
         Mount: _mount,
         Cooling: _cooling,
         Settled: _settled,
+        DrawUp: _drawn_up,
+        StationWatched: _watched,
     }
 
 

@@ -8,12 +8,14 @@ from sqlalchemy import select
 from sqlalchemy.orm import Session
 
 from models.job import (
+    Advance,
     AnyEntry,
     AttemptOpened,
     Check,
     Confirmation,
     Cooling,
     Correction,
+    DrawUp,
     Entry,
     GaugeTry,
     Heating,
@@ -41,6 +43,7 @@ _PARTS: tuple[type[Base], ...] = (
     tables.SurveyAngle,
     tables.SurveyPosition,
     tables.RunoutStation,
+    tables.DrawUpAdvance,
     tables.BroughtCorrection,
 )
 
@@ -74,6 +77,10 @@ class EntryReader:
         elif kind is Confirmation:
             given["checks"] = tuple(
                 struct_from(Check, part) for part in self._parts[tables.ConfirmationCheck][key]
+            )
+        elif kind is DrawUp:
+            given["advances"] = tuple(
+                struct_from(Advance, part) for part in self._parts[tables.DrawUpAdvance][key]
             )
         elif kind is RunoutSurvey:
             given |= self._survey(key) | self._runout(key)

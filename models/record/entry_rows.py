@@ -13,6 +13,7 @@ from models.job import (
     Cooling,
     Correction,
     Decision,
+    DrawUp,
     GaugeTry,
     Handling,
     Heating,
@@ -28,6 +29,7 @@ from models.job import (
     SizeReading,
     SizeSurvey,
     StationReadings,
+    StationWatched,
     Warmth,
 )
 from models.record import tables
@@ -70,6 +72,7 @@ DETAILS: dict[type[AnyEntry], type[Base]] = {
     Confirmation: tables.Confirmation,
     Cooling: tables.Cooling,
     Decision: tables.Decision,
+    DrawUp: tables.DrawUp,
     Handling: tables.Handling,
     Heating: tables.Heating,
     Mount: tables.Mount,
@@ -79,6 +82,7 @@ DETAILS: dict[type[AnyEntry], type[Base]] = {
     Settled: tables.Settled,
     Signature: tables.Signature,
     SizeSurvey: tables.SizeSurvey,
+    StationWatched: tables.StationWatched,
 }
 
 # Fields of each kind that stand in tables of their own.
@@ -86,6 +90,7 @@ LEFT_OUT: dict[type[AnyEntry], tuple[str, ...]] = {
     AttemptOpened: ("components",),
     Confirmation: ("checks",),
     Cooling: ("temperatures", "corrections"),
+    DrawUp: ("advances",),
     Heating: ("temperatures", "gauge", "corrections"),
     RunoutSurvey: ("angles", "stations", "closed_at", "corrections", "kept"),
     SizeSurvey: ("positions", "angles", "typed", "closed_at", "corrections", "kept"),
@@ -203,6 +208,10 @@ def _parts(entry: AnyEntry) -> Iterator[Line]:
     elif isinstance(entry, Confirmation):
         yield from _numbered(
             entry.id, tables.ConfirmationCheck, [columns_of(check) for check in entry.checks]
+        )
+    elif isinstance(entry, DrawUp):
+        yield from _numbered(
+            entry.id, tables.DrawUpAdvance, [columns_of(one) for one in entry.advances]
         )
     elif isinstance(entry, RunoutSurvey | SizeSurvey):
         yield from _numbered(

@@ -14,7 +14,17 @@ from typing import Any, NamedTuple, TypeVar
 import msgspec
 
 from models.record.canonical import canonical_text, normal
-from models.units import Angle, Expansion, Length, Quantity, Temperature
+from models.units import (
+    Angle,
+    Duration,
+    Expansion,
+    Length,
+    Pressure,
+    Quantity,
+    Ratio,
+    Temperature,
+    Torque,
+)
 
 __all__ = ["Cell", "Row", "columns_of", "quantity_columns", "quantity_from", "struct_from"]
 
@@ -28,6 +38,10 @@ _ENDINGS: dict[type[Quantity], str] = {
     Temperature: "mk",
     Angle: "mdeg",
     Expansion: "per_tera_kelvin",
+    Pressure: "pa",
+    Ratio: "ppm",
+    Duration: "ms",
+    Torque: "mnm",
 }
 # Field names that would be unclear, or words of SQL, as names of columns.
 _RENAMED = {

@@ -1,6 +1,7 @@
 """One small invented job with every kind of entry, made by hand."""
 
 from models.job import (
+    Advance,
     AnyEntry,
     AttemptOpened,
     AxialMeasured,
@@ -12,6 +13,7 @@ from models.job import (
     CoolingLimits,
     Correction,
     Decision,
+    DrawUp,
     ExpansionAt,
     GaugeTry,
     Handling,
@@ -44,6 +46,7 @@ from models.job import (
     SizeSurvey,
     Station,
     StationReadings,
+    StationWatched,
     Step,
     StoredVerdict,
     TemperatureLimit,
@@ -53,6 +56,7 @@ from models.units import (
     Angle,
     Conductivity,
     Density,
+    Duration,
     Expansion,
     HeatCapacity,
     Length,
@@ -60,6 +64,7 @@ from models.units import (
     Ratio,
     Temperature,
     TemperatureStep,
+    Torque,
 )
 
 __all__ = [
@@ -343,6 +348,28 @@ def entries() -> tuple[AnyEntry, ...]:
                 Warmth(position=mm("450"), angle=ANGLES[0], temperature=celsius("21")),
                 Warmth(position=mm("450"), angle=ANGLES[2], temperature=celsius("21.5")),
             ),
+        ),
+        StationWatched(
+            **common("watched", one, 82),
+            station="middle",
+            value=Length.read("14.5 µm"),
+            angle=ANGLES[1],
+            instrument="DI-3",
+        ),
+        DrawUp(
+            **common("drawn", one, 83),
+            item="w1",
+            advances=(
+                Advance(angle=ANGLES[0], zero=mm("12.41"), drawn_up=mm("8.40")),
+                Advance(angle=ANGLES[2], zero=mm("12.43"), drawn_up=Length.read("0.331 in")),
+            ),
+            contact=Ratio.read("88 %"),
+            contact_note="heavier at the large end",
+            dilation_pressure=Pressure.read("1350 bar"),
+            axial_pressure=Pressure.read("120 bar"),
+            hold=Duration.read("30 min"),
+            hub_growth=Length.read("0.11 mm"),
+            nut_torque=Torque.read("300 N·m"),
         ),
         a_survey("after one", one, 85, stations=BARE_READINGS[:2], closed_at=at(89)),
         Removal(
