@@ -36,10 +36,12 @@ from models.record.places import AnyReading
 from models.record.reading_writer import closing_line, next_reading_line
 from models.record.tables import Base, table
 
-__all__ = ["BROUGHT_IN", "Act"]
+__all__ = ["BROUGHT_IN", "PROGRAM", "Act"]
 
 # Acts of this kind repeat what another record or a job file holds; nothing is refused in them.
 BROUGHT_IN = "brought in"
+# Who acts where nobody does: the program keeps what a backup holds.
+PROGRAM = "the program"
 
 # What an entry keeps of its instrument as it stood then.
 _COPIED = (
@@ -298,7 +300,8 @@ class Act:
         """
         if not self._begun:
             raise UnknownJobError(self._number or "")
-        strangers = self._people - people_known(self._session, self.chain_id, self._people)
+        named = self._people - {PROGRAM}
+        strangers = named - people_known(self._session, self.chain_id, named)
         if strangers:
             raise UnknownPersonError(tuple(sorted(strangers)))
 

@@ -16,6 +16,7 @@ from models.job import Head
 from models.record import tables
 from models.record.chain_check import ChainCheck, Trouble
 from models.record.errors import UnknownJobError
+from models.record.heads_seen import heads_seen_troubles
 from models.record.lookups import chain_of_job
 from models.record.schema import differences
 from models.record.signature_check import signature_troubles
@@ -62,7 +63,9 @@ def verify(
     troubles = list(_of_the_file(session))
     heads: dict[str, Head] = {}
     acts = 0
-    for chain_id, name in _chains(session, number).items():
+    chains = _chains(session, number)
+    troubles += heads_seen_troubles(session, chains)
+    for chain_id, name in chains.items():
         chain = ChainCheck(session, chain_id, name)
         troubles += chain.troubles()
         troubles += signature_troubles(session, chain_id, name)

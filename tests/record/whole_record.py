@@ -23,6 +23,7 @@ from models.job import (
 )
 from models.record import journal, key_rows
 from models.record.act import Act
+from models.record.heads_seen import add_heads_seen, add_restoration, all_heads
 from models.record.places import AnyReading
 from models.record.signed_text import to_sign
 from models.record.store import Store
@@ -60,6 +61,17 @@ def fill(store: Store) -> None:
         act.add_instruments([msgspec.structs.replace(job.instruments[0], range="0 to 2 mm")])
         act.add_materials([msgspec.structs.replace(FORGING, source="certificate 18")])
     _give_keys(store)
+    with store.reading() as session:
+        heads = all_heads(session)
+    with one_act(store, "backed up", chain=journal.SHOP) as act:
+        add_heads_seen(act, backup_name="shop 2031-03-04 110000Z.thirdjournal", heads=heads)
+        add_restoration(
+            act,
+            backup_name="shop 2031-03-03 110000Z.thirdjournal",
+            backup_made_at=at(0),
+            set_aside="shop set aside 2031-03-04 120000.thirdjournal",
+            left_behind=3,
+        )
     with one_act(store, "facts again") as act:
         act.add_components([msgspec.structs.replace(job.components[0], revision="C")])
     with one_act(store, "opened") as act:

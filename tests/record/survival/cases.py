@@ -13,6 +13,7 @@ from pathlib import Path
 import msgspec
 
 from models.acts import Acts
+from models.acts.backups import back_up, restore
 from models.job import (
     AnyEntry,
     GaugeTry,
@@ -187,6 +188,23 @@ def _keep_material(store: Store) -> object:
     return Acts(store).keep_material(FORGING, person=_JOB.people[2], act_id=ID)
 
 
+def _back_up(store: Store) -> object:
+    return back_up(store, act_id=ID)
+
+
+def _backed_up(store: Store) -> None:
+    """Back up, and record one more reading, which a restoring leaves behind."""
+    _with_open_entries(store)
+    back_up(store, act_id="backed up")
+    _add_reading("RunoutReading", store)
+
+
+def _restore(store: Store) -> object:
+    folder = store.path.parent
+    (backup,) = folder.glob("backups/*")
+    return restore(backup, folder, act_id="restored")
+
+
 CASES: dict[str, Case] = {
     "bring_in": Case(_nothing, _bring_in),
     **dict(_entry_cases()),
@@ -195,6 +213,8 @@ CASES: dict[str, Case] = {
         for kind in _READINGS
     },
     "answer": Case(_with_open_entries, _answer),
+    "back_up": Case(_with_open_entries, _back_up),
+    "restore": Case(_backed_up, _restore),
     "keep_material": Case(_nothing, _keep_material),
     "close_survey": Case(_with_open_entries, _close_survey),
     **{name: Case(*case) for name, case in key_cases(_JOB).items()},

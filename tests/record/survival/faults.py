@@ -29,7 +29,7 @@ __all__ = ["main"]
 # What they write is alike for all kinds: a few pages, many pages, many acts in one.
 KINDS = {
     name: CASES[name]
-    for name in ("bring_in", "record Mount", "add_reading RunoutReading", "close_survey")
+    for name in ("bring_in", "record Mount", "add_reading RunoutReading", "close_survey", "restore")
 } | OPENINGS
 SENTENCES = {
     Fault.IO_ERROR_ONCE: (DiskFaultError, CommitUnknownError),

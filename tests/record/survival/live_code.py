@@ -13,6 +13,8 @@ import models.acts
 
 __all__ = ["kinds_of_acts"]
 
+# A write transaction, or a record put in the place of another.
+_WRITES = {"writing", "put_back"}
 _FOLDER = Path(models.acts.__path__[0])
 
 
@@ -26,7 +28,7 @@ def kinds_of_acts() -> set[str]:
     for path in sorted(_FOLDER.rglob("*.py")):
         for name, node in _functions(ast.parse(path.read_text(encoding="utf-8"))):
             found[path, name] = _called(node)
-    writers = {place for place, called in found.items() if "writing" in called}
+    writers = {place for place, called in found.items() if called & _WRITES}
     while True:
         names = {name.split(".")[-1] for _, name in writers}
         more = {place for place, called in found.items() if called & names} - writers

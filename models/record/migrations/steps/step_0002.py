@@ -2,7 +2,7 @@
 
 from collections.abc import Callable
 
-from models.record.migrations.form_2 import assembly, keys, shop_materials
+from models.record.migrations.form_2 import assembly, backups, keys, shop_materials
 
 __all__: list[str] = []
 
@@ -12,7 +12,12 @@ branch_labels = None
 depends_on = None
 
 # In the order in which their tables rest on each other.
-_LAID: tuple[Callable[[], None], ...] = (shop_materials.lay, keys.lay, assembly.lay)
+_LAID: tuple[Callable[[], None], ...] = (
+    shop_materials.lay,
+    keys.lay,
+    assembly.lay,
+    backups.lay,
+)
 
 
 def upgrade() -> None:

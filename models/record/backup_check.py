@@ -1,0 +1,104 @@
+"""Compare a record with its backups: a file that was rolled back lacks links that they hold."""
+
+from dataclasses import dataclass
+from pathlib import Path
+
+from sqlalchemy import select
+from sqlalchemy.orm import Session
+
+from models.job import Head
+from models.record import tables
+from models.record.backups import Contents, backups_in, contents_of, links_held
+from models.record.chain_check import Trouble
+from models.record.errors import RecordError
+from models.record.tables import table
+
+__all__ = ["Compared", "compared_with_backups"]
+
+
+@dataclass(frozen=True, kw_only=True)
+class Compared:
+    """What the backups of some folders say: what does not hold, and what is only to be known."""
+
+    troubles: tuple[Trouble, ...]
+    notices: tuple[str, ...]
+    backups: int
+
+
+def compared_with_backups(session: Session, folders: tuple[Path, ...]) -> Compared:
+    """Demand that the record holds every link at which one of its backups ends.
+
+    Acts that a restoring left behind are told, and are no trouble: it is on the record itself.
+    """
+    troubles: list[Trouble] = []
+    notices: list[str] = []
+    count = 0
+    restored = _restorations(session)
+    for path in (path for folder in folders for path in backups_in(folder)):
+        try:
+            contents = contents_of(path)
+        except RecordError as trouble:
+            notices.append(f"backup {path.name} is of no use: {trouble}")
+            continue
+        count += 1
+        told = _missing(session, contents)
+        # A restoring that the backup itself holds came before it, and explains nothing.
+        later = [one for one in restored if not links_held(path, {one.chain: one.link})[one.chain]]
+        if told and later:
+            at, name = later[0].at, later[0].backup_name
+            notices.append(
+                f"backup {path.name} holds acts that were left behind on {at[:10]}, when the "
+                f"record was put back to {name}"
+            )
+        else:
+            troubles += told
+    return Compared(troubles=tuple(troubles), notices=tuple(notices), backups=count)
+
+
+@dataclass(frozen=True, kw_only=True)
+class _Restoring:
+    chain: str
+    link: Head
+    at: str
+    backup_name: str
+
+
+def _restorations(session: Session) -> list[_Restoring]:
+    act, of = table(tables.Act), table(tables.Restoration)
+    rows = session.execute(
+        select(act.c.chain_id, act.c.sequence, act.c.digest, act.c.entered_at_utc, of.c.backup_name)
+        .join(of, (of.c.chain_id == act.c.chain_id) & (of.c.sequence == act.c.sequence))
+        .order_by(act.c.sequence)
+    )
+    return [
+        _Restoring(
+            chain=row.chain_id,
+            link=Head(sequence=row.sequence, digest=row.digest),
+            at=row.entered_at_utc,
+            backup_name=row.backup_name,
+        )
+        for row in rows
+    ]
+
+
+def _missing(session: Session, contents: Contents) -> list[Trouble]:
+    act = table(tables.Act)
+    told = []
+    for chain, head in contents.heads.items():
+        found = session.execute(
+            select(act.c.digest).where(act.c.chain_id == chain, act.c.sequence == head.sequence)
+        ).scalar_one_or_none()
+        if found == head.digest:
+            continue
+        what = "was cut off" if found is None else "the chain was written anew"
+        told.append(
+            Trouble(
+                job=contents.names[chain] or "the shop",
+                sequence=head.sequence,
+                table="act",
+                what=f"{what}: backup {contents.path.name} holds another link here"
+                if found is not None
+                else f"{what}: backup {contents.path.name} ends there",
+            )
+        )
+    return told
