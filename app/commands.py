@@ -24,6 +24,7 @@ examples:
   thirdjournal check compressor.json          judge a job file, without any record
   thirdjournal traveler pump.json -o pump.pdf write a job's traveler
   thirdjournal verify demo                    recompute a record and compare
+  thirdjournal handbook holding_torque        formula, source, range and tests of a number
 
 exit status: 0 every rule within, 1 anything outside, in doubt or not judged, 2 unusable input
 """
@@ -42,6 +43,10 @@ def main(arguments: Sequence[str]) -> int:
     except _UnusableError as trouble:
         print(f"thirdjournal: {trouble}", file=sys.stderr)  # noqa: T201  (a command speaks)
         return _UNUSABLE
+    except BrokenPipeError:
+        # Whoever read the output has seen enough; the interpreter must not write to it at its end.
+        os.dup2(os.open(os.devnull, os.O_WRONLY), sys.stdout.fileno())
+        return _WITHIN
     except OSError as trouble:
         where = f" ({trouble.filename})" if trouble.filename else ""
         print(  # noqa: T201
@@ -93,6 +98,14 @@ def _parser() -> argparse.ArgumentParser:
         "--head", metavar="N:DIGEST", help="a head of that job, as a traveler prints it"
     )
     verify.set_defaults(run=_verify)
+    handbook = commands.add_parser(
+        "handbook", help="list every rule and formula with source, range and tests"
+    )
+    handbook.add_argument(
+        "words", nargs="*", metavar="WORD", help="a rule, a formula, a number's name, or words"
+    )
+    handbook.add_argument("--json", action="store_true", help="the entries as plain data")
+    handbook.set_defaults(run=_handbook)
     return parser
 
 
@@ -144,6 +157,23 @@ def _verify(given: argparse.Namespace) -> int:
     found = _with_record(lambda: verified(given.record, job=given.job, head=head))
     _say(found.words)
     return _WITHIN if found.is_whole else _NOT_WITHIN
+
+
+def _handbook(given: argparse.Namespace) -> int:
+    from app import handbook_text
+    from models.handbook import find
+
+    words = " ".join(given.words)
+    found = find(words)
+    if not found:
+        raise _UnusableError(
+            f"the handbook has nothing on “{words}”. Try fewer words, or none for all of it"
+        )
+    if given.json:
+        _say(json.dumps(handbook_text.as_data(found), indent=1, ensure_ascii=False))
+    else:
+        _say(handbook_text.told(words))
+    return _WITHIN
 
 
 def _demo(given: argparse.Namespace) -> int:

@@ -189,8 +189,8 @@ def permissible_residual_very_high_speed(
 def permissible_residual_naval(*, rotor_mass: float, maximum_continuous_speed: float) -> float:
     r"""Permissible residual unbalance per plane by the naval rule, from the **whole** rotor.
 
-    In ounce-inches, pounds and r/min: 4 W/N above 1000 r/min, 4000 W/N² from there down to 150,
-    and 0.177 W at 150 and below.
+    Formula: U = 4 W/N above 1000 r/min, 4000 W/N² from there down to 150, and 0.177 W at 150 and
+    below, in ounce-inches, pounds and r/min.
 
     Parameters
     ----------

@@ -49,8 +49,9 @@ def drop_window(
     """Time a hot part leaves, in the room and over its seat, from the coldest measured bore.
 
     In the room the part cools until the clearance is down to the least wanted; over the seat it
-    closes from the clearance it has now until metal touches. The formulas are those of
-    `time_in_air` and `time_over_seat`.
+    closes from the clearance it has now until metal touches.
+
+    Formula: those of `time_in_air` and `time_over_seat`, one after the other.
 
     Parameters
     ----------

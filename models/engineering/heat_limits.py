@@ -28,6 +28,8 @@ def highest_temperature(
 ) -> float | None:
     """Temperature a part must not pass: the plan's, else the tempering one less a margin.
 
+    Formula: the plan's limit where it gives one, else tempering temperature − margin.
+
     Parameters
     ----------
     plan_limit : float | None
@@ -79,8 +81,8 @@ def thermometer_span(
 ) -> ThermometerSpan:
     """Span of readings that prove a bore both hot enough and not too hot.
 
-    The least is the target plus the thermometer's uncertainty, the greatest is the highest allowed
-    less it.
+    Formula: least = target + U, greatest = highest allowed − U, with U the thermometer's expanded
+    uncertainty.
 
     Parameters
     ----------

@@ -303,8 +303,9 @@ def residual_from_vectors(
 def root_by_plain_reading(*, check: AmplitudeCheck, plain_reading: float) -> RootChoice:
     r"""Choose between the two answers by the reading taken without the trial weight.
 
-    If the smaller answer is true the rotor alone reads :math:`k R`; if the larger, :math:`k T`,
-    with k the sensitivity of the smaller.
+    .. math:: A_0 = k R \text{ if the smaller is true,} \quad A_0 = k T \text{ if the larger}
+
+    with k the sensitivity of the smaller; the nearer of the two is chosen.
 
     Parameters
     ----------

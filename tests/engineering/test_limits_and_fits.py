@@ -13,6 +13,7 @@ from models.engineering.limits_and_fits import (
     limit_deviations,
     tolerance_grade,
 )
+from models.engineering.named_fits import named_fit
 from tests.published.limits_and_fits import FORCE_FITS, INTERFERENCES, LIMITS
 from tests.published.printed import printed
 
@@ -167,3 +168,26 @@ def test_a_force_fit_that_is_not_tabulated_is_refused_by_name(diameter, force_cl
 def test_a_grade_that_is_not_tabulated_is_refused_by_name(grade):
     with pytest.raises(OutOfRangeError, match="grade"):
         tolerance_grade(nominal_diameter=0.1, grade=grade)
+
+
+@pytest.mark.parametrize("row", INTERFERENCES, ids=lambda row: f"{row.over}-{row.shaft}")
+def test_a_fit_s_name_stands_for_the_printed_interference(row):
+    found = named_fit(nominal_diameter=row.to * 1e-3, name=f" {row.hole} / {row.shaft}")
+    assert found.least == printed(row.least, 1e-6), row.source
+    assert found.greatest == printed(row.greatest, 1e-6), row.source
+    assert (found.name, found.standard) == (f"{row.hole}/{row.shaft}", "ISO 286-2")
+    assert not found.in_inches
+
+
+@pytest.mark.parametrize("row", FORCE_FITS, ids=lambda row: f"{row.over}-{row.force_class}")
+def test_a_force_fit_s_name_stands_for_the_printed_interference(row):
+    found = named_fit(nominal_diameter=row.to * 0.0254, name=row.force_class.lower())
+    assert found.least == printed(row.least, 0.0254e-3), row.source
+    assert found.greatest == printed(row.greatest, 0.0254e-3), row.source
+    assert found.name == row.force_class
+    assert found.in_inches
+
+
+def test_a_name_that_is_no_fit_is_refused_with_examples():
+    with pytest.raises(OutOfRangeError, match="H7/s6, or one of FN1"):
+        named_fit(nominal_diameter=0.1, name="s6")

@@ -25,6 +25,8 @@ MUST_NOT_IMPORT = {
     "models/trust": ["app", "reports", "sample_data", "models.record", "models.job", "models.rules",
                      "models.assess", "models.acts", "models.engineering", "models.units",
                      "sqlalchemy", "PySide6"],
+    "models/handbook": ["app", "reports", "sample_data", "models.record", "models.job",
+                        "models.jobfile", "models.assess", "models.acts", "sqlalchemy", "PySide6"],
     "models/units.py": ["app", "reports", "models", "sqlalchemy", "PySide6"],
     "models/jobfile": ["app", "reports", "sample_data", "models.record", "models.rules",
                           "models.assess", "models.acts", "sqlalchemy", "PySide6"],
