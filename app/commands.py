@@ -25,6 +25,7 @@ examples:
   thirdjournal traveler pump.json -o pump.pdf write a job's traveler
   thirdjournal verify demo                    recompute a record and compare
   thirdjournal handbook holding_torque        formula, source, range and tests of a number
+  thirdjournal backup demo --to /media/stick  write a backup there, verified
 
 exit status: 0 every rule within, 1 anything outside, in doubt or not judged, 2 unusable input
 """
@@ -106,6 +107,21 @@ def _parser() -> argparse.ArgumentParser:
     )
     handbook.add_argument("--json", action="store_true", help="the entries as plain data")
     handbook.set_defaults(run=_handbook)
+    backup = commands.add_parser("backup", help="write a backup of a record, and compare it")
+    backup.add_argument("record", type=Path, metavar="SHOP", help="folder of the record")
+    backup.add_argument(
+        "--to", type=Path, metavar="FOLDER", help="where (default: backups beside the record)"
+    )
+    backup.set_defaults(run=_backup)
+    restore = commands.add_parser(
+        "restore", help="put a record back to a backup; what stands there is set aside"
+    )
+    restore.add_argument("backup", type=Path, metavar="BACKUP")
+    restore.add_argument("record", type=Path, metavar="SHOP", help="folder of the record")
+    restore.add_argument(
+        "--look", action="store_true", help="only say what it holds and what would be left behind"
+    )
+    restore.set_defaults(run=_restore)
     return parser
 
 
@@ -173,6 +189,21 @@ def _handbook(given: argparse.Namespace) -> int:
         _say(json.dumps(handbook_text.as_data(found), indent=1, ensure_ascii=False))
     else:
         _say(handbook_text.told(words))
+    return _WITHIN
+
+
+def _backup(given: argparse.Namespace) -> int:
+    from app.backup_text import backed_up
+
+    _say(_with_record(lambda: backed_up(given.record, to=given.to)))
+    return _WITHIN
+
+
+def _restore(given: argparse.Namespace) -> int:
+    from app.backup_text import looked_into, put_back
+
+    act = looked_into if given.look else put_back
+    _say(_with_record(lambda: act(given.backup, given.record)))
     return _WITHIN
 
 

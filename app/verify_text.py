@@ -4,6 +4,8 @@ from dataclasses import dataclass
 from pathlib import Path
 
 from models.job import Head
+from models.record.backup_check import compared_with_backups
+from models.record.backups import FOLDER_NAME
 from models.record.store import Store
 from models.record.verify import verify
 
@@ -37,9 +39,12 @@ def verified(folder: Path, *, job: str | None, head: Head | None) -> Verified:
     """Recompute every link of a shop's record from its rows, and say what does not hold."""
     with Store.open(folder, create=False) as store, store.reading() as session:
         found = verify(session, number=job, expected=head)
-    lines = [trouble.words for trouble in found.troubles]
+        beside = compared_with_backups(session, (folder / FOLDER_NAME,))
+    troubles = (*found.troubles, *beside.troubles)
+    lines = [trouble.words for trouble in troubles]
     whole = "holds: every link agrees with its rows"
     lines.append(f"{found.acts} acts: the record {'does not hold' if lines else whole}.")
+    lines += beside.notices
     lines += [
         f"  {name}: {one.sequence} {one.digest[:16]}…" for name, one in sorted(found.heads.items())
     ]
@@ -47,4 +52,4 @@ def verified(folder: Path, *, job: str | None, head: Head | None) -> Verified:
         "Whoever holds the file and rewrites all of it can make a record that holds; compare these "
         "heads with those printed on travelers already given out."
     )
-    return Verified("\n".join(lines), found.is_whole)
+    return Verified("\n".join(lines), not troubles)

@@ -122,7 +122,7 @@ def write_backup(store: Store, folder: Path) -> Backup:
     now = store.clock().astimezone(UTC)
     draft = folder / f".backup.new-{uuid.uuid4()}"
     try:
-        folder.mkdir(exist_ok=True)
+        folder.mkdir(mode=0o700, exist_ok=True)
         make_empty(draft)
         with store.reading() as session:
             heads = all_heads(session)

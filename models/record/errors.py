@@ -5,6 +5,7 @@ from pathlib import Path
 __all__ = [
     "ActDiffersError",
     "AlreadyReplacedError",
+    "BackupMissingError",
     "CommitUnknownError",
     "DiskFaultError",
     "DiskFullError",
@@ -60,6 +61,16 @@ class RecordMovedError(RecordError):
         super().__init__(
             f"{path} is no longer where it was opened: it, or its folder, was moved or removed. "
             "Nothing of this act was recorded; put it back where it was, and try again."
+        )
+
+
+class BackupMissingError(RecordError):
+    """There is no backup at the place named."""
+
+    def __init__(self, path: Path) -> None:
+        super().__init__(
+            f"There is no backup at {path}. Choose one of those in the folder “backups” beside "
+            "the record, or on the stick where they are kept."
         )
 
 

@@ -23,7 +23,12 @@ from models.record.backups import (
     made_at,
     opened_copy,
 )
-from models.record.errors import RecordError, SchemaDiffersError, TornRecordError
+from models.record.errors import (
+    BackupMissingError,
+    RecordError,
+    SchemaDiffersError,
+    TornRecordError,
+)
 from models.record.heads_seen import add_restoration
 from models.record.making import free_place, make_empty, put_in_place
 from models.record.store import FILE_NAME, Store
@@ -80,6 +85,8 @@ def look_into(backup: Path, folder: Path) -> Look:
     RecordError
         If the backup is none, or is damaged.
     """
+    if not backup.is_file():
+        raise BackupMissingError(backup)
     with sentences(backup):
         held = contents_of(backup, whole=True)
     path = folder / FILE_NAME
