@@ -8,10 +8,12 @@ from models.job.base import *  # noqa: F403
 from models.job.cooling_watch import *  # noqa: F403
 from models.job.draw_up import *  # noqa: F403
 from models.job.entries import *  # noqa: F403
+from models.job.events import *  # noqa: F403
 from models.job.job import *  # noqa: F403
 from models.job.limits import *  # noqa: F403
 from models.job.loads import *  # noqa: F403
 from models.job.material import *  # noqa: F403
 from models.job.origin import *  # noqa: F403
 from models.job.plan import *  # noqa: F403
+from models.job.standing import *  # noqa: F403
 from models.job.taper import *  # noqa: F403

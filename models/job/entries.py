@@ -8,7 +8,7 @@ Instants are ISO 8601 with the local offset. Numbers stand as typed, with their 
 from typing import ClassVar, Literal
 
 from models.job.base import Frozen
-from models.job.plan import Role
+from models.job.plan import Disposition, Role
 from models.units import Angle, Length, Temperature
 
 __all__ = [
@@ -327,10 +327,13 @@ class Decision(Entry, frozen=True, kw_only=True, tag="decision"):
     """What was decided about a finding or a doubt, by whom and why."""
 
     about: str
-    disposition: Literal[
-        "rework", "repair", "use as is under concession", "scrap", "read again", "accept reading"
-    ]
+    disposition: Disposition
     words: str
+    # By what right; the finding's number; the customer's agreement where the plan asks for it.
+    authority: str | None = None
+    finding: int | None = None
+    agreed_by: str | None = None
+    agreed_how: str | None = None
 
     title: ClassVar[str] = "Decided"
 

@@ -21,7 +21,15 @@ from models.job.entries import (
     Signature,
     SizeSurvey,
 )
+from models.job.events import (
+    Attachment,
+    OutsideOperation,
+    PointEvent,
+    Tightening,
+    VisualFinding,
+)
 from models.job.plan import Plan, Role
+from models.job.standing import InstrumentEvent, NumberedFinding
 from models.units import Expansion, Length
 
 __all__ = [
@@ -37,7 +45,8 @@ __all__ = [
 ]
 
 AnyEntry = (
-    AttemptOpened
+    Attachment
+    | AttemptOpened
     | AxialMeasured
     | Confirmation
     | Cooling
@@ -47,12 +56,16 @@ AnyEntry = (
     | Heating
     | Mount
     | Note
+    | OutsideOperation
+    | PointEvent
     | Removal
     | RunoutSurvey
     | Settled
     | Signature
     | SizeSurvey
     | StationWatched
+    | Tightening
+    | VisualFinding
 )
 
 
@@ -99,6 +112,9 @@ class Component(Frozen, frozen=True, kw_only=True):
     certificate: str = ""
     balance: str = ""
     key_convention: str = ""
+    # The serial that it stands in for, and who approved that.
+    substitute_for: str | None = None
+    approved_by: str | None = None
 
 
 class StoredVerdict(Frozen, frozen=True, kw_only=True):
@@ -154,6 +170,8 @@ class Job(Frozen, frozen=True, kw_only=True):
     entries: tuple[AnyEntry, ...] = ()
     verdicts: tuple[StoredVerdict, ...] = ()
     key_signatures: tuple[KeySignature, ...] = ()
+    numbered_findings: tuple[NumberedFinding, ...] = ()
+    instrument_events: tuple[InstrumentEvent, ...] = ()
     head: Head | None = None
 
     @property

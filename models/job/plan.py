@@ -18,9 +18,11 @@ from models.job.loads import (
 )
 from models.job.material import OwnMaterial
 from models.job.origin import Origin
+from models.job.standing import AgreedWaiver
 from models.job.taper import TaperFit
 from models.units import (
     Angle,
+    Duration,
     Length,
     Mass,
     Power,
@@ -33,6 +35,7 @@ from models.units import (
 __all__ = [
     "AxialPlace",
     "CoolingLimits",
+    "Disposition",
     "Growth",
     "Item",
     "ItemKind",
@@ -59,6 +62,9 @@ OutlineKind = Literal[
 ]
 StationKind = Literal["journal", "shaft", "seat", "probe track", "part"]
 PointKind = Literal["hold", "witness", "review"]
+Disposition = Literal[
+    "rework", "repair", "use as is under concession", "scrap", "read again", "accept reading"
+]
 
 
 class Growth(Frozen, frozen=True, kw_only=True):
@@ -199,6 +205,8 @@ class Point(Frozen, frozen=True, kw_only=True):
     kind: PointKind
     role: Role
     what: str
+    # How long before it the party is told; without one any invitation counts.
+    notice: Duration | None = None
 
 
 class Step(Frozen, frozen=True, kw_only=True):
@@ -229,6 +237,8 @@ class RunoutMethod(Frozen, frozen=True, kw_only=True):
     # Standard uncertainty of one reading, and of the angle at which it is taken.
     reading_uncertainty: Length | None = None
     mark_uncertainty: Angle | None = None
+    # What the indicator resolves; asked once, against the change limits, when the plan is issued.
+    indicator_resolution: Length | None = None
 
 
 class CoolingLimits(Frozen, frozen=True, kw_only=True):
@@ -265,6 +275,11 @@ class Plan(Frozen, frozen=True, kw_only=True):
     smoothing_edition: str = ""
     # Copies of the shop's own materials that this plan rests on; by name before the table.
     materials: tuple[OwnMaterial, ...] = ()
+    waivers: tuple[AgreedWaiver, ...] = ()
+    # Dispositions that count only with the customer's agreement.
+    customer_agrees_to: tuple[Disposition, ...] = ()
+    # How long after the deed an entry is still in time; common practice stands in where absent.
+    late_after: Duration | None = None
 
     def step(self, key: str) -> Step:
         """Find a step by its key."""
