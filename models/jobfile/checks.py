@@ -29,6 +29,7 @@ from models.job import (
     StationWatched,
     Step,
 )
+from models.jobfile.event_checks import event_faults, standing_faults
 from models.jobfile.faults import MISSING, Fault, Words
 from models.jobfile.fit_checks import interference_faults
 from models.jobfile.material_checks import material_faults
@@ -55,6 +56,7 @@ def faults(job: Job) -> Iterator[Fault]:
     yield from _once("entries", "id", (entry.id for entry in job.entries))
     for index, entry in enumerate(job.entries):
         yield from _EntryChecks(job, index, entry).faults()
+    yield from standing_faults(job)
     yield from _once("verdicts", "id", (verdict.id for verdict in job.verdicts))
     steps = dict.fromkeys(step.key for plan in job.plans for step in plan.steps)
     for index, verdict in enumerate(job.verdicts):
@@ -234,6 +236,7 @@ class _EntryChecks:
         for kind, check in self._OWN.items():
             if isinstance(entry, kind):
                 yield from check(self, entry)
+        yield from event_faults(place, entry)
         yield from self._corrections(getattr(entry, "corrections", ()), "corrections")
         yield from self._corrections(getattr(entry, "kept", ()), "kept")
 

@@ -7,6 +7,7 @@ from typing import NamedTuple
 
 from models.job import (
     AnyEntry,
+    Attachment,
     AttemptOpened,
     AxialMeasured,
     Confirmation,
@@ -20,6 +21,8 @@ from models.job import (
     Hot,
     Mount,
     Note,
+    OutsideOperation,
+    PointEvent,
     Question,
     Removal,
     RunoutReading,
@@ -30,6 +33,8 @@ from models.job import (
     SizeSurvey,
     StationReadings,
     StationWatched,
+    Tightening,
+    VisualFinding,
     Warmth,
 )
 from models.record import tables
@@ -67,6 +72,7 @@ COMMON = (
 )
 
 DETAILS: dict[type[AnyEntry], type[Base]] = {
+    Attachment: tables.Attachment,
     AttemptOpened: tables.Attempt,
     AxialMeasured: tables.AxialPosition,
     Confirmation: tables.Confirmation,
@@ -77,12 +83,16 @@ DETAILS: dict[type[AnyEntry], type[Base]] = {
     Heating: tables.Heating,
     Mount: tables.Mount,
     Note: tables.Note,
+    OutsideOperation: tables.OutsideOperation,
+    PointEvent: tables.PointEvent,
     Removal: tables.Removal,
     RunoutSurvey: tables.RunoutSurvey,
     Settled: tables.Settled,
     Signature: tables.Signature,
     SizeSurvey: tables.SizeSurvey,
     StationWatched: tables.StationWatched,
+    Tightening: tables.Tightening,
+    VisualFinding: tables.VisualFinding,
 }
 
 # Fields of each kind that stand in tables of their own.

@@ -46,6 +46,7 @@ _ENDINGS: dict[type[Quantity], str] = {
 # Field names that would be unclear, or words of SQL, as names of columns.
 _RENAMED = {
     "by": "by_person",
+    "order": "order_words",
     "plan": "plan_revision",
     "range": "range_words",
     "read_by": "read_by_person",

@@ -13,6 +13,7 @@ from models.record import tables
 from models.record.act import BROUGHT_IN, Act
 from models.record.canonical import FIRST_PREVIOUS, normal
 from models.record.errors import ActDiffersError, HeadMovedError, JobKnownError
+from models.record.finding_rows import add_instrument_event, add_numbered
 from models.record.flat import Cell, Row
 from models.record.key_rows import add_key_signature
 from models.record.links import BODY_EDITION, digest_of, rows_text
@@ -185,5 +186,8 @@ def bring_in(
                 )
     with one("/verdicts") as closing:
         closing.add_verdicts(job.verdicts)
+        add_numbered(closing, job.numbered_findings)
+        for event in job.instrument_events:
+            add_instrument_event(closing, event)
     assert closing.head is not None
     return closing.head

@@ -20,6 +20,7 @@ from models.record import tables
 from models.record.documents import inputs_from, material_from, plan_from
 from models.record.entry_reader import EntryReader
 from models.record.errors import UnknownJobError
+from models.record.finding_rows import instrument_events, numbered_findings
 from models.record.flat import struct_from
 from models.record.gate import GOOD_OUTCOMES
 from models.record.lookups import chain_of_job, head_of, instruments_in_force, shop_chain
@@ -87,6 +88,8 @@ def read_job(session: Session, number: str) -> Job:
                 )
                 for row in _rows(session, tables.KeySignature, chain_id)
             ),
+            "numbered_findings": numbered_findings(session, chain_id),
+            "instrument_events": instrument_events(session, chain_id),
             "head": head_of(session, chain_id),
         },
     )

@@ -66,6 +66,7 @@ from models.units import (
     TemperatureStep,
     Torque,
 )
+from tests.record.things import FOUND_OUT, NUMBERED, entries_beside
 
 __all__ = [
     "ANGLES",
@@ -379,6 +380,7 @@ def entries() -> tuple[AnyEntry, ...]:
         an_attempt("try two", "one", 2, minute=97, baseline="after one"),
         Note(**common("note", attempt_at("one", 2), 98), words="Blue mark at the rear land"),
         Handling(**common("lift", attempt_at("one", 2), 99), what="lift"),
+        *entries_beside(common),
         settled("end two", "one", 2, minute=110),
         Decision(
             **common("decided", attempt_at("one", 2), 111),
@@ -442,4 +444,6 @@ def a_job(number: str = NUMBER) -> Job:
                 attempt=1,
             ),
         ),
+        numbered_findings=(NUMBERED,),
+        instrument_events=(FOUND_OUT,),
     )

@@ -7,6 +7,7 @@ from models.record.tables.backups import *  # noqa: F403
 from models.record.tables.base import SMALL_UNITS, Base
 from models.record.tables.chains import *  # noqa: F403
 from models.record.tables.entries import *  # noqa: F403
+from models.record.tables.events import *  # noqa: F403
 from models.record.tables.facts import *  # noqa: F403
 from models.record.tables.keys import *  # noqa: F403
 from models.record.tables.readings import *  # noqa: F403

@@ -321,6 +321,10 @@ class Decision(Detail, Base):
     about: Mapped[str]
     disposition: Mapped[str]
     words: Mapped[str]
+    authority: Mapped[str | None]
+    finding: Mapped[int | None]
+    agreed_by: Mapped[str | None]
+    agreed_how: Mapped[str | None]
 
 
 class Signature(Detail, Base):

@@ -156,6 +156,8 @@ class Component(Recorded, Base):
     balance: Mapped[str]
     key_convention: Mapped[str]
     supersedes: Mapped[str | None]
+    substitute_for: Mapped[str | None]
+    approved_by: Mapped[str | None]
 
     @classmethod
     def demands(cls) -> tuple[SchemaItem, ...]:

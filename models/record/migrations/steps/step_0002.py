@@ -2,7 +2,7 @@
 
 from collections.abc import Callable
 
-from models.record.migrations.form_2 import assembly, backups, keys, shop_materials
+from models.record.migrations.form_2 import assembly, backups, events, keys, shop_materials
 
 __all__: list[str] = []
 
@@ -17,6 +17,7 @@ _LAID: tuple[Callable[[], None], ...] = (
     keys.lay,
     assembly.lay,
     backups.lay,
+    events.lay,
 )
 
 
