@@ -13,6 +13,7 @@ from app.benches import Bench
 from app.frame.look import Look
 from app.last_resort import LastResort, show_dialog
 from app.pages.bench.page import BenchPage
+from app.pages.handbook import HandbookPage
 from app.pages.inspection import InspectionPage
 from app.pages.jobs import JobsPage
 from app.pages.plan import PlanPage
@@ -20,6 +21,7 @@ from app.pages.register.page import RegisterPage
 from app.pages.story import StoryPage
 from app.presenters.background import Background
 from app.presenters.bench.bench import BenchPresenter
+from app.presenters.handbook import HandbookPresenter
 from app.presenters.inspection import InspectionPresenter
 from app.presenters.jobs import JobsPresenter
 from app.presenters.keys import KeysPresenter
@@ -31,7 +33,7 @@ from app.presenters.writing import Writer
 from app.settings import Settings, shop_folder
 from app.style.theme import apply_theme
 from app.style.tokens import load_fonts
-from app.window import BENCH, Window
+from app.window import BENCH, HANDBOOK, Window
 from models.acts import Acts, Keys
 from models.record.errors import (
     DiskFaultError,
@@ -79,6 +81,7 @@ class Opened:
         window.add_desk("Witness", StoryPage(StoryPresenter(self.shop), look=look))
         register = RegisterPresenter(self.shop, self.keys)
         window.add_desk("Register", RegisterPage(register, look=look))
+        window.add_desk(HANDBOOK, HandbookPage(HandbookPresenter(), look=look))
 
     def _make_bench(self, job: str, person: str, look: Look, parent: QWidget) -> Bench:
         presenter = BenchPresenter(self._acts, self.writer, job, person, keys=self.keys)

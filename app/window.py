@@ -14,7 +14,8 @@ from app.frame.desks import DesksLine
 from app.frame.look import Look
 from app.frame.messages import Message, MessageStrip
 from app.pages.ask_form import AskForm
-from app.pages.desk import DeskPage
+from app.pages.desk import DeskPage, Judged
+from app.pages.handbook import HandbookPage
 from app.pages.people import PeopleDialog
 from app.presenters.keys import Asking
 from app.presenters.shop import Said, ShopPresenter
@@ -23,10 +24,13 @@ from app.settings import Settings
 from app.style.theme import TEXT_SCALES, Appearance, apply_theme, palette_for
 from models.job import Person
 
-__all__ = ["BENCH", "Window"]
+__all__ = ["BENCH", "HANDBOOK", "Window"]
 
 BENCH = "Bench"
 """The desk that is made for every job anew, once somebody opens it there."""
+
+HANDBOOK = "Handbook"
+"""The desk that says where every verdict and number comes from."""
 
 
 _LEAST_SIZE = (1280, 800)
@@ -156,6 +160,17 @@ class Window(QWidget):
                 page.entrance().setFocus()
         self._show_trouble()
         self._settings.keep_for_shop("desk", name)
+
+    def open_handbook(self) -> None:
+        """Open the handbook at what the desk in front has a verdict on, if it has one."""
+        before = self._stack.currentWidget()
+        page = self._pages.get(HANDBOOK)
+        if before is page:
+            return
+        words = before.handbook_words() if isinstance(before, Judged) else ""
+        self.show_desk(HANDBOOK)
+        if words and isinstance(page, HandbookPage):
+            page.search(words)
 
     def leave_bench(self) -> None:
         """Sign out: the desk is locked, the record is not."""
@@ -359,6 +374,7 @@ class Window(QWidget):
         self._on("F9", self.toggle_far)
         self._on("F11", self.toggle_full_screen)
         self._on("Ctrl+L", self.next_appearance)
+        self._on("Ctrl+H", self.open_handbook)
         for keys in ("Ctrl++", "Ctrl+="):
             self._on(keys, lambda: self.grow_text(1))
         self._on("Ctrl+-", lambda: self.grow_text(-1))

@@ -31,6 +31,7 @@ __all__ = [
     "DeskSheet",
     "Dressed",
     "FlatLine",
+    "Judged",
     "Rule",
     "Words",
     "desk_key",
@@ -48,6 +49,14 @@ class Dressed(Protocol):
 
     def dress(self, look: Look) -> None:
         """Take over colours and sizes."""
+
+
+@runtime_checkable
+class Judged(Protocol):
+    """A page that shows a verdict, which has its page in the handbook."""
+
+    def handbook_words(self) -> str:
+        """Name the rule behind the verdict in front; nothing where there is none."""
 
 
 def desk_look(look: Look) -> Look:

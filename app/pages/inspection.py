@@ -266,6 +266,11 @@ class InspectionPage(DeskPage):
         self._show_signing(self.points.present_row)
         self.beside.refresh()
 
+    def handbook_words(self) -> str:
+        """Name the rule of the finding in front."""
+        row: FindingRow | None = self.findings.present_row
+        return row.rule if row is not None else ""
+
     def entrance(self) -> QWidget:
         """Give what the leaf in front begins with."""
         return self.leaves.entrance()

@@ -52,6 +52,7 @@ class FindingRow:
     where: str
     sentence: str
     reasons: tuple[Reason, ...]
+    rule: str
     step: str | None = None
     attempt: int | None = None
 
@@ -120,6 +121,7 @@ def finding_row(job: Job, standing: Standing) -> FindingRow:
         where=place_words(job, subject),
         sentence=in_words(job, finding.message),
         reasons=reasons_of(finding, unit_set(job.plan.rotor.units)),
+        rule=finding.rule.id,
         step=subject.step,
         attempt=subject.attempt,
     )

@@ -2,10 +2,11 @@
 
 from dataclasses import fields
 
-from models.rules.rule import Finding, Value, words_for
+from models.handbook import formulas_behind
+from models.rules.rule import Finding, Rule, Value, words_for
 from models.units import UnitSet, number_text
 
-__all__ = ["Reason", "reasons_of"]
+__all__ = ["Reason", "handbook_words", "reasons_of"]
 
 Reason = tuple[str, str]
 """What it is, and what it says."""
@@ -40,7 +41,29 @@ def reasons_of(finding: Finding, units: UnitSet) -> tuple[Reason, ...]:
         told.append(("limit from", finding.limit_origin))
     told.append(("source of the rule", rule.source))
     told.append(("judged by", f"{rule.id}, edition {rule.edition}"))
+    formulas = formulas_behind(rule)
+    if formulas:
+        told.append(("formulas", ", ".join(formulas)))
+    told.append(("handbook", "Ctrl+H opens its page, with ranges and tests"))
     return tuple(told)
+
+
+def handbook_words(rule: Rule) -> str:
+    """Say where a rule's page is, and which formulas stand behind its numbers.
+
+    Parameters
+    ----------
+    rule : Rule
+        The rule.
+
+    Returns
+    -------
+    str
+        One line.
+    """
+    formulas = formulas_behind(rule)
+    told = f"; formulas: {', '.join(formulas)}" if formulas else ""
+    return f"Handbook (Ctrl+H): {rule.id}, edition {rule.edition}{told}"
 
 
 def _written(value: Value, unit: str, units: UnitSet) -> str:

@@ -2,6 +2,7 @@
 
 import inspect
 from dataclasses import fields
+from functools import cache
 
 from models.handbook.docstrings import flowing
 from models.handbook.entry import Entry, Kind, Quantity
@@ -10,12 +11,19 @@ from models.handbook.tested import tested
 from models.rules import ALL_RULES
 from models.rules.rule import Rule
 
-__all__ = ["rule_entries"]
+__all__ = ["formulas_behind", "rule_entries"]
 
 
 def rule_entries() -> tuple[Entry, ...]:
     """Describe every rule."""
     return tuple(_entry(rule) for rule in ALL_RULES)
+
+
+@cache
+def formulas_behind(rule: Rule) -> tuple[str, ...]:
+    """Name the formulas behind the numbers that a rule takes."""
+    named = (one for name in rule.inputs for one in formulas_of(name, rule=rule.id))
+    return tuple(dict.fromkeys(named))
 
 
 def _entry(rule: Rule) -> Entry:
@@ -31,7 +39,6 @@ def _entry(rule: Rule) -> Entry:
         )
         for name in needed
     )
-    related = dict.fromkeys(one for name in needed for one in formulas_of(name, rule=rule.id))
     return Entry(
         name=rule.id,
         kind=Kind.RULE,
@@ -46,7 +53,7 @@ def _entry(rule: Rule) -> Entry:
         sources=(rule.source,),
         edition=str(rule.edition),
         lives_in=rule.judge.__module__.replace(".", "/") + ".py",
-        related=tuple(related),
+        related=formulas_behind(rule),
         tests=known.tests,
         second_paths=known.second_paths,
         published=known.published,

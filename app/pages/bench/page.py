@@ -204,6 +204,10 @@ class BenchPage(BenchParts):
         if len(single) == 1:
             self._presenter.press(single[0].name)
 
+    def handbook_words(self) -> str:
+        """Name the rule of the verdict in front."""
+        return next(iter(self._presenter.state.verdict.rules), "")
+
     def _open_reasons(self) -> None:
         verdict = self._presenter.state.verdict
         focused = _focused_in(self)

@@ -158,6 +158,8 @@ class BenchVerdict:
     so_far: str = ""
     facts: tuple[tuple[str, str], ...] = ()
     reasons: tuple[str, ...] = ()
+    rules: tuple[str, ...] = ()
+    """The rules it rests on, the one that decides first."""
     is_final: bool = False
 
 

@@ -4,6 +4,7 @@ from collections.abc import Mapping, Sequence
 
 from app.presenters.bench.reading import SoFar
 from app.presenters.bench.state import BenchVerdict
+from app.presenters.reasons import handbook_words
 from models.assess import Attempt, LandFit
 from models.assess.attempts import fit_facts
 from models.job import Job
@@ -45,10 +46,15 @@ def reasons_of(findings: Sequence[Finding]) -> tuple[str, ...]:
             f"{name.replace('_', ' ')} = {value:.6g}" for name, value in finding.computed.items()
         ]
         lines.append(f"Source: {finding.rule.source}")
+        lines.append(handbook_words(finding.rule))
         if finding.limit_origin:
             lines.append(f"The limit comes from {finding.limit_origin}")
         lines.append("")
     return tuple(lines)
+
+
+def _rules(worst: Finding, findings: Sequence[Finding]) -> tuple[str, ...]:
+    return tuple(dict.fromkeys((worst.rule.id, *(one.rule.id for one in findings))))
 
 
 def _plain(value: object) -> str:
@@ -77,6 +83,7 @@ def verdict_at(act: NextAct, attempt: Attempt | None) -> BenchVerdict:
         worst.phrase,
         (worst.message, *(one.message for one in rest[:1])),
         reasons=reasons_of(findings),
+        rules=_rules(worst, findings),
     )
 
 
@@ -104,6 +111,7 @@ def verdict_so_far(so_far: SoFar, due: int, units: UnitSet) -> BenchVerdict:
         (worst.message,),
         so_far=read,
         reasons=reasons_of([worst]),
+        rules=(worst.rule.id,),
     )
 
 
@@ -132,6 +140,7 @@ def verdict_of_sizes(job: Job, fit: LandFit, feature: str) -> BenchVerdict:
         (worst.message, so_far),
         so_far=f"{read.count} read",
         reasons=reasons_of(found),
+        rules=_rules(worst, found),
     )
 
 
@@ -145,6 +154,7 @@ def final_verdict(attempt: Attempt, units: UnitSet) -> BenchVerdict:
             "Stopped short",
             tuple(one.message for one in findings if one.verdict is Verdict.OUTSIDE),
             reasons=reasons_of(findings),
+            rules=("part-seated",),
             is_final=True,
         )
     findings = attempt.of("runout-changed") + attempt.of("set-up-same") + attempt.of("survey-whole")
@@ -177,6 +187,7 @@ def final_verdict(attempt: Attempt, units: UnitSet) -> BenchVerdict:
         (worst.message,),
         facts=tuple(facts),
         reasons=reasons_of([one for one in findings if one.verdict is worst.verdict]),
+        rules=_rules(worst, findings),
         is_final=True,
     )
 
