@@ -163,7 +163,7 @@ class Window(QWidget):
 
     def open_handbook(self) -> None:
         """Open the handbook at what the desk in front has a verdict on, if it has one."""
-        before = self._stack.currentWidget()
+        before: object = self._stack.currentWidget()
         page = self._pages.get(HANDBOOK)
         if before is page:
             return

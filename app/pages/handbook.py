@@ -17,7 +17,7 @@ from reports.typeface import Weight
 __all__ = ["HandbookPage"]
 
 _ENTRY_COLUMNS = (
-    Column[Entry](title="name", text=lambda row: _spaced(row.name), share=1.0, strong=True),
+    Column[Entry](title="name", text=lambda row: _listed(row.name), share=1.0, strong=True),
     Column[Entry](title="what it says", text=lambda row: row.statement, share=1.5),
 )
 _PAGE_COLUMNS = (
@@ -82,6 +82,8 @@ class HandbookPage(DeskPage):
         self._head.setMargin(8)
         column.addWidget(self._head)
         self.page = DeskTable(_PAGE_COLUMNS, name="The open page", look=self.look, edge=8)
+        # Its two columns say themselves what they are.
+        self.page.horizontalHeader().hide()
         column.addWidget(self.page, 1)
         return panel
 
@@ -109,7 +111,7 @@ class HandbookPage(DeskPage):
         self._open(self.entries.present_row)
 
     def _open(self, one: Entry | None) -> None:
-        self._head.say(_spaced(one.name) if one is not None else "")
+        self._head.say(one.name if one is not None else "")
         self.page.set_rows(self._presenter.page(one) if one is not None else ())
         self.page.clearSelection()
         self.page.scrollToTop()
@@ -119,6 +121,7 @@ class HandbookPage(DeskPage):
         return self.line
 
 
-def _spaced(name: str) -> str:
-    """Let a long name break after its module."""
-    return name.replace(".", ". ")
+def _listed(name: str) -> str:
+    """Write a formula's name in words, its module after it; a rule's id stays."""
+    module, dot, function = name.rpartition(".")
+    return f"{function.replace('_', ' ')} ({module.replace('_', ' ')})" if dot else name
