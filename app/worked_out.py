@@ -3,6 +3,7 @@
 import math
 from typing import Any
 
+from app.worked_out_taper import drawn_up_out
 from models.assess import (
     Assessment,
     Attempt,
@@ -105,6 +106,8 @@ def _item(view: ItemView) -> dict[str, Any]:
     if heat is not None:
         found["target_temperature [°C]"] = _number(heat.target)
         found["highest_temperature [°C]"] = _number(heat.highest)
+    if view.drawn_up is not None:
+        found["draw_up"] = drawn_up_out(view.drawn_up)
     found["lands"] = [
         {
             "land": fit.land.key,

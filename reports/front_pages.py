@@ -190,7 +190,7 @@ def _steps(view: Assessment) -> Flowable:
             outcome = last.settled.outcome if last.settled else "open"
         verdict = None
         if last is not None:
-            verdict = last.verdict_of("runout-changed") or last.verdict_of("part-seated")
+            verdict = last.verdict_of("runout-changed") or last.home()
         rows.append(
             [
                 str(number),

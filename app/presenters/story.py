@@ -17,6 +17,7 @@ from app.presenters.shop import ShopPresenter
 from app.presenters.wording import day_and_time, in_words
 from models.assess import Assessment, Attempt
 from models.job import Removal
+from models.rules.rule import Verdict
 from reports.job_pictures import verdict_kind
 from reports.sheet.pictures import VerdictKind
 
@@ -148,8 +149,8 @@ def _chapter(view: Assessment, attempt: Attempt) -> Chapter:
     if outcome == "removed":
         sentences += bend_sentence(attempt)
     sentences += _removal_sentences(attempt)
-    judged = [one for one in attempt.findings if one.rule.id in ("runout-changed", "part-seated")]
-    worst = attempt.verdict_of("runout-changed", "part-seated") if judged else None
+    known = [one for one in (attempt.verdict_of("runout-changed"), attempt.home()) if one]
+    worst = Verdict.worst(known) if known else None
     return Chapter(
         title=f"Step {number}, {attempt.step.title}{again}",
         subtitle=day_and_time(when),

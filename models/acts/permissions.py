@@ -8,6 +8,7 @@ from models.job import (
     Confirmation,
     Cooling,
     Decision,
+    DrawUp,
     Heating,
     Mount,
     Removal,
@@ -15,6 +16,7 @@ from models.job import (
     Settled,
     Signature,
     SizeSurvey,
+    StationWatched,
 )
 from models.rules.progress import Act, Permission, may
 
@@ -89,6 +91,8 @@ def _act_of(entry: AnyEntry) -> Act | None:
         Mount: Act.MOUNT,
         AxialMeasured: Act.MEASURE_AXIAL,
         Cooling: Act.COOL,
+        StationWatched: Act.COOL,
+        DrawUp: Act.DRAW_UP,
         Removal: Act.REMOVE,
         Settled: Act.SETTLE,
         Signature: Act.SIGN,

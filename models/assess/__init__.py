@@ -4,6 +4,7 @@ from models.assess.attempts import Attempt, ItemView, finding_key
 from models.assess.bend import Bend, KinkSeat
 from models.assess.bow_unbalance import BowUnbalance
 from models.assess.build import Assessment, Standing, assess, live_entries
+from models.assess.draw_up import DrawnUp
 from models.assess.heat import Heat, land_gauge
 from models.assess.lacks import lacks
 from models.assess.runout import StationChange, StationRunout, SurveyRunout
@@ -17,6 +18,7 @@ __all__ = [
     "Attempt",
     "Bend",
     "BowUnbalance",
+    "DrawnUp",
     "FitStrength",
     "Heat",
     "ItemView",

@@ -255,7 +255,7 @@ def _attempt_progress(job: Job, attempt: Attempt) -> AttemptProgress:
     open_surveys = [one.entry for one in attempt.surveys if not one.entry.is_closed]
     verdict: Verdict | None = None
     if not attempt.step.survey_due:
-        verdict = attempt.verdict_of("part-seated", "axial-position-right")
+        verdict = _without_survey(attempt)
     elif attempt.judged is not None:
         # A drift is looked at, not remounted: the mount just made did not cause it.
         verdict = Verdict.worst(
@@ -263,7 +263,7 @@ def _attempt_progress(job: Job, attempt: Attempt) -> AttemptProgress:
                 attempt.verdict_of("survey-whole", "set-up-same", "circle-closed")
                 or Verdict.NOT_JUDGED,
                 attempt.verdict_of("runout-changed") or Verdict.NOT_JUDGED,
-                attempt.verdict_of("part-seated") or Verdict.NOT_JUDGED,
+                attempt.home() or Verdict.NOT_JUDGED,
             ]
         )
     hot = any(view.item.kind == "hot" for view in attempt.items)
@@ -291,18 +291,25 @@ def _cooling_now(attempt: Attempt) -> Verdict:
 def _item_progress(attempt: Attempt, index: int) -> ItemProgress:
     view = attempt.items[index]
     key = view.item.key
-    due = tuple(
-        (fit.land.key, feature)
-        for fit in view.fits
-        for feature, sizes in (("seat", fit.seat), ("bore", fit.bore))
-        if sizes is None or sizes.entry.closed_at is None
+    on_taper = view.drawn_up is not None
+    due = (
+        ()
+        if on_taper
+        else tuple(
+            (fit.land.key, feature)
+            for fit in view.fits
+            for feature, sizes in (("seat", fit.seat), ("bore", fit.bore))
+            if sizes is None or sizes.entry.closed_at is None
+        )
     )
     return ItemProgress(
         key=key,
         name=view.item.name,
         is_hot=view.item.kind == "hot",
         sizes_due=due,
-        fit=attempt.verdict_of(
+        fit=None
+        if on_taper
+        else attempt.verdict_of(
             "sizes-plausible",
             "part-temperature-known",
             "seat-larger-than-bore",
@@ -314,7 +321,15 @@ def _item_progress(attempt: Attempt, index: int) -> ItemProgress:
         opening=attempt.verdict_of("bore-open", "heated-through", "not-overheated", item=key),
         door=attempt.verdict_of("confirmed-before-door", item=key),
         mounted=view.mount.outcome if view.mount else None,
-        seated=attempt.verdict_of("part-seated", item=key) if view.mount else None,
+        seated=attempt.home(key) if view.mount else None,
+        is_on_taper=on_taper,
         axial_due=view.item.axial is not None and view.axial_cold is None,
         removed=view.removal is not None,
     )
+
+
+def _without_survey(attempt: Attempt) -> Verdict | None:
+    """Judge a step that no survey is due after: by how its parts came to rest."""
+    found = [attempt.home(), attempt.verdict_of("axial-position-right")]
+    known = [one for one in found if one is not None]
+    return Verdict.worst(known) if known else None

@@ -50,6 +50,7 @@ class Act(Enum):
     CONFIRM_DOOR = "confirm before the door"
     MOUNT = "mount"
     COMPLETE_MOUNT = "say how it came to rest"
+    DRAW_UP = "draw up"
     MEASURE_AXIAL = "measure the axial position"
     COOL = "take temperatures while cooling"
     SURVEY = "survey the runout"
@@ -77,6 +78,7 @@ class ItemProgress:
     seated: Verdict | None = None
     axial_due: bool = False
     removed: bool = False
+    is_on_taper: bool = False
 
 
 @dataclass(frozen=True, kw_only=True)
@@ -111,6 +113,9 @@ class AttemptProgress:
     def removal_due(self) -> bool:
         """Whether what went on must come off."""
         on = [item for item in self.items if item.mounted and not item.removed]
+        # What is not far enough up a taper is drawn up again, not taken off.
+        if any(item.seated is Verdict.OUTSIDE and item.is_on_taper for item in on):
+            return False
         bad = any(item.seated is Verdict.OUTSIDE for item in on)
         return bool(on) and (bad or self.verdict is Verdict.OUTSIDE)
 
@@ -391,6 +396,11 @@ def _next_in(attempt: AttemptProgress) -> NextAct:
 
 
 def _next_of_item(item: ItemProgress, to: _To) -> NextAct | None:
+    if item.is_on_taper and (not item.mounted or item.seated is not Verdict.WITHIN):
+        words = f"Draw {item.name} up its taper: dry zero, oil, advance."
+        if item.mounted:
+            words = f"Draw {item.name} up again or measure it again: its fit is not proved."
+        return to(Stage.MOUNT, Act.DRAW_UP, words, item=item.key)
     if item.mounted:
         if item.seated is Verdict.NOT_JUDGED:
             return to(

@@ -10,7 +10,7 @@ from models.rules.rule import Verdict
 from reports.front_pages import shown_time
 from reports.parts import Signed, head, signatures, struck, text, words
 from reports.signed import behind_words
-from reports.step_pages.mounting import judged_rows
+from reports.step_pages.judged import judged_rows
 from reports.step_pages.sizes import columns
 
 __all__ = ["cooling", "corrections", "removals", "signature_boxes", "who"]

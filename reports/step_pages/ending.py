@@ -39,7 +39,7 @@ def ending(job: Job, attempt: Attempt) -> Flowable:
             f"The greatest change is {units.both(most.tir or 0.0, 'runout')} TIR at {most.key}, "
             f"limit {limit_words(attempt.step)}."
         )
-    verdict = worst.verdict if worst else attempt.verdict_of("part-seated")
+    verdict = worst.verdict if worst else attempt.home()
     return verdict_line(verdict_kind(verdict), which, sentence)
 
 

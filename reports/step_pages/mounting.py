@@ -2,18 +2,18 @@
 
 from collections.abc import Iterator, Sequence
 
-from reportlab.platypus import Flowable, Table
+from reportlab.platypus import Flowable
 
 from models.assess import Attempt, ItemView
 from models.job import Item, Job
-from models.rules.rule import Finding
 from models.units import unit_set
 from reports.front_pages import shown_time
-from reports.job_pictures import verdict_kind
-from reports.parts import Cell, PlainStyle, head, note, shape, words
+from reports.parts import Cell, head, words
+from reports.step_pages.drawing_up import draw_up_rows
+from reports.step_pages.judged import judged_rows
 from reports.step_pages.sizes import columns
 
-__all__ = ["judged_rows", "on_the_shaft"]
+__all__ = ["on_the_shaft"]
 
 
 def on_the_shaft(
@@ -23,6 +23,8 @@ def on_the_shaft(
     rows: list[tuple[str, list[Cell]]] = []
     if any(one.heat is not None for one in views):
         rows += _heat_rows(job, pair, views)
+    if any(one.drawn_up is not None for one in views):
+        rows += draw_up_rows(job, pair, views)
     rows += _mount_rows(pair, views)
     hot = item.kind == "hot"
     yield head(
@@ -116,32 +118,14 @@ def _minutes(seconds: float) -> str:
     return f"{int(seconds // 60)}:{int(seconds % 60):02d}"
 
 
-def judged_rows(findings: Sequence[Finding]) -> Flowable | str:
-    """Set the worst of some findings: shape and sentence."""
-    if not findings:
-        return "–"
-    worst = max(findings, key=lambda one: one.verdict.severity)
-    return Table(
-        [[shape(verdict_kind(worst.verdict)), note(words(worst.message))]],
-        colWidths=[10, None],
-        style=PlainStyle(
-            [
-                ("LEFTPADDING", (0, 0), (-1, -1), 0),
-                ("RIGHTPADDING", (0, 0), (-1, -1), 0),
-                ("TOPPADDING", (0, 0), (-1, -1), 0),
-                ("BOTTOMPADDING", (0, 0), (-1, -1), 0),
-                ("VALIGN", (0, 0), (-1, -1), "TOP"),
-            ]
-        ),
-    )
-
-
 def _mount_rows(pair: Sequence[Attempt], views: Sequence[ItemView]) -> list[tuple[str, list[Cell]]]:
     both = list(zip(pair, views, strict=True))
     rows: list[tuple[str, list[Cell]]] = [
         ("seated", [_seated(one) for one in views]),
-        ("shoulder", [judged_rows(one.of("part-seated", view.item.key)) for one, view in both]),
     ]
+    if any(view.drawn_up is None for view in views):
+        judged = [judged_rows(one.of("part-seated", view.item.key)) for one, view in both]
+        rows.append(("shoulder", judged))
     if any(view.item.axial for view in views):
         rows.append(
             (

@@ -22,7 +22,7 @@ from models.rules.facts import (
     SurveyFacts,
 )
 from models.rules.rule import Subject, Verdict
-from tests.rules import strength_cases
+from tests.rules import draw_up_cases, strength_cases
 
 IN, OUT, DOUBT, UNKNOWN = Verdict.WITHIN, Verdict.OUTSIDE, Verdict.CANNOT_TELL, Verdict.NOT_JUDGED
 UM = 1e-6
@@ -102,6 +102,7 @@ GOOD: dict[type, Any] = {
     OrderFacts: OrderFacts(entry="Mounted", out_of_order=""),
     ProgressFacts: ProgressFacts(steps_due=2, steps_waiting=()),
     **strength_cases.GOOD,
+    **draw_up_cases.GOOD,
 }
 
 
@@ -244,13 +245,14 @@ CASES = [
     Case("every-step-settled", "waiting", {"steps_waiting": ("Impeller 2",)}, UNKNOWN),
     Case("every-step-settled", "unknown", {"steps_due": None}, UNKNOWN),
     *(Case(*row) for row in strength_cases.CASES),
+    *(Case(*row) for row in draw_up_cases.CASES),
 ]  # fmt: skip
 
 # Rules that compare a number with a limit, and so need a case exactly on it.
 _COMPARING = {case.rule for case in CASES if case.kind == "on the limit"}
 # Statements that are true, doubtful or missing; none of their cases is a stop.
 _NEVER_STOPS = {"survey-whole", "set-up-same", "circle-closed", "heated-through", "points-signed",
-                "in-order", "every-step-settled"}  # fmt: skip
+                "piston-held", "in-order", "every-step-settled"}  # fmt: skip
 
 
 @pytest.mark.parametrize("case", CASES, ids=lambda case: f"{case.rule}: {case.kind}")
@@ -275,7 +277,8 @@ def test_rule_has_cases_for_all_that_can_happen(judged: Any) -> None:
     limits = {"limit", "closure_allowed", "target_temperature", "side_to_side_allowed",
               "axial_tolerance", "least_allowed", "due_on", "hub_yield_strength",
               "shaft_yield_strength", "interference_at_trip", "torque_to_carry",
-              "force_demanded", "force_demanded_at_speed", "shear_limit"}  # fmt: skip
+              "force_demanded", "force_demanded_at_speed", "shear_limit",
+              "least_advance_allowed", "contact_wanted", "seating_loss", "hold_wanted"}  # fmt: skip
     if limits & set(judged.inputs):
         assert judged.id in _COMPARING
 

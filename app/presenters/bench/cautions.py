@@ -18,6 +18,12 @@ _BY_ACT: dict[Act, tuple[str, ...]] = {
         "Eyes on the load, one unbroken motion. No hammer, no torch, no pull beyond its weight.",
         _RULES,
     ),
+    Act.DRAW_UP: (
+        "Oil at very high pressure: nobody on the axis of the hub, the nut left on with a gap, "
+        "gauges and hoses rated and looked at first; no hand near a leak.",
+        "Stop if the pressure rises and the hub does not move, or drops while it does.",
+        _RULES,
+    ),
     Act.COOL: ("The rotor is hot: measure without leaning on it.", _TURN, _RULES),
     Act.SURVEY: (_TURN, _RULES),
     Act.SURVEY_BARE_SHAFT: (_TURN, _RULES),

@@ -7,6 +7,7 @@ from app.presenters.bench.state import BenchVerdict
 from app.presenters.reasons import handbook_words
 from models.assess import Attempt, LandFit
 from models.assess.attempts import fit_facts
+from models.assess.attempts.view import DRAW_UP_RULES
 from models.job import Job
 from models.rules import rule
 from models.rules.progress import Act, NextAct
@@ -26,6 +27,7 @@ _RULES_OF: dict[Act, tuple[str, ...]] = {
     Act.CONFIRM_DOOR: ("bore-open", "heated-through", "not-overheated"),
     Act.MOUNT: ("bore-open", "heated-through"),
     Act.COMPLETE_MOUNT: ("part-seated",),
+    Act.DRAW_UP: DRAW_UP_RULES,
     Act.COOL: ("may-be-read",),
     Act.MEASURE_AXIAL: ("axial-position-right", "may-be-read"),
     Act.SURVEY: ("may-be-read",),

@@ -3,6 +3,7 @@
 from collections.abc import Iterable
 
 from models.assess.attempts.on_cooling import cool_facts, cooling_matters
+from models.assess.attempts.on_draw_up import draw_up_findings
 from models.assess.attempts.on_mounting import heat_findings, mount_findings
 from models.assess.attempts.on_people import people_findings
 from models.assess.attempts.on_runout import runout_findings
@@ -23,6 +24,7 @@ def attempt_findings(job: Job, attempt: Attempt) -> Iterable[Finding]:
         about = attempt_subject(attempt, item=view.item.key)
         yield from strength_findings(job.plan, view.item, view.strength, about)
         yield from heat_findings(job, attempt, view)
+        yield from draw_up_findings(job, attempt, view)
         yield from mount_findings(job, attempt, view)
     if cooling_matters(attempt):
         subject = Subject(step=attempt.step.key, attempt=attempt.number)

@@ -54,6 +54,8 @@ def mount_findings(job: Job, attempt: Attempt, view: ItemView) -> Iterable[Findi
         limit_origin=axial.origin.words if axial else None,
     )
     subject = attempt_subject(attempt, item=view.item.key)
-    yield rule("part-seated").apply(facts, subject)
+    # A taper stops nowhere: how far it is up is judged instead of a shoulder.
+    if view.drawn_up is None or facts.outcome == "stopped short":
+        yield rule("part-seated").apply(facts, subject)
     if axial is not None:
         yield rule("axial-position-right").apply(facts, subject)

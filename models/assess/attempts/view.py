@@ -4,6 +4,7 @@ from dataclasses import dataclass
 from functools import cached_property
 
 from models.assess.bend import Bend, bend_of
+from models.assess.draw_up import DrawnUp
 from models.assess.heat import Heat
 from models.assess.runout import StationChange, SurveyRunout
 from models.assess.sizes import LandFit
@@ -26,7 +27,17 @@ from models.job import (
 )
 from models.rules.rule import Finding, Subject, Verdict
 
-__all__ = ["Attempt", "ItemView", "attempt_subject", "finding_key"]
+__all__ = ["DRAW_UP_RULES", "HOME_RULES", "Attempt", "ItemView", "attempt_subject", "finding_key"]
+
+HOME_RULES = ("part-seated",)
+DRAW_UP_RULES = (
+    "interference-within",
+    "advance-within",
+    "taper-contact",
+    "dilation-allowed",
+    "seating-loss-usual",
+    "piston-held",
+)
 
 
 @dataclass(frozen=True, eq=False)
@@ -42,6 +53,7 @@ class ItemView:
     axial: tuple[AxialMeasured, ...]
     removal: Removal | None
     confirmations: tuple[Confirmation, ...]
+    drawn_up: DrawnUp | None = None
 
     @property
     def axial_cold(self) -> AxialMeasured | None:
@@ -106,6 +118,18 @@ class Attempt:
         if not found:
             return None
         return Verdict.worst([self.counted(finding) for finding in found])
+
+    def home(self, item: str | None = None) -> Verdict | None:
+        """Say whether a part, or every one, is where it belongs: on a taper by its draw-up."""
+        found = []
+        for view in self.items:
+            if item not in (None, view.item.key):
+                continue
+            rules = HOME_RULES if view.drawn_up is None else (*HOME_RULES, *DRAW_UP_RULES)
+            verdict = self.verdict_of(*rules, item=view.item.key)
+            if verdict is not None:
+                found.append(verdict)
+        return Verdict.worst(found) if found else None
 
     def counted(self, finding: Finding) -> Verdict:
         """Give the verdict as it counts for going on: a person's decision settles a doubt."""

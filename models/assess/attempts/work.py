@@ -6,6 +6,7 @@ from functools import lru_cache
 
 from models.assess.attempts.findings import attempt_findings
 from models.assess.attempts.view import Attempt, ItemView
+from models.assess.draw_up import drawn_up, taper_fits
 from models.assess.ground import Ground, ground_of
 from models.assess.heat import item_heat
 from models.assess.runout import compare_surveys, read_survey, where_the_bend_sits
@@ -109,7 +110,11 @@ def _item_view(
     own = [one for one in entries if isinstance(one, SizeSurvey)]
     # Sizes taken before the first attempt serve it; once the part has been on, new ones are due.
     sizes = [*earlier_sizes, *own] if opened.place.attempt == 1 else own
-    fits = tuple(land_fit(job, item, land, sizes) for land in item.lands)
+    drawn = drawn_up(job, item, entries)
+    if drawn is not None:
+        fits = taper_fits(item, drawn)
+    else:
+        fits = tuple(land_fit(job, item, land, sizes) for land in item.lands)
     heatings = [one for one in entries if isinstance(one, Heating)]
     mounts = [one for one in entries if isinstance(one, Mount) and one.item == item.key]
     removals = [one for one in entries if isinstance(one, Removal) and one.item == item.key]
@@ -129,4 +134,5 @@ def _item_view(
         confirmations=tuple(
             one for one in entries if isinstance(one, Confirmation) and one.item == item.key
         ),
+        drawn_up=drawn,
     )

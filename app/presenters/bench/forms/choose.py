@@ -4,6 +4,7 @@ from collections.abc import Callable
 
 from app.presenters.bench.forms.confirming import confirmation_form
 from app.presenters.bench.forms.cooling import cooling_form
+from app.presenters.bench.forms.drawing_up import draw_up_form
 from app.presenters.bench.forms.form import Bench, Form
 from app.presenters.bench.forms.heating import heat_form
 from app.presenters.bench.forms.measuring import sizes_form
@@ -25,6 +26,7 @@ def form_for(bench: Bench, act: NextAct, attempt: Attempt | None) -> Form | None
         Act.CONFIRM_DOOR: confirmation_form,
         Act.HEAT: heat_form,
         Act.COMPLETE_MOUNT: mount_form,
+        Act.DRAW_UP: draw_up_form,
         Act.MEASURE_AXIAL: axial_form,
         Act.REMOVE: removal_form,
     }
