@@ -5,6 +5,7 @@ from __future__ import annotations
 import gc
 import sys
 from collections.abc import Callable
+from functools import partial
 from pathlib import Path
 
 from PySide6.QtWidgets import QApplication, QWidget
@@ -12,6 +13,7 @@ from PySide6.QtWidgets import QApplication, QWidget
 from app.benches import Bench
 from app.frame.look import Look
 from app.last_resort import LastResort, show_dialog
+from app.pages.backups import BackupsPage
 from app.pages.bench.page import BenchPage
 from app.pages.handbook import HandbookPage
 from app.pages.inspection import InspectionPage
@@ -20,6 +22,7 @@ from app.pages.plan import PlanPage
 from app.pages.register.page import RegisterPage
 from app.pages.story import StoryPage
 from app.presenters.background import Background
+from app.presenters.backups import BackupsPresenter
 from app.presenters.bench.bench import BenchPresenter
 from app.presenters.handbook import HandbookPresenter
 from app.presenters.inspection import InspectionPresenter
@@ -82,6 +85,13 @@ class Opened:
         register = RegisterPresenter(self.shop, self.keys)
         window.add_desk("Register", RegisterPage(register, look=look))
         window.add_desk(HANDBOOK, HandbookPage(HandbookPresenter(), look=look))
+        self.backups = BackupsPresenter(
+            self.shop,
+            self._store,
+            second_folder=self.settings.of_shop("second backup folder"),
+            keep_second_folder=partial(self.settings.keep_for_shop, "second backup folder"),
+        )
+        window.add_desk("Backups", BackupsPage(self.backups, look=look))
 
     def _make_bench(self, job: str, person: str, look: Look, parent: QWidget) -> Bench:
         presenter = BenchPresenter(self._acts, self.writer, job, person, keys=self.keys)
@@ -159,6 +169,7 @@ def run(folder: Path, *, sign_in: str | None, job: str | None) -> int:
     opened.background.working.connect(_freeze_when_idle)
     try:
         opened.show(sign_in=sign_in, job=job)
+        opened.backups.begin()
         return application.exec()
     finally:
         opened.close()

@@ -168,6 +168,13 @@ class ShopPresenter(QObject):
     def _mark_stale(self) -> None:
         self._stale = True
 
+    def read_all_anew(self) -> None:
+        """Forget every job as it was read, and read the shelf: the record is another."""
+        self._desk_acts += 1
+        self._views.clear()
+        self.read_shelf()
+        self.job_changed.emit()
+
     def refresh(self) -> None:
         """Read the job on the desks again if anything has been written since."""
         if self._stale and self._number:

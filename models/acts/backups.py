@@ -49,7 +49,7 @@ def back_up(store: Store, *, act_id: str, folder: Path | None = None) -> Backup:
         ) as act,
     ):
         add_heads_seen(act, backup_name=backup.path.name, heads=backup.heads)
-    keep_generations(kept)
+    keep_generations(kept, of=act.chain_id)
     return backup
 
 

@@ -32,6 +32,7 @@ __all__ = [
     "Contents",
     "backups_in",
     "contents_of",
+    "copy_backup",
     "copy_whole",
     "generations_to_keep",
     "keep_generations",
@@ -82,6 +83,11 @@ class Contents:
     heads: dict[str, Head]
     names: dict[str, str]
     last_at: dict[str, str]
+
+    @property
+    def shop(self) -> str:
+        """Id of the shop's own chain; nothing where it has not begun."""
+        return next((chain for chain, name in self.names.items() if not name), "")
 
     @property
     def jobs(self) -> tuple[str, ...]:
@@ -258,9 +264,55 @@ def generations_to_keep(times: Iterable[datetime]) -> set[datetime]:
     return kept | set(days.values()) | set(months.values())
 
 
-def keep_generations(folder: Path) -> list[Path]:
-    """Remove the backups of a folder whose generation is over; give what was removed."""
-    dated = {path: time for path in backups_in(folder) if (time := made_at(path)) is not None}
+def _is_of(path: Path, shop: str) -> bool:
+    try:
+        return contents_of(path).shop == shop
+    except RecordError:
+        return False
+
+
+def copy_backup(backup: Path, folder: Path) -> Path:
+    """Copy a backup into a second folder, on a stick or a share, and compare the copy.
+
+    Raises
+    ------
+    BackupError
+        If the folder is not there or does not allow it.
+    """
+    draft = folder / f".backup.new-{uuid.uuid4()}"
+    place = folder / backup.name
+    try:
+        if not folder.is_dir():
+            raise BackupError(folder, "the folder is not there")
+        if place.exists():
+            return place
+        make_empty(draft)
+        with opened_copy(backup) as source, closing(sqlite3.connect(draft)) as target:
+            copy_whole(source, target)
+        if contents_of(draft, whole=True).heads != contents_of(backup).heads:
+            raise BackupError(folder, "the copy does not end where the backup does")
+        put_in_place(draft, place)
+    except BackupError:
+        raise
+    except (OSError, sqlite3.Error, RecordError) as error:
+        raise BackupError(folder, _reason(error, folder)) from error
+    finally:
+        with suppress(OSError):
+            draft.unlink(missing_ok=True)
+    keep_generations(folder, of=contents_of(backup).shop)
+    return place
+
+
+def keep_generations(folder: Path, *, of: str) -> list[Path]:
+    """Remove a shop's backups whose generation is over; give what was removed.
+
+    Backups of other shops, and what cannot be read, are left alone.
+    """
+    dated = {
+        path: time
+        for path in backups_in(folder)
+        if (time := made_at(path)) is not None and _is_of(path, of)
+    }
     kept = generations_to_keep(dated.values())
     removed = [path for path, time in dated.items() if time not in kept]
     for path in removed:

@@ -16,6 +16,7 @@ __all__ = [
     "LockedRecordError",
     "NewerRecordError",
     "NotARecordError",
+    "OtherShopError",
     "PredecessorNotSettledError",
     "ReadOnlyError",
     "ReasonMissingError",
@@ -71,6 +72,16 @@ class BackupMissingError(RecordError):
         super().__init__(
             f"There is no backup at {path}. Choose one of those in the folder “backups” beside "
             "the record, or on the stick where they are kept."
+        )
+
+
+class OtherShopError(RecordError):
+    """A backup of one shop was to take the place of another's record."""
+
+    def __init__(self, backup: Path, path: Path) -> None:
+        super().__init__(
+            f"{backup} holds the record of another shop than {path}. Nothing was changed; choose a "
+            "backup of this shop, or an empty folder to put that one into."
         )
 
 

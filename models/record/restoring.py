@@ -25,6 +25,7 @@ from models.record.backups import (
 )
 from models.record.errors import (
     BackupMissingError,
+    OtherShopError,
     RecordError,
     SchemaDiffersError,
     TornRecordError,
@@ -62,6 +63,12 @@ class Look:
     # Why today's file cannot be read; nothing where it can, or where there is none.
     unreadable: str
     lost: tuple[Lost, ...]
+
+    @property
+    def is_other_shop(self) -> bool:
+        """Whether backup and record are of two shops."""
+        shops = {one.shop for one in (self.backup, self.today) if one is not None and one.shop}
+        return len(shops) > 1
 
     @property
     def acts_left_behind(self) -> int:
@@ -141,6 +148,8 @@ def put_back(backup: Path, folder: Path, *, act_id: str, now: Callable[[], str])
     path = folder / FILE_NAME
     if look.today is not None and _is_done(path, act_id):
         return Restored(look=look, set_aside=None)
+    if look.is_other_shop:
+        raise OtherShopError(backup, path)
     name = f"shop set aside {now()[:19].replace(':', '').replace('T', ' ')}"
     aside = free_place(folder, name) if path.exists() else None
     work = folder / f".restoring-{uuid.uuid4()}"

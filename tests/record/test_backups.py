@@ -18,6 +18,7 @@ from models.record.backups import (
     BackupError,
     backups_in,
     contents_of,
+    copy_backup,
     generations_to_keep,
     made_at,
 )
@@ -25,6 +26,7 @@ from models.record.errors import (
     LockedRecordError,
     NewerRecordError,
     NotARecordError,
+    OtherShopError,
     RecordError,
     TornRecordError,
 )
@@ -322,13 +324,16 @@ def test_a_record_that_cannot_be_read_is_renamed_and_the_backup_takes_its_place(
         assert troubles_of(opened) == []
 
 
-def test_a_backup_of_an_older_form_is_put_back_in_todays(store: Store, tmp_path: Path) -> None:
+def test_a_backup_of_an_older_form_is_put_back_in_todays(tmp_path: Path) -> None:
     import gzip
 
+    folder = tmp_path / "new place"
+    folder.mkdir()
     old = tmp_path / "shop 2031-01-01 000000Z.thirdjournal"
     old.write_bytes(gzip.decompress((SHAPES / "form_1.thirdjournal.gz").read_bytes()))
-    restore(old, store.path.parent, act_id="r")
-    assert troubles_of(store) == []
+    restore(old, folder, act_id="r")
+    with Store.open(folder) as store:
+        assert troubles_of(store) == []
     assert contents_of(old).form == 1
 
 
@@ -387,3 +392,46 @@ def test_restoring_waits_for_no_writer_for_ever(
     raw.execute("ROLLBACK")
     raw.close()
     assert state_of(store.path.parent) == before
+
+
+def test_another_shops_backup_never_takes_the_place_of_this_record(
+    store: Store, tmp_path: Path
+) -> None:
+    (tmp_path / "other").mkdir()
+    with Store.open(tmp_path / "other") as other:
+        back_up(other, act_id="b")
+        backup = back_up(other, act_id="c").path
+    before = state_of(store.path.parent)
+    with pytest.raises(OtherShopError, match="another shop"):
+        restore(backup, store.path.parent, act_id="r")
+    assert state_of(store.path.parent) == before
+
+
+def test_two_shops_on_one_stick_keep_their_own_generations(
+    store: Store, tmp_path: Path, clock: Clock
+) -> None:
+    stick = tmp_path / "stick"
+    stick.mkdir()
+    (tmp_path / "other").mkdir()
+    with Store.open(tmp_path / "other", clock=clock) as other:
+        back_up(other, act_id="a")
+        clock.now += timedelta(seconds=1)
+        theirs = copy_backup(back_up(other, act_id="b").path, stick)
+    for number in range(12):
+        clock.now += timedelta(minutes=1)
+        copy_backup(back_up(store, act_id=f"mine {number}").path, stick)
+    assert theirs.exists()
+    assert len(backups_in(stick)) == 11
+
+
+def test_a_copy_is_made_once_and_a_folder_that_is_gone_is_named(
+    store: Store, tmp_path: Path
+) -> None:
+    backup = back_up(store, act_id="b").path
+    stick = tmp_path / "stick"
+    with pytest.raises(BackupError, match=r"stick: the folder is not there.*back up again"):
+        copy_backup(backup, stick)
+    stick.mkdir()
+    copied = copy_backup(backup, stick)
+    assert copy_backup(backup, stick) == copied
+    assert contents_of(copied, whole=True).heads == contents_of(backup).heads
