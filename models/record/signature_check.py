@@ -12,7 +12,6 @@ from models.record import tables
 from models.record.canonical import UnfitValueError
 from models.record.chain_check import Trouble
 from models.record.flat import Row
-from models.record.lookups import shop_chain
 from models.record.signed_text import covered_digest, read_text
 from models.record.tables import table
 from models.trust.certificates import is_issued_by, signature_holds, subject_of, valid_between
@@ -160,11 +159,12 @@ def _out_of_date(certificate: str, entered: str | None) -> Iterator[str]:
 
 
 def _own_authorities(session: Session) -> set[str]:
-    shop = shop_chain(session)
-    if shop is None:
-        return set()
-    authority = table(tables.Authority)
-    asked = select(authority.c.certificate_pem).where(authority.c.chain_id == shop)
+    authority, chain = table(tables.Authority), table(tables.Chain)
+    asked = (
+        select(authority.c.certificate_pem)
+        .join(chain, chain.c.chain_id == authority.c.chain_id)
+        .where(chain.c.kind == "shop")
+    )
     return set(session.execute(asked).scalars())
 
 

@@ -17,7 +17,7 @@ from models.record import tables
 from models.record.chain_check import ChainCheck, Trouble
 from models.record.errors import UnknownJobError
 from models.record.heads_seen import heads_seen_troubles
-from models.record.lookups import chain_of_job
+from models.record.lookups import chain_of_job, shop_chain
 from models.record.schema import differences
 from models.record.signature_check import signature_troubles
 from models.record.tables import recorded_tables, table
@@ -51,7 +51,7 @@ def verify(
     session
         A session of `Store.reading`.
     number
-        The job to look at; all jobs and the shop if absent.
+        The job to look at, or `SHOP_NAME`; all jobs and the shop if absent.
     expected
         A head of that job which was kept elsewhere; the chain must contain it.
 
@@ -60,7 +60,7 @@ def verify(
     UnknownJobError
         If there is no job of this number.
     """
-    troubles = list(_of_the_file(session))
+    troubles = [*_of_the_file(session), *_second_shop(session)]
     heads: dict[str, Head] = {}
     acts = 0
     chains = _chains(session, number)
@@ -88,9 +88,26 @@ def _of_the_file(session: Session) -> Iterator[Trouble]:
         yield Trouble(what=f"a row names one of {row[2]} that is not there", table=row[0])
 
 
+def _second_shop(session: Session) -> Iterator[Trouble]:
+    """Find chains that call themselves the shop's beside the first one."""
+    chain, act = table(tables.Chain), table(tables.Act)
+    begun = select(act.c.entered_at_utc).where(
+        act.c.chain_id == chain.c.chain_id, act.c.sequence == 1
+    )
+    rows = session.execute(
+        select(chain.c.chain_id, chain.c.key)
+        .where(chain.c.kind == "shop")
+        .order_by(begun.scalar_subquery().nulls_last(), chain.c.chain_id)
+    ).all()
+    for row in rows[1:]:
+        what = "is a second chain that calls itself the shop's"
+        yield Trouble(job=row.chain_id, table="chain", key=row.key, what=what)
+
+
 def _chains(session: Session, number: str | None) -> dict[str, str]:
     if number is not None:
-        chain_id = chain_of_job(session, number)
+        shop = number == SHOP_NAME
+        chain_id = shop_chain(session) if shop else chain_of_job(session, number)
         if chain_id is None:
             raise UnknownJobError(number)
         return {chain_id: number}
