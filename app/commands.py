@@ -93,8 +93,13 @@ def _parser() -> argparse.ArgumentParser:
     verify = commands.add_parser(
         "verify", help="recompute a record from its rows and say what does not hold"
     )
-    verify.add_argument("record", type=Path, metavar="SHOP", help="folder of the record")
-    verify.add_argument("--job", metavar="NUMBER", help="one job only")
+    verify.add_argument(
+        "record",
+        type=Path,
+        metavar="SHOP_OR_FILE",
+        help="folder of the record, or a job file that carries its chain",
+    )
+    verify.add_argument("--job", metavar="NUMBER", help="one job only; “the shop” is its own chain")
     verify.add_argument(
         "--head", metavar="N:DIGEST", help="a head of that job, as a traveler prints it"
     )
@@ -122,6 +127,20 @@ def _parser() -> argparse.ArgumentParser:
         "--look", action="store_true", help="only say what it holds and what would be left behind"
     )
     restore.set_defaults(run=_restore)
+
+    export = commands.add_parser("export", help="write a job file with the job's chain")
+    export.add_argument("record", type=Path, metavar="SHOP", help="folder of the record")
+    export.add_argument("job", metavar="NUMBER")
+    export.add_argument("-o", "--output", type=Path, required=True, metavar="FILE")
+    export.set_defaults(run=_export)
+
+    take = commands.add_parser(
+        "take-in", help="lay a job file with its chain down in another shop's record"
+    )
+    take.add_argument("jobfile", type=Path)
+    take.add_argument("record", type=Path, metavar="SHOP", help="folder of the record")
+    take.add_argument("--by", metavar="PERSON", required=True, help="key of who takes it in")
+    take.set_defaults(run=_take_in)
     return parser
 
 
@@ -162,15 +181,21 @@ def _traveler(given: argparse.Namespace) -> int:
 
 
 def _verify(given: argparse.Namespace) -> int:
-    from app.verify_text import head_from, verified
+    from app.verify_text import head_from, verified, verified_file
+    from models.record.store import FILE_NAME
 
-    if given.head is not None and given.job is None:
+    in_file = given.record.is_file() and given.record.name != FILE_NAME
+    if given.head is not None and given.job is None and not in_file:
         raise _UnusableError("--head belongs to one job; name it with --job")
     try:
         head = head_from(given.head) if given.head is not None else None
     except ValueError as trouble:
         raise _UnusableError(str(trouble)) from None
-    found = _with_record(lambda: verified(given.record, job=given.job, head=head))
+    if in_file:
+        found = _with_record(lambda: verified_file(given.record, head=head))
+    else:
+        folder = given.record.parent if given.record.name == FILE_NAME else given.record
+        found = _with_record(lambda: verified(folder, job=given.job, head=head))
     _say(found.words)
     return _WITHIN if found.is_whole else _NOT_WITHIN
 
@@ -204,6 +229,37 @@ def _restore(given: argparse.Namespace) -> int:
 
     act = looked_into if given.look else put_back
     _say(_with_record(lambda: act(given.backup, given.record)))
+    return _WITHIN
+
+
+def _export(given: argparse.Namespace) -> int:
+    from models.acts import Acts
+    from models.record.store import Store
+
+    def work() -> int:
+        with Store.open(given.record, create=False) as store:
+            return Acts(store).write_file(given.job, given.output)
+
+    acts = _with_record(work)
+    _say(f"Job {given.job} with its chain of {acts} acts written to {given.output}")
+    return _WITHIN
+
+
+def _take_in(given: argparse.Namespace) -> int:
+    from models.acts import Acts
+    from models.jobfile import JobFileError
+    from models.record.store import Store
+
+    def work() -> str:
+        with Store.open(given.record, create=False) as store:
+            laid = Acts(store).take_in(given.jobfile.read_bytes(), by=given.by)
+        new = f"{laid.new_acts} acts are new" if laid.new_acts else "all of it was there already"
+        return f"Job {laid.number}: {new}; head {laid.head.sequence}:{laid.head.digest[:16]}"
+
+    try:
+        _say(_with_record(work))
+    except JobFileError as trouble:
+        raise _UnusableError(f"{given.jobfile}: {trouble}") from None
     return _WITHIN
 
 

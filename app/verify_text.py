@@ -3,13 +3,16 @@
 from dataclasses import dataclass
 from pathlib import Path
 
+from models.acts.carrying import look_at
 from models.job import Head
+from models.jobfile import JobFileError, chain_of
 from models.record.backup_check import compared_with_backups
 from models.record.backups import FOLDER_NAME
+from models.record.carried import CarriedError
 from models.record.store import Store
 from models.record.verify import verify
 
-__all__ = ["Verified", "head_from", "verified"]
+__all__ = ["Verified", "head_from", "verified", "verified_file"]
 
 
 @dataclass(frozen=True)
@@ -53,3 +56,37 @@ def verified(folder: Path, *, job: str | None, head: Head | None) -> Verified:
         "heads with those printed on travelers already given out."
     )
     return Verified("\n".join(lines), not troubles)
+
+
+def verified_file(path: Path, *, head: Head | None) -> Verified:
+    """Recompute the chain that a job file carries, and say what does not hold.
+
+    Raises
+    ------
+    OSError
+        If the file cannot be read.
+    """
+    try:
+        looked = look_at(path.read_bytes())
+    except (CarriedError, JobFileError) as trouble:
+        return Verified(f"{path.name}: {trouble}", False)
+    found = looked.laid.head
+    lines = [trouble.words for trouble in looked.troubles]
+    if head is not None:
+        lines += _compared(path, head)
+    whole = "holds: every link agrees with its rows, and the job with both"
+    lines.append(
+        f"job {looked.laid.number}, {looked.laid.new_acts} acts: the file "
+        f"{'does not hold' if lines else whole}."
+    )
+    is_whole = len(lines) == 1
+    lines.append(f"  head {found.sequence}:{found.digest}")
+    return Verified("\n".join(lines), is_whole)
+
+
+def _compared(path: Path, head: Head) -> list[str]:
+    for link in chain_of(path.read_bytes()):
+        if link.act["sequence"] == head.sequence:
+            same = str(link.act["digest"]).startswith(head.digest)
+            return [] if same else [f"act {head.sequence} is not the one whose head was kept"]
+    return [f"act {head.sequence}, whose head was kept, is not in the file"]

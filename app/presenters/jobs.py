@@ -68,6 +68,8 @@ class JobsPresenter(QObject):
     def __init__(self, shop: ShopPresenter, parent: QObject | None = None) -> None:
         super().__init__(parent)
         self._shop = shop
+        # The bytes of the file read last, where it carries its chain.
+        self._with_chain: bytes | None = None
         self._search = ""
         self._filter = FILTERS[0]
         self._wanted = ""
@@ -205,11 +207,17 @@ class JobsPresenter(QObject):
             The file.
         """
         self._shop.background.run(
-            lambda: jobfile.read(path),
+            lambda: self._read(path),
             words=f"reading {path.name}",
             done=self.file_read.emit,
             failed=lambda error: self._file_refused(path, error),
         )
+
+    def _read(self, path: Path) -> Job:
+        data = path.read_bytes()
+        job = jobfile.loads(data)
+        self._with_chain = data if jobfile.chain_of(data) else None
+        return job
 
     def _file_refused(self, path: Path, error: Exception) -> None:
         if isinstance(error, jobfile.JobFileError):
@@ -237,7 +245,7 @@ class JobsPresenter(QObject):
         return next((one for one in job.people if one.key == self._shop.person_key), None)
 
     def bring_in(self, job: Job, *, by: str) -> None:
-        """Take a job into the record.
+        """Take a job into the record, with its chain where the file carries one.
 
         Parameters
         ----------
@@ -246,7 +254,7 @@ class JobsPresenter(QObject):
         by : str
             Key of who brings it in.
         """
-        self._shop.bring_in(job, by=by, act_id=new_id())
+        self._shop.bring_in(job, by=by, act_id=new_id(), with_chain=self._with_chain)
 
     def write_job_file(self, number: str, path: Path) -> None:
         """Write a job's portable form beside the window.
@@ -260,7 +268,7 @@ class JobsPresenter(QObject):
         """
         self._in_background(
             f"writing the job file of {number}",
-            lambda: jobfile.write(self._shop.acts.read(number), path),
+            lambda: self._shop.acts.write_file(number, path),
             f"The job file of {number} is written to {path}.",
         )
 
@@ -286,7 +294,7 @@ class JobsPresenter(QObject):
             f"The traveler of {number} is written to {path}.",
         )
 
-    def _in_background(self, words: str, work: Callable[[], None], said: str) -> None:
+    def _in_background(self, words: str, work: Callable[[], object], said: str) -> None:
         def failed(error: Exception) -> None:
             if not isinstance(error, OSError):
                 raise error

@@ -256,7 +256,7 @@ class ShopPresenter(QObject):
         else:
             raise error
 
-    def bring_in(self, job: Job, *, by: str, act_id: str) -> None:
+    def bring_in(self, job: Job, *, by: str, act_id: str, with_chain: bytes | None = None) -> None:
         """Take a job that was read from a job file into the record.
 
         Parameters
@@ -267,14 +267,22 @@ class ShopPresenter(QObject):
             Key of who brings it in, one of the job's people.
         act_id : str
             Made before the first try, so that a retry brings nothing in twice.
+        with_chain : bytes or None
+            The file, where it carries its chain: the job is laid down as it is elsewhere.
         """
 
         def written(_: Any) -> None:  # noqa: ANN401  (the Writer hands back anything)
             self.said.emit(Said(what=f"Job {job.number} is in the record."))
             self.read_shelf()
 
+        def act() -> None:
+            if with_chain is None:
+                self.acts.bring_in(job, by=by, act_id=act_id)
+            else:
+                self.acts.take_in(with_chain, by=by, act_id=act_id)
+
         self.writer.write(
-            lambda: self.acts.bring_in(job, by=by, act_id=act_id),
+            act,
             done=written,
             refused=self._refused,
         )

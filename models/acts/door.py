@@ -3,7 +3,10 @@
 from collections.abc import Callable
 from dataclasses import dataclass
 from datetime import datetime
+from pathlib import Path
 
+from models import jobfile
+from models.acts.carrying import take_in, with_chain
 from models.acts.materials import keep_material, materials_kept
 from models.acts.permissions import demand, permission_for
 from models.acts.verdicts import (
@@ -32,6 +35,7 @@ from models.job import (
     Warmth,
 )
 from models.record import journal, queries
+from models.record.carried import Laid
 from models.record.key_rows import add_key_signature, authority_of_the_shop
 from models.record.signed_text import read_text, to_sign
 from models.record.store import Session, Store
@@ -128,6 +132,22 @@ class Acts:
         """
         with self._store.writing() as session:
             journal.bring_in(session, job, by=by, act_id=act_id, signer=signer)
+
+    def take_in(self, data: bytes, *, by: str, act_id: str | None = None) -> Laid:
+        """Lay the job of a file down with its chain; a file that is all there does nothing.
+
+        Raises
+        ------
+        JobFileError, CarriedError
+            If the file is not taken; nothing of it is kept.
+        """
+        return take_in(self._store, data, by=by, at=self.now(), act_id=act_id)
+
+    def write_file(self, number: str, path: Path) -> int:
+        """Write a job file with the job's chain; says how many acts it carries."""
+        job, chain = with_chain(self._store, number)
+        jobfile.write(job, path, chain)
+        return len(chain)
 
     def record(
         self,

@@ -4,7 +4,8 @@
 across the job, `portable` leads through them.
 """
 
+from models.jobfile.chain import Link, chain_of
 from models.jobfile.faults import JobFileError
 from models.jobfile.portable import EDITION, dumps, loads, read, write
 
-__all__ = ["EDITION", "JobFileError", "dumps", "loads", "read", "write"]
+__all__ = ["EDITION", "JobFileError", "Link", "chain_of", "dumps", "loads", "read", "write"]

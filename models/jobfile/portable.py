@@ -19,6 +19,7 @@ import msgspec
 from models import units
 from models.job import Job
 from models.jobfile import schema
+from models.jobfile.chain import KEY, Link, plain_chain
 from models.jobfile.checks import faults
 from models.jobfile.faults import KIND_WORDS, MISSING, Fault, JobFileError, Words, refuse_first
 from models.jobfile.text import joined, laid_out, odd_values, parsed
@@ -56,6 +57,8 @@ def loads(data: bytes) -> Job:
     refuse_first(odd_values(document, ""))
     refuse_first(_foreign(document))
     _check_schema(document)
+    if isinstance(document, dict):
+        document.pop(KEY, None)
     try:
         job = msgspec.convert(document, Job, dec_hook=units.decode)
     except msgspec.ValidationError as problem:
@@ -65,8 +68,10 @@ def loads(data: bytes) -> Job:
     return job
 
 
-def dumps(job: Job) -> bytes:
-    """Write a job as the bytes of a job file; equal jobs give equal bytes.
+def dumps(job: Job, chain: tuple[Link, ...] = ()) -> bytes:
+    """Write a job as the bytes of a job file, with its chain if there is one.
+
+    Equal jobs with equal chains give equal bytes.
 
     Raises
     ------
@@ -76,11 +81,13 @@ def dumps(job: Job) -> bytes:
     document: dict[str, Any] = _plain(job)
     # Defaults are left out, but these two are what tells the file from any other JSON.
     document = {"form": job.form, "edition": job.edition} | document
+    if chain:
+        document[KEY] = plain_chain(chain)
     refuse_first(odd_values(document, ""))
     return (laid_out(document, 0, 0) + "\n").encode("utf-8")
 
 
-def write(job: Job, path: Path | str) -> None:
+def write(job: Job, path: Path | str, chain: tuple[Link, ...] = ()) -> None:
     """Write a job file so that at any instant the old or the new one stands there, whole.
 
     Raises
@@ -91,7 +98,7 @@ def write(job: Job, path: Path | str) -> None:
         If the folder cannot be written; what stood at the path before is untouched.
     """
     target = Path(path)
-    data = dumps(job)
+    data = dumps(job, chain)
     handle, name = tempfile.mkstemp(prefix=f".{target.name}.", dir=target.parent)
     temporary = Path(name)
     try:

@@ -16,6 +16,7 @@ from typing import Any
 import msgspec
 
 from models.job import Job
+from models.jobfile.chain import KEY, schema_of_chain
 from models.units import KINDS, Quantity
 
 __all__ = ["document", "quantity", "read_committed", "rewrite", "text"]
@@ -35,6 +36,7 @@ def document() -> Node:
     # Defaults are left out of a file, but these two are what tells it from any other JSON.
     job["required"] = ["form", "edition", *job["required"]]
     job["properties"]["plans"]["minItems"] = 1
+    job["properties"][KEY] = schema_of_chain()
     return {
         "$schema": "http://json-schema.org/draft-07/schema#",
         "$ref": "#/definitions/Job",

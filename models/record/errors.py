@@ -11,6 +11,7 @@ __all__ = [
     "DiskFullError",
     "EmptyFileError",
     "FolderMissingError",
+    "FromElsewhereError",
     "HeadMovedError",
     "JobKnownError",
     "LockedRecordError",
@@ -196,6 +197,16 @@ class UnsafeSettingError(RecordError):
         super().__init__(
             f"The database library keeps {setting} at {found} where {wanted} is needed, so the "
             "record would not be safe. Install the program's own Python environment again."
+        )
+
+
+class FromElsewhereError(RecordError):
+    """The job goes on in another record."""
+
+    def __init__(self, number: str) -> None:
+        super().__init__(
+            f"Job {number} came here with its chain from another record and is kept to be read and "
+            "checked. Work on it goes on in the record where it began."
         )
 
 

@@ -12,7 +12,13 @@ from models.job import Head, Job, KeySignature, Signature
 from models.record import tables
 from models.record.act import BROUGHT_IN, Act
 from models.record.canonical import FIRST_PREVIOUS, normal
-from models.record.errors import ActDiffersError, HeadMovedError, JobKnownError
+from models.record.carried import is_from_elsewhere
+from models.record.errors import (
+    ActDiffersError,
+    FromElsewhereError,
+    HeadMovedError,
+    JobKnownError,
+)
 from models.record.finding_rows import add_instrument_event, add_numbered
 from models.record.flat import Cell, Row
 from models.record.key_rows import add_key_signature
@@ -65,6 +71,8 @@ def act(
         If the chain has another last act than expected.
     ActDiffersError
         If an act of the same id, but of another kind, person or chain, is recorded.
+    FromElsewhereError
+        If the job's chain was laid here from a file: it goes on where it began.
     UnknownJobError
         If there is no such job and the act does not open it.
     UnknownPersonError
@@ -73,6 +81,8 @@ def act(
     store: Store = session.info["store"]
     chain_id = shop_chain(session) if chain is None else chain_of_job(session, chain)
     begun = chain_id is not None
+    if chain_id is not None and chain is not None and is_from_elsewhere(session, chain_id):
+        raise FromElsewhereError(chain)
     chain_id = chain_id or str(uuid.uuid4())
     recorded = _recorded(session, act_id, chain_id, kind, by)
     last = last_act(session, chain_id)

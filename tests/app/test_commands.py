@@ -199,3 +199,40 @@ def test_a_command_that_is_not_there_is_refused_with_the_usage(
 
     assert ended.value.code == 2
     assert "usage: thirdjournal" in capsys.readouterr().err
+
+
+def test_a_job_goes_to_another_shop_by_command_and_is_verified_on_the_way(
+    shop_folder, tmp_path, capsys
+):
+    file, other = tmp_path / "a.job.json", tmp_path / "other"
+    other.mkdir()
+    Store.open(other).close()
+    assert main(["export", str(shop_folder), "26-0417", "-o", str(file)]) == 0
+    assert main(["verify", str(file)]) == 0
+    assert "job 26-0417, 110 acts: the file holds" in capsys.readouterr().out
+    assert main(["take-in", str(file), str(other), "--by", "AT"]) == 0
+    assert "110 acts are new; head 110:" in capsys.readouterr().out
+    assert main(["take-in", str(file), str(other), "--by", "AT"]) == 0
+    assert "all of it was there already" in capsys.readouterr().out
+    assert main(["verify", str(other)]) == 0
+    head = next(line for line in capsys.readouterr().out.splitlines() if "26-0417: 110" in line)
+    kept = "110:" + head.split()[-1].rstrip("…")
+    assert main(["verify", str(file), "--head", kept]) == 0
+    assert main(["verify", str(file), "--head", "110:" + "0" * 16]) == 1
+    assert "is not the one whose head was kept" in capsys.readouterr().out
+    assert main(["verify", str(file), "--head", "999:" + "0" * 16]) == 1
+
+
+def test_a_changed_file_is_refused_and_named(shop_folder, tmp_path, capsys):
+    file, other = tmp_path / "a.job.json", tmp_path / "other"
+    other.mkdir()
+    Store.open(other).close()
+    main(["export", str(shop_folder), "26-0417", "-o", str(file)])
+    text = file.read_text(encoding="utf-8")
+    at = text.rindex('"typed": "0.0')
+    file.write_text(text[:at] + text[at:].replace('"0.0', '"0.1', 1), encoding="utf-8")
+    capsys.readouterr()
+    assert main(["verify", str(file)]) == 1
+    assert "does not hold at act" in capsys.readouterr().out
+    assert main(["take-in", str(file), str(other), "--by", "AT"]) == 2
+    assert "does not hold at act" in capsys.readouterr().err

@@ -13,6 +13,7 @@ from sqlalchemy.pool import StaticPool
 
 from models.job import (
     GaugeTry,
+    Head,
     Hot,
     Place,
     Question,
@@ -23,6 +24,7 @@ from models.job import (
 )
 from models.record import journal, key_rows
 from models.record.act import Act
+from models.record.carried import Laid, note_taken_in
 from models.record.heads_seen import add_heads_seen, add_restoration, all_heads
 from models.record.places import AnyReading
 from models.record.signed_text import to_sign
@@ -104,6 +106,9 @@ def _give_keys(store: Store) -> None:
         key_rows.add_event(
             act, person="tom", event="unlocked", words="came", signed=(text, value, paper)
         )
+    with one_act(store, "taken in", chain=journal.SHOP) as act:
+        laid = Laid("another chain", "R-99", Head(sequence=3, digest="a" * 64), 3)
+        note_taken_in(act, laid, data=b"the file")
     with one_act(store, "shop named anew", chain=journal.SHOP) as act:
         key_rows.add_shop(act, name="Shop and Sons", place="Nowhere")
     signature = Signature(

@@ -6,7 +6,7 @@ from sqlalchemy.schema import SchemaItem
 
 from models.record.tables.base import Base, Recorded
 
-__all__ = ["Act", "Chain"]
+__all__ = ["Act", "Chain", "TakenIn"]
 
 
 class Act(Base):
@@ -57,4 +57,25 @@ class Chain(Recorded, Base):
             CheckConstraint("kind IN ('shop', 'job')", name="kind_known"),
             CheckConstraint("key = chain_id", name="names_itself"),
             Index(None, "kind"),
+        )
+
+
+class TakenIn(Recorded, Base):
+    """A job's chain was laid here from a file: which, up to which act, out of which file."""
+
+    __tablename__ = "taken_in"
+
+    job_chain_id: Mapped[str]
+    job_number: Mapped[str]
+    head_sequence: Mapped[int]
+    head_digest: Mapped[str]
+    file_digest: Mapped[str]
+
+    @classmethod
+    def demands(cls) -> tuple[SchemaItem, ...]:
+        """Let it be found by the chain that came in."""
+        return (
+            CheckConstraint("length(head_digest) = 64", name="head_digest_is_sha256"),
+            CheckConstraint("length(file_digest) = 64", name="file_digest_is_sha256"),
+            Index(None, "job_chain_id"),
         )

@@ -7,13 +7,16 @@ the program's own writer), and the act, with an `act_id` that a retry gives agai
 from collections.abc import Callable, Iterator
 from contextlib import contextmanager
 from dataclasses import dataclass
-from functools import partial
+from functools import cache, partial
 from pathlib import Path
+from tempfile import TemporaryDirectory
 
 import msgspec
 
+from models import jobfile
 from models.acts import Acts
 from models.acts.backups import back_up, restore
+from models.acts.carrying import with_chain
 from models.job import (
     AnyEntry,
     GaugeTry,
@@ -205,7 +208,20 @@ def _restore(store: Store) -> object:
     return restore(backup, folder, act_id="restored")
 
 
+@cache
+def _file_with_chain() -> bytes:
+    with TemporaryDirectory() as folder, Store.open(Path(folder)) as store:
+        _bring_in(store)
+        job, chain = with_chain(store, NUMBER)
+        return jobfile.dumps(job, chain)
+
+
+def _take_in(store: Store) -> object:
+    return Acts(store).take_in(_file_with_chain(), by="tom", act_id=ID)
+
+
 CASES: dict[str, Case] = {
+    "take_in": Case(_nothing, _take_in),
     "bring_in": Case(_nothing, _bring_in),
     **dict(_entry_cases()),
     **{

@@ -2,7 +2,14 @@
 
 from collections.abc import Callable
 
-from models.record.migrations.form_2 import assembly, backups, events, keys, shop_materials
+from models.record.migrations.form_2 import (
+    assembly,
+    backups,
+    carried,
+    events,
+    keys,
+    shop_materials,
+)
 
 __all__: list[str] = []
 
@@ -18,6 +25,7 @@ _LAID: tuple[Callable[[], None], ...] = (
     assembly.lay,
     backups.lay,
     events.lay,
+    carried.lay,
 )
 
 
