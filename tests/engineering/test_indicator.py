@@ -16,7 +16,7 @@ from models.engineering.runout import (
     vee_block_factor,
 )
 from tests.published.printed import printed
-from tests.published.runout import BLOCKS, SLIPS, WORKSHEET, WORKSHEET_SOURCE
+from tests.published.runout import BLOCKS, FACES, SLIPS, WORKSHEET, WORKSHEET_SOURCE
 from tests.second_paths.vee_block import shown_size
 
 INCH = 0.0254
@@ -97,10 +97,10 @@ def test_a_block_that_is_none_is_refused_by_name(name, given_block):
         vee_block_factor(**given_block)
 
 
-def test_a_tilted_face_agrees_with_hand_work():
-    # By hand: 0.0005 in on 8 in is 62.5 µrad.
-    tilt = face_perpendicularity(tir=0.0005 * INCH, diameter=8 * INCH)
-    assert tilt == printed("62.5", MICRON)
+@pytest.mark.parametrize("row", FACES, ids=lambda row: row.case)
+def test_a_tilted_face_agrees_with_its_source(row):
+    found = face_perpendicularity(tir=row.tir, diameter=row.diameter)
+    assert found == printed(row.microradians, MICRON), row.source
 
 
 def test_a_tilted_plane_turned_under_an_indicator_gives_its_tilt_back():

@@ -16,7 +16,13 @@ from models.engineering.materials import (
     modulus,
     own_material,
 )
-from tests.published.materials import EXPANSIONS, MODULI, TOTAL_EXPANSIONS, PropertyRow
+from tests.published.materials import (
+    CONSTANTS,
+    EXPANSIONS,
+    MODULI,
+    TOTAL_EXPANSIONS,
+    PropertyRow,
+)
 from tests.published.printed import printed
 
 
@@ -40,6 +46,12 @@ def test_mean_times_rise_from_70_fahrenheit_is_the_total_printed(row):
 @pytest.mark.parametrize("row", MODULI, ids=case)
 def test_the_modulus_is_the_one_printed(row):
     found = modulus(material=MATERIALS[row.key], temperature=row.temperature)
+    assert found == printed(row.printed, row.si_per_unit), row.source
+
+
+@pytest.mark.parametrize("row", CONSTANTS, ids=lambda row: f"{row.key} {row.property}")
+def test_a_property_without_temperature_is_the_one_printed(row):
+    found = getattr(MATERIALS[row.key], row.property)
     assert found == printed(row.printed, row.si_per_unit), row.source
 
 

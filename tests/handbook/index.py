@@ -141,6 +141,9 @@ def _row(table: str, place: int, row: Any) -> tuple[str, str, str]:
 def _flat(value: Any) -> Iterator[str]:
     if isinstance(value, str):
         yield value
+    elif hasattr(value, "expected") and hasattr(value, "abs"):
+        # A comparison made by `printed`: the number in SI, to the digits that were printed.
+        yield f"{value.expected:.4g}"
     elif isinstance(value, tuple):
         for one in value:
             yield from _flat(one)

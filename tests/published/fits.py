@@ -179,6 +179,50 @@ PRESSURES = [
         "159.23",
         MPA,
     ),
+    *[
+        FitRow(
+            f"150 mm shaft with a bore of {bore:.0f} mm",
+            "computed independently from Lamé's form for one material, no publication",
+            joint(0.225, 150.0, 250.0, bore=bore),
+            text,
+            MPA,
+        )
+        for bore, text in (
+            (0.0, "99.36"),
+            (30.0, "96.78"),
+            (50.0, "92.00"),
+            (75.0, "81.89"),
+            (100.0, "65.71"),
+        )
+    ],
+    FitRow(
+        "cast-iron disc on a hollow shaft",
+        "inputs of published slides that print no answer; computed independently",
+        joint(0.064754, 100.0, 250.0, bore=50.0, hub=(70e9, 0.25), shaft=(210e9, 0.3)),
+        "21.724",
+        MPA,
+    ),
+    FitRow(
+        "aluminium disc, overlap of 0.1 mm taken on radius",
+        "inputs of a posted examination problem that prints no answer; computed independently",
+        joint(0.2, 500.0, 800.0, hub=(70e9, 0.34), shaft=(208e9, 0.33)),
+        "9.833",
+        MPA,
+    ),
+    FitRow(
+        "aluminium disc, overlap of 0.1 mm taken on diameter",
+        "inputs of a posted examination problem that prints no answer; computed independently",
+        joint(0.1, 500.0, 800.0, hub=(70e9, 0.34), shaft=(208e9, 0.33)),
+        "4.917",
+        MPA,
+    ),
+    FitRow(
+        "ring of 1 mm on a rigid shaft",
+        "computed independently; a thin hoop E·e·t/R is 4.059 at its rim",
+        joint(0.1, 100.0, 102.0, hub=(207e9, 0.3), shaft=(207e18, 0.3)),
+        "4.074",
+        MPA,
+    ),
     FitRow("parts that just touch", "definition", joint(0.0, 100.0, 160.0), "0.000", MPA),
     FitRow("parts with clearance", "definition", joint(-0.05, 100.0, 160.0), "0.000", MPA),
 ]

@@ -7,6 +7,7 @@ __all__ = [
     "BLOCKS",
     "CHANGES",
     "DATUM",
+    "FACES",
     "KINKS",
     "LOSSES",
     "SLIPS",
@@ -141,6 +142,20 @@ KINKS = [
         "0.90", "59.77", "1.218",
     ),
 ]  # fmt: skip
+
+
+class Face(NamedTuple):
+    case: str
+    source: str
+    tir: float
+    diameter: float
+    microradians: str
+
+
+FACES = [
+    Face("0.0005 in on 8 in", "by hand: total over diameter", 0.0005 * 0.0254, 8 * 0.0254, "62.5"),
+    Face("10 µm on 200 mm", "by hand: total over diameter", 10e-6, 0.2, "50"),
+]
 
 
 class Slip(NamedTuple):
