@@ -38,7 +38,7 @@ def backed_up(folder: Path, *, to: Path | None) -> str:
     RecordError
         If the record cannot be opened, or the backup not written.
     """
-    with Store.open(folder, create=False) as store:
+    with Store.open(folder, create=False, on_network=True) as store:
         backup = back_up(store, act_id=str(uuid.uuid4()), folder=to)
         size = backup.path.stat().st_size
     return (

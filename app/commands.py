@@ -195,6 +195,7 @@ def _verify(given: argparse.Namespace) -> int:
         found = _with_record(lambda: verified_file(given.record, head=head))
     else:
         folder = given.record.parent if given.record.name == FILE_NAME else given.record
+        _tell_network(folder)
         found = _with_record(lambda: verified(folder, job=given.job, head=head))
     _say(found.words)
     return _WITHIN if found.is_whole else _NOT_WITHIN
@@ -217,9 +218,18 @@ def _handbook(given: argparse.Namespace) -> int:
     return _WITHIN
 
 
+def _tell_network(folder: Path) -> None:
+    from models.record.folders import network_kind, network_words
+
+    kind = network_kind(folder)
+    if kind:
+        print(f"thirdjournal: {network_words(folder, kind)}", file=sys.stderr)  # noqa: T201
+
+
 def _backup(given: argparse.Namespace) -> int:
     from app.backup_text import backed_up
 
+    _tell_network(given.record)
     _say(_with_record(lambda: backed_up(given.record, to=given.to)))
     return _WITHIN
 
@@ -227,6 +237,7 @@ def _backup(given: argparse.Namespace) -> int:
 def _restore(given: argparse.Namespace) -> int:
     from app.backup_text import looked_into, put_back
 
+    _tell_network(given.record)
     act = looked_into if given.look else put_back
     _say(_with_record(lambda: act(given.backup, given.record)))
     return _WITHIN

@@ -12,7 +12,7 @@ from types import TracebackType
 import platformdirs
 from PySide6.QtCore import QObject, Signal
 
-__all__ = ["LastResort", "log_file", "show_dialog"]
+__all__ = ["LastResort", "ask_dialog", "log_file", "show_dialog"]
 
 _LOG = logging.getLogger("thirdjournal")
 
@@ -35,6 +35,32 @@ def show_dialog(words: str) -> None:
     box = QMessageBox(QMessageBox.Icon.NoIcon, "Third Journal", words)
     box.addButton("Put away", QMessageBox.ButtonRole.AcceptRole)
     box.exec()
+
+
+def ask_dialog(words: str, *, yes: str, no: str) -> bool:
+    """Ask something before there is a window; the careful answer is the one at hand.
+
+    Parameters
+    ----------
+    words : str
+        What is asked, and what follows from it.
+    yes, no : str
+        Words on the two keys.
+
+    Returns
+    -------
+    bool
+        Whether `yes` was pressed.
+    """
+    from PySide6.QtWidgets import QMessageBox
+
+    box = QMessageBox(QMessageBox.Icon.NoIcon, "Third Journal", words)
+    wanted = box.addButton(yes, QMessageBox.ButtonRole.AcceptRole)
+    careful = box.addButton(no, QMessageBox.ButtonRole.RejectRole)
+    box.setDefaultButton(careful)
+    box.setEscapeButton(careful)
+    box.exec()
+    return box.clickedButton() is wanted
 
 
 class LastResort(QObject):

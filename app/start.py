@@ -12,7 +12,7 @@ from PySide6.QtWidgets import QApplication, QWidget
 
 from app.benches import Bench
 from app.frame.look import Look
-from app.last_resort import LastResort, show_dialog
+from app.last_resort import LastResort, ask_dialog, show_dialog
 from app.pages.backups import BackupsPage
 from app.pages.bench.page import BenchPage
 from app.pages.handbook import HandbookPage
@@ -30,7 +30,7 @@ from app.presenters.jobs import JobsPresenter
 from app.presenters.keys import KeysPresenter
 from app.presenters.plan import PlanPresenter
 from app.presenters.register import RegisterPresenter
-from app.presenters.shop import ShopPresenter
+from app.presenters.shop import Said, ShopPresenter
 from app.presenters.story import StoryPresenter
 from app.presenters.writing import Writer
 from app.settings import Settings, shop_folder
@@ -42,10 +42,12 @@ from models.record.errors import (
     DiskFaultError,
     DiskFullError,
     LockedRecordError,
+    NetworkFolderError,
     ReadOnlyError,
     RecordError,
     RecordMovedError,
 )
+from models.record.folders import low_space_words, network_kind, network_words
 from models.record.store import Store
 
 __all__ = ["SURROUNDINGS", "Opened", "run"]
@@ -76,6 +78,7 @@ class Opened:
             lambda: self.settings.keep_for_shop("filter", self.jobs.filter)
         )
         self.jobs.opened.connect(lambda _number: window.show_desk(BENCH))
+        self.jobs.opened.connect(lambda _number: self._warn_of_space())
         window.add_desk("Jobs", JobsPage(self.jobs, look=look, ask_person=window.ask_person))
         window.add_desk("Plan", PlanPage(PlanPresenter(self.shop), look=look))
         window.add_desk(BENCH, None)
@@ -119,6 +122,16 @@ class Opened:
             # Whoever names a job wants to work on it.
             self.window.show_desk(BENCH)
         self.shop.read_shelf()
+        folder = self._store.path.parent
+        if self._store.is_alone:
+            words = network_words(folder, network_kind(folder))
+            self.shop.said.emit(Said(what="This record lies on a network folder.", way_out=words))
+        self._warn_of_space()
+
+    def _warn_of_space(self) -> None:
+        words = low_space_words(self._store.path.parent)
+        if words:
+            self.shop.said.emit(Said(what=words))
 
     def close(self) -> None:
         """End the threads and give the record back."""
@@ -159,7 +172,7 @@ def run(folder: Path, *, sign_in: str | None, job: str | None) -> int:
         appearance=settings.appearance,
         text_scale=settings.text_scale,
     )
-    store = open_store(folder, tell=show_dialog)
+    store = open_store(folder, tell=show_dialog, ask_alone=partial(_go_on_alone, settings))
     last_resort = LastResort()
     last_resort.install()
     opened = Opened(store, settings)
@@ -177,12 +190,27 @@ def run(folder: Path, *, sign_in: str | None, job: str | None) -> int:
         gc.unfreeze()
 
 
+def _go_on_alone(settings: Settings, words: str) -> bool:
+    """Ask once whether to go on with a record on a network folder; yes is remembered."""
+    if settings.of_shop("network folder") == "alone":
+        return True
+    if not ask_dialog(words, yes="Go on alone", no="Leave"):
+        return False
+    settings.keep_for_shop("network folder", "alone")
+    return True
+
+
 def _freeze_when_idle(words: str) -> None:
     if not words:
         gc.freeze()
 
 
-def open_store(folder: Path, *, tell: Callable[[str], None]) -> Store:
+def open_store(
+    folder: Path,
+    *,
+    tell: Callable[[str], None],
+    ask_alone: Callable[[str], bool] = lambda _: False,
+) -> Store:
     """Open the record of a folder; the user's own folder is made where it is missing.
 
     Parameters
@@ -191,6 +219,8 @@ def open_store(folder: Path, *, tell: Callable[[str], None]) -> Store:
         Folder of the record.
     tell : callable
         Says a sentence to whoever sits at the screen.
+    ask_alone : callable
+        Says what follows from a network folder, and gives whether to go on all the same.
 
     Returns
     -------
@@ -206,6 +236,14 @@ def open_store(folder: Path, *, tell: Callable[[str], None]) -> Store:
         folder.mkdir(parents=True, exist_ok=True)
     try:
         return Store.open(folder)
+    except NetworkFolderError as trouble:
+        if not ask_alone(str(trouble)):
+            raise
+    except RecordError as trouble:
+        tell(str(trouble))
+        raise
+    try:
+        return Store.open(folder, on_network=True)
     except RecordError as trouble:
         tell(str(trouble))
         raise

@@ -40,7 +40,7 @@ def head_from(text: str) -> Head:
 
 def verified(folder: Path, *, job: str | None, head: Head | None) -> Verified:
     """Recompute every link of a shop's record from its rows, and say what does not hold."""
-    with Store.open(folder, create=False) as store, store.reading() as session:
+    with Store.open(folder, create=False, on_network=True) as store, store.reading() as session:
         found = verify(session, number=job, expected=head)
         beside = compared_with_backups(session, (folder / FOLDER_NAME,))
     troubles = (*found.troubles, *beside.troubles)

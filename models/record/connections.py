@@ -8,7 +8,7 @@ from sqlalchemy.pool import QueuePool
 
 from models.record.errors import UnsafeSettingError
 
-__all__ = ["BUSY_SECONDS", "engine_for"]
+__all__ = ["BUSY_SECONDS", "engine_for", "engines_alone"]
 
 BUSY_SECONDS = 5
 
@@ -25,14 +25,46 @@ _SETTINGS = (
 )
 
 
-def engine_for(path: Path, *, writing: bool, busy_seconds: float = BUSY_SECONDS) -> Engine:
-    """Prepare connections that only read, or that take the write lock when they begin."""
-    uri = f"{path.absolute().as_uri()}?mode=rw"
+def engines_alone(path: Path, *, busy_seconds: float = BUSY_SECONDS) -> tuple[Engine, Engine]:
+    """Prepare the one connection that keeps a file to itself, to read and to write with in turn.
+
+    Raises
+    ------
+    sqlite3.OperationalError
+        When it is first used, if another has the file.
+    """
 
     def connect() -> sqlite3.Connection:
-        connection = sqlite3.connect(
-            uri, uri=True, timeout=busy_seconds, isolation_level=None, check_same_thread=False
-        )
+        connection = _opened(path, busy_seconds)
+        try:
+            connection.execute("PRAGMA locking_mode = EXCLUSIVE")
+            _set(connection, writing=True, busy_seconds=busy_seconds)
+            # In this mode a lock, once taken, stays until the connection closes.
+            connection.execute("BEGIN EXCLUSIVE")
+            connection.execute("COMMIT")
+        except BaseException:
+            connection.close()
+            raise
+        return connection
+
+    engine = create_engine(
+        "sqlite://", creator=connect, poolclass=QueuePool, pool_size=1, max_overflow=0
+    )
+
+    def begin(connection: Connection) -> None:
+        writes = connection.get_execution_options()["writes"]
+        connection.exec_driver_sql(f"PRAGMA query_only = {0 if writes else 1}")
+        connection.exec_driver_sql("BEGIN IMMEDIATE" if writes else "BEGIN")
+
+    event.listen(engine, "begin", begin)
+    return engine.execution_options(writes=False), engine.execution_options(writes=True)
+
+
+def engine_for(path: Path, *, writing: bool, busy_seconds: float = BUSY_SECONDS) -> Engine:
+    """Prepare connections that only read, or that take the write lock when they begin."""
+
+    def connect() -> sqlite3.Connection:
+        connection = _opened(path, busy_seconds)
         try:
             _set(connection, writing=writing, busy_seconds=busy_seconds)
         except BaseException:
@@ -49,6 +81,16 @@ def engine_for(path: Path, *, writing: bool, busy_seconds: float = BUSY_SECONDS)
 
     event.listen(engine, "begin", begin)
     return engine
+
+
+def _opened(path: Path, busy_seconds: float) -> sqlite3.Connection:
+    return sqlite3.connect(
+        f"{path.absolute().as_uri()}?mode=rw",
+        uri=True,
+        timeout=busy_seconds,
+        isolation_level=None,
+        check_same_thread=False,
+    )
 
 
 def _set(connection: sqlite3.Connection, *, writing: bool, busy_seconds: float) -> None:

@@ -2,6 +2,8 @@
 
 from pathlib import Path
 
+from models.record.folders import network_words
+
 __all__ = [
     "ActDiffersError",
     "AlreadyReplacedError",
@@ -15,6 +17,7 @@ __all__ = [
     "HeadMovedError",
     "JobKnownError",
     "LockedRecordError",
+    "NetworkFolderError",
     "NewerRecordError",
     "NotARecordError",
     "OtherShopError",
@@ -103,6 +106,15 @@ class NotARecordError(RecordError):
         super().__init__(
             f"{path} is no record of this program. Move it away, or choose another folder."
         )
+
+
+class NetworkFolderError(RecordError):
+    """The folder lies on a network, and nobody said to go on."""
+
+    def __init__(self, folder: Path, kind: str) -> None:
+        self.folder = folder
+        self.kind = kind
+        super().__init__(network_words(folder, kind))
 
 
 class EmptyFileError(RecordError):

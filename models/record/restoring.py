@@ -187,7 +187,7 @@ def _prepared(
     ):
         copy_whole(source, target)
     time = made_at(backup)
-    with Store.open(work, create=False) as store:
+    with Store.open(work, create=False, on_network=True) as store:
         with store.reading() as session:
             found = verify(session)
         if not found.is_whole:

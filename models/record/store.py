@@ -16,16 +16,18 @@ from typing import Self
 from sqlalchemy import Connection, Engine
 from sqlalchemy.orm import Session
 
-from models.record.connections import BUSY_SECONDS, engine_for
+from models.record.connections import BUSY_SECONDS, engine_for, engines_alone
 from models.record.errors import (
     EmptyFileError,
     FolderMissingError,
+    NetworkFolderError,
     NewerRecordError,
     NotARecordError,
     RecordMissingError,
     SchemaDiffersError,
     TornRecordError,
 )
+from models.record.folders import network_kind
 from models.record.making import free_place, make_empty, make_record, put_in_place
 from models.record.migrations import APPLICATION_ID, FORM, bring_up_to_date
 from models.record.schema import differences
@@ -56,12 +58,22 @@ class Store:
     """
 
     def __init__(
-        self, path: Path, *, clock: Callable[[], datetime], station_name: str, busy_seconds: float
+        self,
+        path: Path,
+        *,
+        clock: Callable[[], datetime],
+        station_name: str,
+        busy_seconds: float,
+        alone: bool = False,
     ) -> None:
         self.path = path
         self.clock = clock
         self.station_name = station_name
         self.program_edition = _program_edition()
+        self.is_alone = alone
+        if alone:
+            self._reader, self._writer = engines_alone(path, busy_seconds=busy_seconds)
+            return
         self._reader = engine_for(path, writing=False, busy_seconds=busy_seconds)
         self._writer = engine_for(path, writing=True, busy_seconds=busy_seconds)
 
@@ -74,8 +86,12 @@ class Store:
         clock: Callable[[], datetime] = _now,
         station_name: str | None = None,
         busy_seconds: float = BUSY_SECONDS,
+        on_network: bool = False,
     ) -> Self:
         """Open the record of a folder; a missing one is made if `create` says so.
+
+        On a network folder it is opened only if `on_network` says so, and then for this process
+        alone.
 
         Raises
         ------
@@ -84,6 +100,9 @@ class Store:
         """
         if not folder.is_dir():
             raise FolderMissingError(folder)
+        kind = network_kind(folder)
+        if kind and not on_network:
+            raise NetworkFolderError(folder, kind)
         path = folder / FILE_NAME
         if not path.exists():
             if not create:
@@ -94,6 +113,7 @@ class Store:
             clock=clock,
             station_name=station_name or platform.node() or "unnamed computer",
             busy_seconds=busy_seconds,
+            alone=bool(kind),
         )
         try:
             store._examine()
