@@ -25,7 +25,7 @@ proc /proc proc rw 0 0
 server:/export /srv/shop nfs4 rw,vers=4.2 0 0
 /dev/sdb1 /srv/shop/local ext4 rw 0 0
 //office/rotors /media/our\040share cifs rw 0 0
-me@bench: /home/me/far fuse.sshfs rw 0 0
+me@bench: /mnt/far fuse.sshfs rw 0 0
 host /mnt/host 9p rw,trans=virtio 0 0
 tmpfs /tmp tmpfs rw 0 0
 /dev/sdc1 /media/stick vfat rw 0 0
@@ -38,13 +38,13 @@ half a line
 @pytest.mark.parametrize(
     ("folder", "kind"),
     [
-        ("/home/me/shop", ""),
+        ("/srv/plain", ""),
         ("/srv/shop", "nfs4"),
         ("/srv/shop/a/b", "nfs4"),
         ("/srv/shopping", ""),
         ("/srv/shop/local/a", ""),
         ("/media/our share/a", "cifs"),
-        ("/home/me/far/a", "fuse.sshfs"),
+        ("/mnt/far/a", "fuse.sshfs"),
         ("/mnt/host", "9p"),
         ("/media/stick/shop", ""),
         ("/twice/a", "nfs"),
