@@ -128,6 +128,9 @@ NUMBERS: Mapping[str, tuple[str, ...]] = MappingProxyType(
         "target_temperature": ("heating.target_temperature", "materials.mean_expansion"),
         "highest_temperature": ("heat_limits.highest_temperature",),
         "bow_per_kelvin": ("soak.thermal_bow",),
+        "time_constant": ("lumped_body.time_constant",),
+        "difference": _CHANGE,
+        "still_to_come": ("soak.remainder_to_cold",),
         # Runout.
         "change_tir": _CHANGE,
         "clock_angle": (*_CHANGE, "balance.clock_angle"),
@@ -161,6 +164,8 @@ NUMBERS: Mapping[str, tuple[str, ...]] = MappingProxyType(
         "dilation_pressure": _READ,
         "dilation_allowed": _READ,
         "hold": _READ,
+        "interval": _READ,
+        "agreement": _READ,
         "hold_wanted": _READ,
         "thrust": _READ,
         "thrust_to_carry": _READ,

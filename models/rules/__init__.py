@@ -1,6 +1,6 @@
 """Judgements on plain facts: every rule, in the order people read them."""
 
-from models.rules import draw_up, fit, heat, holding, mount, people, runout, sizes, strength
+from models.rules import cold, draw_up, fit, heat, holding, mount, people, runout, sizes, strength
 from models.rules.rule import Rule
 
 __all__ = ["ALL_RULES", "rule"]
@@ -13,6 +13,7 @@ ALL_RULES: tuple[Rule, ...] = (
     *heat.RULES,
     *draw_up.RULES,
     *mount.RULES,
+    *cold.RULES,
     *runout.RULES,
     *people.RULES,
 )

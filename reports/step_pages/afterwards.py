@@ -5,10 +5,11 @@ from collections.abc import Iterator, Sequence
 from reportlab.platypus import Flowable
 
 from models.assess import Attempt
+from models.assess.soak import forecast_of
 from models.job import Handling, Job, Note, Signature
 from models.rules.rule import Verdict
 from reports.front_pages import shown_time
-from reports.parts import Signed, head, signatures, struck, text, words
+from reports.parts import Cell, Signed, head, signatures, struck, text, words
 from reports.signed import behind_words
 from reports.step_pages.judged import judged_rows
 from reports.step_pages.sizes import columns
@@ -20,23 +21,25 @@ def cooling(job: Job, pair: Sequence[Attempt]) -> Iterator[Flowable]:
     """Give the temperatures read while the rotor cooled."""
     if not any(attempt.coolings for attempt in pair):
         return
-    del job
     yield head("Cooling", "temperatures permit reading; a survey that agrees proves it")
-    yield columns(
-        pair,
-        [
-            ("may it be read", [judged_rows(attempt.of("may-be-read")) for attempt in pair]),
-            (
-                "taken",
-                [
-                    words(", ".join(shown_time(one.done_at)[5:16] for one in attempt.coolings))
-                    or "–"
-                    for attempt in pair
-                ],
-            ),
-        ],
-        with_names=False,
-    )
+    rows: list[tuple[str, list[Cell]]] = [
+        ("may it be read", [judged_rows(attempt.of("may-be-read")) for attempt in pair])
+    ]
+    if any(attempt.of("second-survey-proves") for attempt in pair):
+        judged = [judged_rows(attempt.of("second-survey-proves")) for attempt in pair]
+        rows.append(("second survey", list(judged)))
+    if any(forecast_of(job.plan, attempt.entries) for attempt in pair):
+        rows.append(("watched", [_watched(job, attempt) for attempt in pair]))
+    taken = [
+        words(", ".join(shown_time(one.done_at)[5:16] for one in attempt.coolings)) or "–"
+        for attempt in pair
+    ]
+    yield columns(pair, [*rows, ("taken", list(taken))], with_names=False)
+
+
+def _watched(job: Job, attempt: Attempt) -> str:
+    found = forecast_of(job.plan, attempt.entries)
+    return "<br/>".join(words(one.sentence) for one in found) or "–"
 
 
 def removals(job: Job, pair: Sequence[Attempt]) -> Iterator[Flowable]:

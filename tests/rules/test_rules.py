@@ -22,7 +22,7 @@ from models.rules.facts import (
     SurveyFacts,
 )
 from models.rules.rule import Subject, Verdict
-from tests.rules import draw_up_cases, strength_cases
+from tests.rules import cold_cases, draw_up_cases, strength_cases
 
 IN, OUT, DOUBT, UNKNOWN = Verdict.WITHIN, Verdict.OUTSIDE, Verdict.CANNOT_TELL, Verdict.NOT_JUDGED
 UM = 1e-6
@@ -103,6 +103,7 @@ GOOD: dict[type, Any] = {
     ProgressFacts: ProgressFacts(steps_due=2, steps_waiting=()),
     **strength_cases.GOOD,
     **draw_up_cases.GOOD,
+    **cold_cases.GOOD,
 }
 
 
@@ -246,13 +247,15 @@ CASES = [
     Case("every-step-settled", "unknown", {"steps_due": None}, UNKNOWN),
     *(Case(*row) for row in strength_cases.CASES),
     *(Case(*row) for row in draw_up_cases.CASES),
+    *(Case(*row) for row in cold_cases.CASES),
 ]  # fmt: skip
 
 # Rules that compare a number with a limit, and so need a case exactly on it.
 _COMPARING = {case.rule for case in CASES if case.kind == "on the limit"}
 # Statements that are true, doubtful or missing; none of their cases is a stop.
 _NEVER_STOPS = {"survey-whole", "set-up-same", "circle-closed", "heated-through", "points-signed",
-                "piston-held", "in-order", "every-step-settled"}  # fmt: skip
+                "piston-held", "second-survey-proves", "in-order",
+                "every-step-settled"}  # fmt: skip
 
 
 @pytest.mark.parametrize("case", CASES, ids=lambda case: f"{case.rule}: {case.kind}")
@@ -278,7 +281,8 @@ def test_rule_has_cases_for_all_that_can_happen(judged: Any) -> None:
               "axial_tolerance", "least_allowed", "due_on", "hub_yield_strength",
               "shaft_yield_strength", "interference_at_trip", "torque_to_carry",
               "force_demanded", "force_demanded_at_speed", "shear_limit",
-              "least_advance_allowed", "contact_wanted", "seating_loss", "hold_wanted"}  # fmt: skip
+              "least_advance_allowed", "contact_wanted", "seating_loss", "hold_wanted",
+              "agreement"}  # fmt: skip
     if limits & set(judged.inputs):
         assert judged.id in _COMPARING
 

@@ -9,6 +9,7 @@ from dataclasses import dataclass, replace
 from app.pages.bench.places import Frame, Places
 from app.presenters.bench.state import BenchState
 from reports.sheet.along import along_the_rotor, axis_for, magnification_along
+from reports.sheet.decay import DecayPicture, decay, decay_height
 from reports.sheet.dial import dial
 from reports.sheet.elements import Box, Layer, Sheet, sheet_of
 from reports.sheet.labels import note
@@ -171,17 +172,28 @@ def _fitting(lines: Sequence[str], room: float, medium: Medium) -> Medium:
     return replace(medium, sizes={use: size * share for use, size in medium.sizes.items()})
 
 
-def ranges_height(picture: RangePicture, frame: Frame) -> float:
-    """Give the height that values against their limits ask for [px of the drawing]."""
+def ranges_height(picture: RangePicture | DecayPicture, frame: Frame) -> float:
+    """Give the height that values against their limits, or a decay, ask for [px of the drawing]."""
+    if isinstance(picture, DecayPicture):
+        return min(math.ceil(decay_height(medium=frame.medium)), frame.between(180, 260))
     asked = fit_bar_height(picture=picture, medium=frame.medium) + 8.0
     return min(math.ceil(asked), frame.between(210, 300))
 
 
-def ranges_sheet(picture: RangePicture, frame: Frame, places: Places) -> Sheet:
-    """Draw values against their limits."""
+def ranges_sheet(picture: RangePicture | DecayPicture, frame: Frame, places: Places) -> Sheet:
+    """Draw values against their limits, or how a station moved while it cooled."""
     width = places.ranges.width() / frame.growth
     height = places.ranges.height() / frame.growth
     place = Box(0.0, 2.0, width, height - 4.0)
+    if isinstance(picture, DecayPicture):
+        return sheet_of(
+            width=width,
+            height=height,
+            medium=frame.medium,
+            layers=[decay(picture=picture, place=place, medium=frame.medium)],
+            title="While it cools",
+            description=picture.tells,
+        )
     layer = fit_bar(picture=_with_room(picture, place, frame), place=place, medium=frame.medium)
     bars = ". ".join(f"{bar.name}: {bar.text}, {bar.verdict.value}" for bar in picture.bars)
     return sheet_of(

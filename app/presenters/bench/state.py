@@ -4,6 +4,7 @@ from dataclasses import dataclass, field
 
 from models.rules.progress import Stage
 from models.rules.rule import Verdict
+from reports.sheet.decay import DecayPicture
 from reports.sheet.pictures import (
     ChangeMark,
     DialPicture,
@@ -103,7 +104,7 @@ class FormTask:
     fields: tuple[Field, ...]
     take: str
     cautions: tuple[str, ...] = ()
-    ranges: RangePicture | None = None
+    ranges: RangePicture | DecayPicture | None = None
 
 
 @dataclass(frozen=True)

@@ -2,6 +2,7 @@
 
 from collections.abc import Mapping, Sequence
 
+from app.presenters.bench.cold import second_survey_words
 from app.presenters.bench.reading import SoFar
 from app.presenters.bench.state import BenchVerdict
 from app.presenters.reasons import handbook_words
@@ -183,6 +184,9 @@ def final_verdict(attempt: Attempt, units: UnitSet) -> BenchVerdict:
     if worst.verdict is Verdict.OUTSIDE and attempt.kink is not None:
         facts.append(("the bend sits", _bend(attempt, units)))
         facts.append(("look for", _CAUSES))
+    waiting = second_survey_words(attempt.plan, attempt)
+    if waiting is not None:
+        facts.append(("a second survey proves it cold", waiting))
     return BenchVerdict(
         worst.verdict,
         worst.phrase,

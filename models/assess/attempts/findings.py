@@ -2,6 +2,7 @@
 
 from collections.abc import Iterable
 
+from models.assess.attempts.on_cold import cold_findings
 from models.assess.attempts.on_cooling import cool_facts, cooling_matters
 from models.assess.attempts.on_draw_up import draw_up_findings
 from models.assess.attempts.on_mounting import heat_findings, mount_findings
@@ -29,5 +30,6 @@ def attempt_findings(job: Job, attempt: Attempt) -> Iterable[Finding]:
     if cooling_matters(attempt):
         subject = Subject(step=attempt.step.key, attempt=attempt.number)
         yield rule("may-be-read").apply(cool_facts(job, attempt), subject)
+    yield from cold_findings(job, attempt)
     yield from runout_findings(job, attempt)
     yield from people_findings(job, attempt)

@@ -1,6 +1,7 @@
 """The form of temperatures while the rotor cools."""
 
 from app.presenters.bench.cautions import cautions_for
+from app.presenters.bench.cold import decay_picture, soak_lines
 from app.presenters.bench.forms.form import (
     Answers,
     Bench,
@@ -10,6 +11,7 @@ from app.presenters.bench.forms.form import (
     entry_head,
     temperature_field,
 )
+from app.presenters.bench.forms.watching import station_watched, watch_fields
 from app.presenters.bench.state import FormTask
 from models.assess import Attempt
 from models.job import Cooling, Item, Warmth
@@ -30,24 +32,33 @@ def cooling_form(bench: Bench, act: NextAct, attempt: Attempt) -> Form:
             f"Side to side within {limits.side_to_side.written}, no more than "
             f"{limits.above_surroundings.written} above the room.",
             "Temperatures permit reading; a second survey that agrees is what proves it.",
+            *soak_lines(bench.job.plan, attempt),
         ),
         fields=(
             temperature_field(bench, "room", "Room"),
             *(temperature_field(bench, key, label) for key, label, _, _ in places),
             choice("instrument", "Thermometer", thermometers, thermometers[0][0]),
+            *watch_fields(bench, act),
         ),
         take="Take these",
         cautions=cautions_for(act.act),
+        ranges=decay_picture(bench.job.plan, attempt),
     )
 
     def make(answers: Answers) -> Made:
+        watched = station_watched(bench, act, answers)
+        if watched is not None and not any(answers.texts.get(key) for key, *_ in places):
+            # A reading of the station alone; temperatures follow when they are due.
+            return Made((watched,))
         taken = []
         for key, _, position, angle in places:
             value = answers.temperature(key)
             if value is not None:
                 taken.append(Warmth(position=position, angle=angle, temperature=value))
+        more = () if watched is None else (watched,)
         return Made(
             (
+                *more,
                 Cooling(
                     **entry_head(bench),
                     place=bench.place(act),
