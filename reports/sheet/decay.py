@@ -124,7 +124,13 @@ def decay(*, picture: DecayPicture, place: Box, medium: Medium) -> Layer:
         x, y = at(hour, value)
         items.append(Circle(x=x, y=y, radius=0.28 * size, fill=Colour.INK))
     items.append(
-        note(x=plot.left + size, y=place.top + size, text=picture.name, medium=medium, colour=Colour.INK)
+        note(
+            x=plot.left + size,
+            y=place.top + size,
+            text=picture.name,
+            medium=medium,
+            colour=Colour.INK,
+        )
     )
     mark = Mark(name=f"decay {picture.name}", tells=picture.tells or picture.name, box=place)
     return Layer(items=tuple(items), marks=(mark,))
