@@ -105,7 +105,11 @@ def _item(view: ItemView) -> dict[str, Any]:
     found: dict[str, Any] = {"item": view.item.key}
     if heat is not None:
         found["target_temperature [°C]"] = _number(heat.target)
+        found["target_uncertainty [K]"] = _number(heat.target_uncertainty)
+        found["target_without_margin [°C]"] = _number(heat.plain_target)
         found["highest_temperature [°C]"] = _number(heat.highest)
+        found["highest_temperature_source"] = heat.highest_origin
+        found["mean_temperature [°C]"] = _number(heat.mean_temperature)
     if view.drawn_up is not None:
         found["draw_up"] = drawn_up_out(view.drawn_up)
     found["lands"] = [

@@ -6,6 +6,7 @@ from collections import defaultdict
 from collections.abc import Iterator, Mapping
 from dataclasses import dataclass
 
+from models.assess.heat_limits import highest_of
 from models.assess.materials import material_of
 from models.assess.torque import carries_torque
 from models.job import Item, Plan, Step
@@ -103,7 +104,7 @@ def _lacks_of_item(plan: Plan, item: Item) -> Iterator[tuple[str, str]]:
         yield "material", "fit, heat and strength not judged"
     if item.kind == "hot" and item.mounting_clearance is None:
         yield "clearance while mounting", "heat target not worked out"
-    if item.kind == "hot" and item.highest_temperature is None:
+    if item.kind == "hot" and highest_of(plan, item)[0] is None:
         yield "highest temperature", "heat not judged"
     if item.yield_strength is None:
         yield "yield strength", "stress shown, not judged"

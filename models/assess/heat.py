@@ -4,11 +4,13 @@ from collections.abc import Sequence
 from dataclasses import dataclass
 from functools import cached_property
 
+from models.assess.heat_limits import highest_of
 from models.assess.materials import expansion_of, material_of
 from models.assess.sizes import LandFit
 from models.engineering.cooling import HotPart
 from models.engineering.drop_window import DropWindow, drop_window
 from models.engineering.errors import OutOfRangeError
+from models.engineering.expansion import area_weighted_mean_temperature
 from models.engineering.heating import gauge_diameter, target_temperature
 from models.engineering.materials import EXPANSION_SPREAD
 from models.engineering.over_seat import Seat
@@ -16,7 +18,7 @@ from models.job import Confirmation, GaugeTry, Heating, Hot, Item, Job, Plan
 from models.rules.facts import HeatFacts
 from models.units import unit_set
 
-__all__ = ["Heat", "heat_facts", "item_heat", "land_gauge"]
+__all__ = ["Heat", "heat_facts", "item_heat", "land_gauge", "target_with"]
 
 # Air in a workshop where nothing was recorded, for the drop window only (common practice).
 _ROOM_TEMPERATURE = 20.0
@@ -29,7 +31,12 @@ class Heat:
     item: Item
     target: float | None
     plain_target: float | None
+    # What the uncertainty of the interference (k = 2) would ask for beyond the target, in K.
+    target_uncertainty: float | None
     highest: float | None
+    highest_origin: str | None
+    # Over the area, from bore to rim: a free bore follows it and not its own temperature.
+    mean_temperature: float | None
     shaft_temperature: float | None
     gauge_sizes: tuple[tuple[str, float], ...]
     heating: Heating | None
@@ -62,12 +69,16 @@ def item_heat(job: Job, item: Item, fits: Sequence[LandFit], heatings: Sequence[
     everywhere = [one.temperature.si for one in latest]
     hottest = [one.temperature.si for one in heating.temperatures] if heating else []
     shaft_temperature = _shaft_temperature(heating, fits)
-    target, plain = _targets(job, item, fits, shaft_temperature)
+    target, plain, unsure = _targets(job.plan, item, fits, shaft_temperature)
+    highest, highest_origin = highest_of(job.plan, item)
     return Heat(
         item=item,
         target=target,
         plain_target=plain,
-        highest=item.highest_temperature.value.si if item.highest_temperature else None,
+        target_uncertainty=unsure,
+        highest=highest,
+        highest_origin=highest_origin,
+        mean_temperature=_mean_temperature(item, latest),
         shaft_temperature=shaft_temperature,
         gauge_sizes=_gauge_sizes(job, item, fits, shaft_temperature),
         heating=heating,
@@ -92,13 +103,13 @@ def heat_facts(
         for one in tries
         if (size := land_gauge(heat, one.land)) is not None and one.size.si < size - 1e-6
     )
-    cap = heat.item.highest_temperature
     return HeatFacts(
         units=unit_set(job.plan.rotor.units),
         serial=serial,
         target_temperature=heat.target,
         highest_temperature=heat.highest,
         coldest_bore=heat.coldest_bore,
+        mean_temperature=heat.mean_temperature,
         hottest_part=heat.hottest,
         spread=heat.spread,
         gauged_lands=tuple(one.land for one in tries if one.passed) if heat.heating else None,
@@ -109,7 +120,7 @@ def heat_facts(
         furnace_open_points=_not_in_order(furnace),
         door_serial=door.serial if door else None,
         door_open_points=_not_in_order(door),
-        limit_origin=cap.origin.words if cap else None,
+        limit_origin=heat.highest_origin,
     )
 
 
@@ -147,41 +158,84 @@ def _shaft_temperature(heating: Heating | None, fits: Sequence[LandFit]) -> floa
 
 
 def _targets(
-    job: Job, item: Item, fits: Sequence[LandFit], shaft_temperature: float | None
-) -> tuple[float | None, float | None]:
-    """Find the temperature every land opens at, with and without the margin for the spread."""
-    plan = job.plan
+    plan: Plan, item: Item, fits: Sequence[LandFit], shaft_temperature: float | None
+) -> tuple[float | None, float | None, float | None]:
+    """Find the temperature every land opens at, with and without the margin for the spread.
+
+    The third figure is how much more the uncertainty of the interference would ask for.
+    """
+    if shaft_temperature is None:
+        return None, None, None
+    careful = target_with(plan, item, fits, shaft_temperature)
+    plain = target_with(plan, item, fits, shaft_temperature, spread=0.0)
+    tighter = target_with(plan, item, fits, shaft_temperature, tighter=True)
+    unsure = None if careful is None or tighter is None else tighter - careful
+    return careful, plain, unsure
+
+
+def target_with(
+    plan: Plan,
+    item: Item,
+    fits: Sequence[LandFit],
+    shaft_temperature: float,
+    *,
+    spread: float = EXPANSION_SPREAD,
+    tighter: bool = False,
+) -> float | None:
+    """Find the temperature at which every land opens on a shaft at a temperature, in °C.
+
+    `tighter` counts the expanded uncertainty of each interference against the part; without one it
+    gives None.
+    """
     part, shaft = expansion_of(plan, item.material), expansion_of(plan, plan.shaft.material)
     measured = [fit for fit in fits if fit.interference is not None]
-    if (
-        part is None
-        or shaft is None
-        or shaft_temperature is None
-        or item.mounting_clearance is None
-        or not measured
-        or len(measured) < len(item.lands)
-    ):
-        return None, None
-    found: list[tuple[float, float]] = []
+    clearance = item.mounting_clearance
+    if part is None or shaft is None or clearance is None or not measured:
+        return None
+    if len(measured) < len(item.lands):
+        return None
+    found = []
     try:
         for fit in measured:
             assert fit.interference is not None
-            careful, plain = (
+            more = 0.0
+            if tighter:
+                if fit.expanded_uncertainty is None:
+                    return None
+                more = fit.expanded_uncertainty
+            found.append(
                 target_temperature(
-                    greatest_interference=fit.interference.greatest,
-                    clearance=item.mounting_clearance.value.si,
+                    greatest_interference=fit.interference.greatest + more,
+                    clearance=clearance.value.si,
                     diameter=fit.land.nominal_diameter.si,
                     shaft_temperature=shaft_temperature,
                     part_expansion=part,
                     shaft_expansion=shaft,
                     expansion_spread=spread,
                 )
-                for spread in (EXPANSION_SPREAD, 0.0)
             )
-            found.append((careful, plain))
     except OutOfRangeError:
-        return None, None
-    return max(one[0] for one in found), max(one[1] for one in found)
+        return None
+    return max(found)
+
+
+def _mean_temperature(item: Item, latest: Sequence[Hot]) -> float | None:
+    """Give the mean over the area of the part, from its coldest places; None without a rim."""
+    coldest = {
+        where: min((one.temperature.si for one in latest if one.where == where), default=None)
+        for where in ("bore", "web", "rim")
+    }
+    inner, outer = item.outline.bore.si / 2.0, item.outline.outer.si / 2.0
+    places = (("bore", inner), ("web", (inner + outer) / 2.0), ("rim", outer))
+    known = [(radius, value) for where, radius in places if (value := coldest[where]) is not None]
+    if coldest["bore"] is None or coldest["rim"] is None:
+        return None
+    try:
+        return area_weighted_mean_temperature(
+            radii=[radius for radius, _ in known], temperatures=[value for _, value in known]
+        )
+    except OutOfRangeError:
+        return None
 
 
 def _gauge_sizes(

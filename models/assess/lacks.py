@@ -5,6 +5,7 @@ None of it keeps a plan from being issued; what rests on it is not judged.
 
 from collections.abc import Iterable
 
+from models.assess.heat_limits import highest_of
 from models.assess.materials import material_of, material_problem
 from models.assess.torque import carries_torque
 from models.job import Item, Job, Land, Plan, Step
@@ -90,7 +91,7 @@ def _of_item(plan: Plan, step: Step, item: Item) -> Iterable[str]:
     if not item.lands:
         yield "no land, so neither fit nor heat is judged."
         return
-    yield from _of_heat(item)
+    yield from _of_heat(plan, item)
     if item.yield_strength is None:
         yield "no yield strength, so the stress at its bore is shown and not judged."
     if item.friction is None:
@@ -108,10 +109,10 @@ def _of_item(plan: Plan, step: Step, item: Item) -> Iterable[str]:
         )
 
 
-def _of_heat(item: Item) -> Iterable[str]:
+def _of_heat(plan: Plan, item: Item) -> Iterable[str]:
     if item.mounting_clearance is None:
         yield "no mounting clearance, so there is no heat target."
-    if item.highest_temperature is None:
+    if highest_of(plan, item)[0] is None:
         yield "no highest temperature, so its heat target is not judged."
     if item.axial is None:
         yield "no axial place, so where it comes to rest is not judged."

@@ -126,6 +126,12 @@ NUMBERS: Mapping[str, tuple[str, ...]] = MappingProxyType(
         "seating_loss": ("taper_fits.seating_loss", "hub_growth.pressure_from_outer_growth"),
         # Heat.
         "target_temperature": ("heating.target_temperature", "materials.mean_expansion"),
+        "target_uncertainty": (
+            "heating.target_temperature",
+            "size_uncertainty.interference_uncertainty",
+        ),
+        "target_without_margin": ("heating.target_temperature", "materials.mean_expansion"),
+        "mean_temperature": ("expansion.area_weighted_mean_temperature",),
         "highest_temperature": ("heat_limits.highest_temperature",),
         "bow_per_kelvin": ("soak.thermal_bow",),
         "time_constant": ("lumped_body.time_constant",),

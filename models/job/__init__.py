@@ -9,6 +9,7 @@ from models.job.cooling_watch import *  # noqa: F403
 from models.job.draw_up import *  # noqa: F403
 from models.job.entries import *  # noqa: F403
 from models.job.events import *  # noqa: F403
+from models.job.heat_words import *  # noqa: F403
 from models.job.job import *  # noqa: F403
 from models.job.limits import *  # noqa: F403
 from models.job.loads import *  # noqa: F403

@@ -8,6 +8,7 @@ clock angles from the reference mark, the way the rotor names.
 from typing import Literal
 
 from models.job.base import Frozen
+from models.job.heat_words import Chilling, Surface
 from models.job.limits import LengthLimit, TemperatureLimit
 from models.job.loads import (
     BalanceReason,
@@ -197,6 +198,11 @@ class Item(Frozen, frozen=True, kw_only=True):
     thrust: ForceCarried | None = None
     running: RunningWarmth | None = None
     taper: TaperFit | None = None
+    # Last temper of the part: a cap is derived from it where the plan gives none and may be.
+    tempered_at: TemperatureLimit | None = None
+    surface: Surface = "bare"
+    holds_elastomers: bool = False
+    chilling: Chilling | None = None
 
 
 class Point(Frozen, frozen=True, kw_only=True):

@@ -74,6 +74,9 @@ class HeatFacts:
     target_temperature: float | None = known("the temperature that opens the bore", "°C")
     highest_temperature: float | None = known("the highest temperature allowed", "°C")
     coldest_bore: float | None = known("a temperature of the bore", "°C")
+    mean_temperature: float | None = known(
+        "the mean temperature over the part's area, from bore to rim", "°C"
+    )
     hottest_part: float | None = known("a temperature of the part", "°C")
     spread: float | None = known("temperatures at more than one place", "K")
     gauged_lands: tuple[str, ...] | None = known("what was measured on the hot part")

@@ -52,6 +52,7 @@ def bore_is_open(
     ungauged_lands: tuple[str, ...],
     small_gauges: tuple[str, ...],
     coldest_bore: float | None = None,
+    mean_temperature: float | None = None,
 ) -> Judgement:
     """Say from what was measured whether the bore clears the shaft; the gauge goes first."""
     target = units.both(target_temperature, "temperature")
@@ -84,6 +85,18 @@ def bore_is_open(
             Verdict.OUTSIDE,
             f"The coldest place of the bore is at {coldest}; {target} is needed. Heat on.",
             {"lacking": target_temperature - coldest_bore},
+            phrase="Not open yet",
+        )
+    if mean_temperature is not None and (
+        at_least(mean_temperature, target_temperature, resolution=TEMPERATURE_STEP)
+        is not Verdict.WITHIN
+    ):
+        mean = units.both(mean_temperature, "temperature")
+        return Judgement(
+            Verdict.OUTSIDE,
+            f"The bore is at {coldest}, but the part only at {mean} on average over its area, and "
+            f"its bore follows that; {target} is needed. Soak on, or offer the hot-bore gauge.",
+            {"lacking": target_temperature - mean_temperature},
             phrase="Not open yet",
         )
     return Judgement(
@@ -159,23 +172,25 @@ RULES = (
     Rule(
         id="target-below-highest",
         statement="The temperature that opens the bore is allowed for the part.",
-        source="the plan's highest temperature",
+        source="the plan's highest temperature, else 50 K below the temper of a bare steel part",
         facts=HeatFacts,
         judge=target_is_allowed,
     ),
     Rule(
         id="not-overheated",
         statement="No place of the part was hotter than allowed.",
-        source="the plan's highest temperature",
+        source="the plan's highest temperature, else 50 K below the temper of a bare steel part",
         facts=HeatFacts,
         judge=part_is_not_overheated,
     ),
     Rule(
         id="bore-open",
         statement="What was measured on the hot part says that its bore clears the shaft.",
-        source="common practice: the hot-bore gauge decides, else the coldest place of the bore",
+        source="common practice: the hot-bore gauge decides, else the coldest place of the bore "
+        "and the mean over the part's area (Timoshenko and Goodier, from memory)",
         facts=HeatFacts,
         judge=bore_is_open,
+        edition=2,
     ),
     Rule(
         id="heated-through",

@@ -63,9 +63,13 @@ def _target(job: Job, view: ItemView) -> str:
     heat = view.heat
     if heat is None or heat.target is None or heat.plain_target is None:
         return "–"
+    unsure = ""
+    if heat.target_uncertainty is not None:
+        step = units.show(heat.target_uncertainty, "temperature_step")
+        unsure = f"; the sizes leave ± {step} of it open"
     return (
         f"{units.both(heat.target, 'temperature')}; "
-        f"{units.show(heat.plain_target, 'temperature')} without the steel's margin"
+        f"{units.show(heat.plain_target, 'temperature')} without the steel's margin{unsure}"
     )
 
 

@@ -13,6 +13,7 @@ from app.presenters.bench.forms.form import (
 from app.presenters.bench.state import FormTask
 from models.acts import Reading
 from models.assess import ItemView, land_gauge
+from models.assess.chilling import CAUTIONS, chilled
 from models.job import GaugeTry, Heating, Hot
 from models.rules.progress import NextAct
 from models.units import Length, UnreadableNumberError
@@ -38,16 +39,46 @@ def _heat_lines(bench: Bench, view: ItemView) -> tuple[str, ...]:
     if heat.target is not None and heat.plain_target is not None:
         lines.append(
             f"The coldest place of the bore must reach {units.both(heat.target, 'temperature')} "
-            f"({units.show(heat.plain_target, 'temperature')} without the margin for its steel)."
+            f"({units.show(heat.plain_target, 'temperature')} without the margin for its steel"
+            + (
+                "; the sizes leave ± "
+                f"{units.show(heat.target_uncertainty, 'temperature_step')} open"
+                if heat.target_uncertainty is not None
+                else ""
+            )
+            + ")."
         )
     if heat.highest is not None:
-        lines.append(f"No place may pass {units.both(heat.highest, 'temperature')}.")
+        origin = "" if view.item.highest_temperature is not None else f", {heat.highest_origin}"
+        lines.append(f"No place may pass {units.both(heat.highest, 'temperature')}{origin}.")
+    if heat.mean_temperature is not None:
+        mean = units.both(heat.mean_temperature, "temperature")
+        lines.append(f"On average over its area the part is at {mean}; its bore follows that.")
+    lines += _chill_lines(bench, view)
     if heat.gauge_sizes:
         sizes = ", ".join(
             f"land {land} {units.show(size, 'diameter')}" for land, size in heat.gauge_sizes
         )
         lines.append(f"Hot-bore gauge: {sizes}.")
     return tuple(lines)
+
+
+def _chill_lines(bench: Bench, view: ItemView) -> list[str]:
+    """Say what chilling the bare shaft would do, with its cautions; nothing without a procedure."""
+    found = None if view.heat is None else chilled(bench.job.plan, view.item, view.heat)
+    if found is None:
+        return []
+    units = bench.units
+    cold = units.both(found.temperature, "temperature")
+    if found.shrinks is None:
+        return [f"Chilling to {cold} ({found.procedure}) is not offered: {found.problem}."]
+    words = (
+        f"Chilled to {cold} under {found.procedure} the seat loses "
+        f"{units.both(found.shrinks, 'fit')}"
+    )
+    if found.target is not None:
+        words += f"; the bore then opens at {units.both(found.target, 'temperature')}"
+    return [words + ".", *CAUTIONS]
 
 
 def _heating_begins(bench: Bench, act: NextAct, view: ItemView) -> Form:
