@@ -24,6 +24,7 @@ from models.units import Length, unit_set
 
 __all__ = [
     "Asked",
+    "all_questions",
     "closing_questions",
     "open_questions",
     "questions_at_station",
@@ -39,6 +40,17 @@ _LEAST_SCATTER = 0.5e-6
 _FEWEST_MARKS = 6
 _WHOLE_SURVEY = ("survey",)
 
+# Which rule a suspicion belongs to.
+_RULE_OF = {
+    Mistake.FLIPPED_SIGN: "sign-kept",
+    Mistake.MIRRORED_ANGLES: "marks-counted-right",
+    Mistake.TURNED_MARK: "reference-mark-kept",
+    Mistake.SKIPPED_MARK: "no-mark-skipped",
+    Mistake.SWAPPED_STATIONS: "stations-in-place",
+    Mistake.SLIPPED_DECIMAL: "decimal-kept",
+    Mistake.WRONG_UNIT: "unit-kept",
+    Mistake.TWICE_OR_HALF: "totals-not-offsets",
+}
 _SURVEY_WORDS = {
     Mistake.FLIPPED_SIGN: "Every high spot lies half a turn from where it was: is the indicator's "
     "sign turned round?",
@@ -65,6 +77,8 @@ class Asked:
     where: tuple[str, ...]
     sentence: str
     proposed: str | None = None
+    # The rule whose mistake is suspected.
+    rule: str = ""
 
     @property
     def place(self) -> str:
@@ -92,6 +106,7 @@ def questions_at_station(job: Job, survey: RunoutSurvey, key: str) -> tuple[Aske
                     (key, str(index)),
                     f"{units.both(value, 'runout')} is more than any rotor runs out: is the "
                     "decimal point or the unit right?",
+                    rule="reading-possible",
                 )
             )
     if asked or len(known) < _FEWEST_MARKS or len(readings.typed) < len(survey.angles):
@@ -123,6 +138,7 @@ def _wild(job: Job, survey: RunoutSurvey, key: str, found: Suspicion, value: flo
         f"{units.show(value, 'runout')} at {angle.typed}° does not belong to the turn of the "
         f"others{meant or '.'}",
         proposed,
+        rule="reading-belongs",
     )
 
 
@@ -154,11 +170,18 @@ def closing_questions(
                     _WHOLE_SURVEY,
                     "More readings in a row repeat the earlier survey to the last digit than "
                     "chance gives: were they read, or copied?",
+                    rule="survey-read-anew",
                 )
             )
     mistake = _mistake(job, read_survey(job, survey), read_survey(job, before))
     if mistake is not None and mistake.mistake in _SURVEY_WORDS:
-        asked.append(Asked(_WHOLE_SURVEY, _SURVEY_WORDS[mistake.mistake]))
+        asked.append(
+            Asked(
+                _WHOLE_SURVEY,
+                _SURVEY_WORDS[mistake.mistake],
+                rule=_RULE_OF[mistake.mistake],
+            )
+        )
     return tuple(asked)
 
 
@@ -233,6 +256,13 @@ def open_questions(
     job: Job, survey: RunoutSurvey | SizeSurvey, before: RunoutSurvey | None
 ) -> tuple[Asked, ...]:
     """List every question about a survey that nobody has answered."""
+    return unanswered(survey, all_questions(job, survey, before))
+
+
+def all_questions(
+    job: Job, survey: RunoutSurvey | SizeSurvey, before: RunoutSurvey | None
+) -> tuple[Asked, ...]:
+    """List every question about a survey, answered or not."""
     asked: Iterable[Asked]
     if isinstance(survey, SizeSurvey):
         asked = questions_of_sizes(job, survey)
@@ -245,7 +275,7 @@ def open_questions(
         # Beside the earlier survey only once there is nothing left to read.
         if all(len(one.typed) == len(survey.angles) for one in survey.stations):
             asked = [*asked, *closing_questions(job, survey, before)]
-    return unanswered(survey, asked)
+    return tuple(asked)
 
 
 def unanswered(survey: RunoutSurvey | SizeSurvey, asked: Iterable[Asked]) -> tuple[Asked, ...]:

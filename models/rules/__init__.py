@@ -1,6 +1,18 @@
 """Judgements on plain facts: every rule, in the order people read them."""
 
-from models.rules import cold, draw_up, fit, heat, holding, mount, people, runout, sizes, strength
+from models.rules import (
+    blunders,
+    cold,
+    draw_up,
+    fit,
+    heat,
+    holding,
+    mount,
+    people,
+    runout,
+    sizes,
+    strength,
+)
 from models.rules.rule import Rule
 
 __all__ = ["ALL_RULES", "rule"]
@@ -15,6 +27,7 @@ ALL_RULES: tuple[Rule, ...] = (
     *mount.RULES,
     *cold.RULES,
     *runout.RULES,
+    *blunders.RULES,
     *people.RULES,
 )
 

@@ -1,16 +1,17 @@
 """Findings on the runout surveys of an attempt."""
 
-from collections.abc import Iterable
+from collections.abc import Iterable, Sequence
 from dataclasses import replace
 
 from models.assess.attempts.on_people import instrument_finding
 from models.assess.attempts.view import Attempt, attempt_subject
-from models.assess.questions import open_questions
+from models.assess.questions import Asked, all_questions, unanswered
 from models.assess.runout import StationChange, SurveyRunout, compare_surveys
-from models.job import Job, Step
+from models.job import Job, RunoutSurvey, Step
 from models.rules import rule
+from models.rules.blunders import SURVEY_BLUNDERS, BlunderFacts
 from models.rules.facts import ClosureFacts, StationFacts, SurveyFacts
-from models.rules.rule import Finding
+from models.rules.rule import Finding, Subject
 from models.units import unit_set
 
 __all__ = ["closure_allowed", "runout_findings", "station_facts", "survey_findings"]
@@ -57,18 +58,20 @@ def survey_findings(
     entry = survey.entry
     subject = attempt_subject(attempt, entry=entry.id)
     differences = None if baseline is None else entry.set_up.differences(baseline.entry.set_up)
+    asked = all_questions(job, entry, baseline.entry if baseline else None)
+    still_open = unanswered(entry, asked)
     facts = SurveyFacts(
         units=units,
         closed=entry.is_closed,
         stations_due=tuple(station.key for station in job.plan.stations_in_reach(attempt.step.key)),
         stations_read=tuple(one.key for one in survey.stations if one.is_read),
         set_up_differences=differences,
-        open_questions=tuple(
-            one.place for one in open_questions(job, entry, baseline.entry if baseline else None)
-        ),
+        open_questions=tuple(one.place for one in still_open),
     )
     yield rule("survey-whole").apply(facts, subject)
     yield rule("set-up-same").apply(facts, subject)
+    if any(one.fit is not None for one in survey.stations):
+        yield from _blunder_findings(entry, asked, still_open, subject)
     if job.plan.runout.close_circle:
         for one in survey.stations:
             if one.fit is None:
@@ -83,6 +86,22 @@ def survey_findings(
                 replace(subject, station=one.key),
             )
     yield instrument_finding(job, entry.instrument, entry.done_at, subject)
+
+
+def _blunder_findings(
+    entry: RunoutSurvey, asked: Sequence[Asked], still_open: Sequence[Asked], subject: Subject
+) -> Iterable[Finding]:
+    """Judge each kind of mistake that a survey's readings could show."""
+    answers = {(tuple(one.where), one.question): one.answer for one in entry.kept}
+    for one in SURVEY_BLUNDERS:
+        mine = [question for question in asked if question.rule == one.id]
+        facts = BlunderFacts(
+            suspected=tuple(q.sentence for q in mine if q in still_open),
+            answered=tuple(
+                answers[q.where, q.sentence] for q in mine if (q.where, q.sentence) in answers
+            ),
+        )
+        yield one.apply(facts, subject)
 
 
 def closure_allowed(job: Job, total: float) -> float:

@@ -9,6 +9,7 @@ from models.assess.land_limits import limits_of
 from models.assess.sizes import LandFit
 from models.job import Job
 from models.rules import rule
+from models.rules.blunders import WarmSizeFacts
 from models.rules.facts import FitFacts, SizeFacts
 from models.rules.rule import Finding
 from models.units import unit_set
@@ -37,6 +38,13 @@ def size_findings(job: Job, attempt: Attempt, view: ItemView) -> Iterable[Findin
             about = replace(subject, feature=feature, entry=entry.id)
             yield rule("sizes-plausible").apply(facts, about)
             yield rule("part-temperature-known").apply(facts, about)
+            if entry.part_temperature is not None and entry.gauge_temperature is not None:
+                warm = WarmSizeFacts(
+                    feature=feature,
+                    part_temperature=entry.part_temperature.si,
+                    gauge_temperature=entry.gauge_temperature.si,
+                )
+                yield rule("size-not-taken-hot").apply(warm, about)
             yield instrument_finding(job, entry.instrument, entry.done_at, about)
         facts_of_fit = fit_facts(job, fit)
         yield rule("seat-larger-than-bore").apply(facts_of_fit, subject)
