@@ -263,8 +263,8 @@ CASES = [
 _COMPARING = {case.rule for case in CASES if case.kind == "on the limit"}
 # Statements that are true, doubtful or missing; none of their cases is a stop.
 _NEVER_STOPS = {"survey-whole", "set-up-same", "circle-closed", "heated-through", "points-signed",
-                "piston-held", "second-survey-proves", "in-order", "every-step-settled", "size-not-taken-hot",
-                *(one.id for one in SURVEY_BLUNDERS)}  # fmt: skip
+                "piston-held", "second-survey-proves", "in-order", "every-step-settled",
+                "size-not-taken-hot", *(one.id for one in SURVEY_BLUNDERS)}  # fmt: skip
 
 
 @pytest.mark.parametrize("case", CASES, ids=lambda case: f"{case.rule}: {case.kind}")
