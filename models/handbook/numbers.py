@@ -183,6 +183,7 @@ NUMBERS: Mapping[str, tuple[str, ...]] = MappingProxyType(
         "nominal_diameter": _READ,
         "diameter": _READ,
         "part_temperature": _READ,
+        "gauge_temperature": _READ,
         "least_allowed": _READ,
         "greatest_allowed": _READ,
         "shear_limit": _READ,
