@@ -11,6 +11,7 @@ from app.pages.desk import DeskPage, FlatLine, Rule, Words, desk_key
 from app.pages.leaves import Leaves
 from app.pages.side_by_side import SideBySide
 from app.pages.table import DeskTable
+from app.pages.worked_leaf import WorkedLeaf
 from app.presenters.inspection import DISPOSITIONS, InspectionPresenter
 from app.presenters.inspection_rows import (
     AmendmentRow,
@@ -26,12 +27,13 @@ from reports.typeface import Weight
 
 __all__ = ["InspectionPage"]
 
-FINDINGS, POINTS, AMENDMENTS, INSTRUMENTS, BESIDE = (
+FINDINGS, POINTS, AMENDMENTS, INSTRUMENTS, BESIDE, WORKED = (
     "Findings",
     "Signatures",
     "Amendments",
     "Instruments",
     "Side by side",
+    "Worked out",
 )
 
 _FINDING_COLUMNS = (
@@ -79,7 +81,7 @@ _INSTRUMENT_COLUMNS = (
 
 
 class InspectionPage(DeskPage):
-    """Five leaves, the findings first."""
+    """Six leaves, the findings first."""
 
     def __init__(
         self, presenter: InspectionPresenter, *, look: Look, parent: QWidget | None = None
@@ -123,12 +125,14 @@ class InspectionPage(DeskPage):
         self.amendments = DeskTable(_AMENDMENT_COLUMNS, name="Amendments", look=self.look)
         self.instruments = DeskTable(_INSTRUMENT_COLUMNS, name="Instruments", look=self.look)
         self.beside = SideBySide(self._presenter, look=self.look)
+        self.worked = WorkedLeaf(lambda: self._presenter.worked, look=self.look)
         for name, leaf in (
             (FINDINGS, self._make_findings()),
             (POINTS, self._make_points()),
             (AMENDMENTS, self.amendments),
             (INSTRUMENTS, self.instruments),
             (BESIDE, self.beside),
+            (WORKED, self.worked),
         ):
             self.leaves.add(name, leaf)
         column.addWidget(self.leaves, 1)
@@ -251,6 +255,7 @@ class InspectionPage(DeskPage):
         self._stack.setCurrentIndex(0 if presenter.view is None else 1)
         self._heading.say(presenter.heading)
         self._summary.say(presenter.summary)
+        self.worked.refresh()
         for table, rows, name in (
             (self.findings, presenter.findings, FINDINGS),
             (self.points, presenter.points, POINTS),

@@ -27,6 +27,7 @@ from app.presenters.inspection_rows import (
     points_of,
 )
 from app.presenters.shop import Said, ShopPresenter
+from app.presenters.worked_rows import WorkedRow, worked_rows
 from models.acts import new_id
 from models.assess import Assessment
 from models.job import Decision, Place, Signature
@@ -76,6 +77,11 @@ class InspectionPresenter(QObject):
     def view(self) -> Assessment | None:
         """The job on the desks, worked out."""
         return self._shop.view
+
+    @property
+    def worked(self) -> tuple[WorkedRow, ...]:
+        """Every number worked out, with what stands behind it."""
+        return worked_rows(self.view) if self.view is not None else ()
 
     @property
     def empty_words(self) -> str:

@@ -6,7 +6,7 @@ from models.handbook import formulas_behind
 from models.rules.rule import Finding, Rule, Value, words_for
 from models.units import UnitSet, number_text
 
-__all__ = ["Reason", "handbook_words", "reasons_of"]
+__all__ = ["Reason", "handbook_words", "reasons_of", "written"]
 
 Reason = tuple[str, str]
 """What it is, and what it says."""
@@ -34,7 +34,7 @@ def reasons_of(finding: Finding, units: UnitSet) -> tuple[Reason, ...]:
     told: list[Reason] = [("rule", rule.statement)]
     for name, value in finding.inputs.items():
         words = words_for(rule.facts, name)
-        told.append((words, _written(value, unit_of.get(name, "-"), units)))
+        told.append((words, written(value, unit_of.get(name, "-"), units)))
     for name, number in finding.computed.items():
         told.append((name.replace("_", " "), number_text(float(number), 6)))
     if finding.limit_origin:
@@ -66,7 +66,23 @@ def handbook_words(rule: Rule) -> str:
     return f"Handbook (Ctrl+H): {rule.id}, edition {rule.edition}{told}"
 
 
-def _written(value: Value, unit: str, units: UnitSet) -> str:
+def written(value: Value, unit: str, units: UnitSet) -> str:
+    """Write a value of SI units as the job writes it, the other units beside.
+
+    Parameters
+    ----------
+    value : float, str, bool or None
+        What is written.
+    unit : str
+        Its SI unit; a dash for none.
+    units : UnitSet
+        How the job writes its numbers.
+
+    Returns
+    -------
+    str
+        In words.
+    """
     if value is None:
         return "not known"
     if isinstance(value, bool):
@@ -78,7 +94,7 @@ def _written(value: Value, unit: str, units: UnitSet) -> str:
         use = "runout" if abs(number) < _SMALL_LENGTH else "diameter"
         return units.both(number, use)
     ways = {"°C": "temperature", "K": "temperature_step", "Pa": "pressure", "°": "angle"}
-    ways |= {"N·m": "torque", "rad/s": "speed", "N": "force"}
+    ways |= {"N·m": "torque", "rad/s": "speed", "N": "force", "kg": "mass", "kg·m": "unbalance"}
     if unit in ways:
         return units.both(number, ways[unit])
     return f"{number:g}" if unit in ("-", "") else f"{number:g} {unit}"
