@@ -19,6 +19,7 @@ from app.pages.handbook import HandbookPage
 from app.pages.inspection import InspectionPage
 from app.pages.jobs import JobsPage
 from app.pages.plan import PlanPage
+from app.pages.register.materials import MaterialsLeaf
 from app.pages.register.page import RegisterPage
 from app.pages.story import StoryPage
 from app.presenters.background import Background
@@ -28,6 +29,7 @@ from app.presenters.handbook import HandbookPresenter
 from app.presenters.inspection import InspectionPresenter
 from app.presenters.jobs import JobsPresenter
 from app.presenters.keys import KeysPresenter
+from app.presenters.materials import MaterialsPresenter
 from app.presenters.plan import PlanPresenter
 from app.presenters.register import RegisterPresenter
 from app.presenters.shop import Said, ShopPresenter
@@ -86,7 +88,9 @@ class Opened:
         window.add_desk("Inspection", InspectionPage(inspection, look=look))
         window.add_desk("Witness", StoryPage(StoryPresenter(self.shop), look=look))
         register = RegisterPresenter(self.shop, self.keys)
-        window.add_desk("Register", RegisterPage(register, look=look))
+        self.materials = MaterialsPresenter(self.shop)
+        leaves = (("Materials", MaterialsLeaf(self.materials, look=look)),)
+        window.add_desk("Register", RegisterPage(register, look=look, more=leaves))
         window.add_desk(HANDBOOK, HandbookPage(HandbookPresenter(), look=look))
         self.backups = BackupsPresenter(
             self.shop,

@@ -7,7 +7,7 @@ from models.engineering.expansion import MeanExpansion
 from models.engineering.materials import MATERIALS, Material, mean_expansion, own_material
 from models.job import OwnMaterial, Plan
 
-__all__ = ["expansion_of", "material_of", "material_problem", "materials_used"]
+__all__ = ["expansion_of", "made_of", "material_of", "material_problem", "materials_used"]
 
 
 def material_of(plan: Plan, name: str | None) -> Material | None:
@@ -18,7 +18,7 @@ def material_of(plan: Plan, name: str | None) -> Material | None:
     if own is None:
         return MATERIALS.get(name)
     try:
-        return _made(own)
+        return made_of(own)
     except OutOfRangeError:
         return None
 
@@ -26,7 +26,7 @@ def material_of(plan: Plan, name: str | None) -> Material | None:
 def material_problem(own: OwnMaterial) -> str | None:
     """Say what keeps a shop's own material from being worked with, if anything does."""
     try:
-        _made(own)
+        made_of(own)
     except OutOfRangeError as trouble:
         return str(trouble)
     return None
@@ -48,7 +48,14 @@ def materials_used(plan: Plan) -> tuple[str, ...]:
 
 
 @lru_cache(maxsize=256)
-def _made(own: OwnMaterial) -> Material:
+def made_of(own: OwnMaterial) -> Material:
+    """Make the material that engineering works with from the numbers as typed.
+
+    Raises
+    ------
+    OutOfRangeError
+        If a number cannot be what it is called.
+    """
     return own_material(
         name=own.name,
         source=own.source,
