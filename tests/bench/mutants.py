@@ -4,26 +4,33 @@ Run it as `python -m tests.bench.mutants models/engineering/fits.py …` (folder
 `--out FILE` keeps a line of JSON for each mutant. It asserts nothing.
 
 Own, since the published tools start a new interpreter for each mutant, some 2 s on top of the
-tests. Here a parent imports the libraries once; each mutant is a forked child that imports the
-program anew with one changed syntax tree and runs the tests that reach the module, stopping at the
-first that fails. Tests by property run with few examples: a mutant found by luck is no merit.
+tests. Here a parent collects the tests that reach a module once; each mutant is a forked child in
+which the module's functions are given the code of one changed syntax tree, and which runs those
+tests, the quickest first, up to the first that fails. Tests by property run with few examples: a
+mutant found by luck is no merit. What a test's table computes when it is loaded stays unchanged.
 """
 
 import argparse
 import ast
 import copy
 import functools
-import importlib.machinery
+import gc
+import importlib
 import io
 import json
 import os
 import signal
 import sys
 import time
-from collections.abc import Iterator
+import types
+from collections.abc import Callable, Iterator
 from contextlib import redirect_stderr, redirect_stdout
 from dataclasses import dataclass
 from pathlib import Path
+from typing import Any
+
+# Threads of the linear algebra do not survive a fork.
+os.environ["OPENBLAS_NUM_THREADS"] = "1"
 
 ROOT = Path(__file__).resolve().parents[2]
 SECONDS = 60
@@ -180,50 +187,168 @@ def tests_of(module: Path) -> list[str]:
     return [*(str(one) for one in near), str(module)]
 
 
-def survives(module: Path, mutant: Mutant, tests: list[str]) -> bool:
-    """Run the tests on a mutant in a child; whether all of them pass."""
+class _Loop:
+    """A plugin in whose place of running tests every mutant has its own child."""
+
+    def __init__(
+        self, module: Path, changed: list[Mutant], say: Callable[[int, str], None]
+    ) -> None:
+        self._module = module
+        self._changed = changed
+        self._say = say
+
+    def pytest_runtestloop(self, session: Any) -> bool:
+        """Run the tests as they stand, then each mutant on the quickest first."""
+        items = _quickest_first(session)
+        if items is None:
+            self._say(-1, "fails")
+            return True
+        for number, mutant in enumerate(self._changed):
+            self._say(
+                number, "lives" if _in_child(lambda m=mutant: self._try(m, items)) else "dies"
+            )
+        return True
+
+    def _try(self, mutant: Mutant, items: list[Any]) -> int:
+        try:
+            _swap(self._module, mutant.tree)
+        except Exception:
+            return 1
+        return next((1 for item in items if not _passes(item)), 0)
+
+
+def _passes(item: Any) -> bool:
+    from _pytest.runner import runtestprotocol
+
+    item._initrequest() if hasattr(item, "_initrequest") else None
+    return all(report.passed for report in runtestprotocol(item, nextitem=None, log=False))
+
+
+def _quickest_first(session: Any) -> list[Any] | None:
+    """Put the tests in order by their time, found in a child; None where one of them fails."""
+    read, write = os.pipe()
+
+    def measure() -> int:
+        for number, item in enumerate(session.items):
+            begun = time.monotonic()
+            if not _passes(item):
+                return 1
+            os.write(write, f"{number} {time.monotonic() - begun:.6f}\n".encode())
+        return 0
+
     child = os.fork()
     if child == 0:
-        os._exit(_run(module, mutant, tests))
+        os.close(read)
+        os._exit(measure())
+    os.close(write)
+    with os.fdopen(read) as told:
+        times = [line.split() for line in told]
+    _, status = os.waitpid(child, 0)
+    if os.waitstatus_to_exitcode(status) != 0:
+        return None
+    order = sorted(times, key=lambda one: float(one[1]))
+    return [session.items[int(number)] for number, _ in order]
+
+
+def _in_child(act: Callable[[], int]) -> bool:
+    """Act in a child; whether it ended well. One without end is noticed by whoever waits."""
+    child = os.fork()
+    if child == 0:
+        os._exit(act())
     begun = time.monotonic()
-    while True:
+    while time.monotonic() - begun < SECONDS:
         done, status = os.waitpid(child, os.WNOHANG)
         if done:
             return os.waitstatus_to_exitcode(status) == 0
-        if time.monotonic() - begun > SECONDS:
-            # A loop without end is noticed by whoever waits.
-            os.kill(child, signal.SIGKILL)
-            os.waitpid(child, 0)
-            return False
-        time.sleep(0.01)
+        time.sleep(0.002)
+    os.kill(child, signal.SIGKILL)
+    os.waitpid(child, 0)
+    return False
 
 
-def _run(module: Path, mutant: Mutant, tests: list[str]) -> int:
+def _swap(path: Path, tree: ast.Module) -> None:
+    """Put a changed module's code into the loaded one, wherever its functions are held."""
+    name = ".".join(path.relative_to(ROOT).with_suffix("").parts)
+    loaded = sys.modules[name]
+    fresh: dict[str, Any] = {"__name__": name, "__file__": str(path)}
+    exec(compile(ast.fix_missing_locations(tree), str(path), "exec"), fresh)
+    holders = [one for key, one in list(sys.modules.items())
+               if key.startswith(("models", "tests"))]  # fmt: skip
+    for key, new in fresh.items():
+        old = vars(loaded).get(key)
+        if key.startswith("__") or _exchange(old, new, name):
+            continue
+        for holder in holders:
+            if vars(holder).get(key, _NOTHING) is old:
+                setattr(holder, key, new)
+    for one in gc.get_objects():
+        if isinstance(one, functools._lru_cache_wrapper):
+            one.cache_clear()
+
+
+_NOTHING = object()
+
+
+def _exchange(old: Any, new: Any, name: str) -> bool:
+    """Give an object new code in place; False where it is a value to be replaced."""
+    old, new = getattr(old, "__wrapped__", old), getattr(new, "__wrapped__", new)
+    if isinstance(old, types.FunctionType) and isinstance(new, types.FunctionType):
+        if new.__module__ == name:
+            old.__code__, old.__defaults__ = new.__code__, new.__defaults__
+            old.__kwdefaults__ = new.__kwdefaults__
+        return True
+    if isinstance(old, type) and isinstance(new, type):
+        if new.__module__ == name:
+            for key, value in list(vars(new).items()):
+                _exchange_member(old, key, value, name)
+        return True
+    return old is new or isinstance(old, types.ModuleType)
+
+
+def _exchange_member(old: type, key: str, new: Any, name: str) -> None:
+    kept = vars(old).get(key)
+    for inner in ("fget", "__func__", "func"):
+        if hasattr(kept, inner) and hasattr(new, inner):
+            _exchange(getattr(kept, inner), getattr(new, inner), name)
+            return
+    if isinstance(kept, types.FunctionType):
+        _exchange(kept, new, name)
+    elif isinstance(new, int | float | str | tuple) and not key.startswith("__"):
+        setattr(old, key, new)
+
+
+def try_all(module: Path, changed: list[Mutant], tests: list[str]) -> Iterator[tuple[int, str]]:
+    """Try mutants in a child that has the tests loaded; numbers as they are done with."""
+    read, write = os.pipe()
+    child = os.fork()
+    if child == 0:
+        os.close(read)
+
+        def say(number: int, word: str) -> None:
+            os.write(write, f"{number} {word}\n".encode())
+
+        _run(module, changed, tests, say)
+        os._exit(0)
+    os.close(write)
+    with os.fdopen(read) as told:
+        for line in told:
+            number, word = line.split()
+            yield int(number), word
+    os.waitpid(child, 0)
+
+
+def _run(
+    module: Path, changed: list[Mutant], tests: list[str], say: Callable[[int, str], None]
+) -> None:
     import pytest
-    from _pytest.assertion.rewrite import AssertionRewritingHook
     from hypothesis import settings
 
     settings.register_profile("few", max_examples=10, derandomize=True, deadline=None)
     settings.load_profile("few")
-    usual = importlib.machinery.SourceFileLoader.get_code
-
-    def get_code(self: importlib.machinery.SourceFileLoader, name: str) -> object:
-        if Path(self.path) == module:
-            return compile(ast.fix_missing_locations(mutant.tree), str(module), "exec")
-        return usual(self, name)
-
-    importlib.machinery.SourceFileLoader.get_code = get_code  # type: ignore[assignment]
-    # What is named to pytest it would load itself, past the change.
-    name = ".".join(module.relative_to(ROOT).with_suffix("").parts)
-    found = AssertionRewritingHook.find_spec
-
-    def find_spec(self: AssertionRewritingHook, wanted: str, *more: object) -> object:
-        return None if wanted == name else found(self, wanted, *more)
-
-    AssertionRewritingHook.find_spec = find_spec
+    importlib.import_module(".".join(module.relative_to(ROOT).with_suffix("").parts))
     said = io.StringIO()
     with redirect_stdout(said), redirect_stderr(said):
-        return int(pytest.main([*_OPTIONS, *tests]))
+        pytest.main([*_OPTIONS, *tests], plugins=[_Loop(module, changed, say)])
 
 
 def main() -> None:
@@ -240,18 +365,15 @@ def main() -> None:
         for one in (sorted(path.rglob("*.py")) if path.is_dir() else [path])
     ]
     for module in files:
-        tests = tests_of(module)
         source = module.read_text(encoding="utf-8")
-        untouched = Mutant(0, "nothing", ast.parse(source))
-        all_of_them = list(mutants(source))
-        if not all_of_them:
-            continue
-        if not survives(module, untouched, tests):
-            sys.stdout.write(f"{module.name}: its tests fail as it stands, or are too slow\n")
-            continue
-        left = 0
-        for mutant in all_of_them:
-            lives = survives(module, mutant, tests)
+        changed = list(mutants(source))
+        left = done = 0
+        for number, word in try_all(module, changed, tests_of(module)) if changed else ():
+            if number < 0:
+                sys.stdout.write(f"{module.name}: its tests fail as it stands\n")
+                break
+            mutant, lives = changed[number], word == "lives"
+            done += 1
             left += lives
             if given.out is not None:
                 row = {"module": module.name, "line": mutant.line, "change": mutant.words}
@@ -261,9 +383,9 @@ def main() -> None:
                 text = source.splitlines()[mutant.line - 1].strip()
                 sys.stdout.write(f"  {module.name}:{mutant.line}  {mutant.words}   {text}\n")
                 sys.stdout.flush()
-        total = len(all_of_them)
-        sys.stdout.write(f"{module.name}: {total} mutants, {total - left} noticed, {left} not\n")
-        sys.stdout.flush()
+        if done:
+            sys.stdout.write(f"{module.name}: {done} mutants, {done - left} noticed, {left} not\n")
+            sys.stdout.flush()
 
 
 if __name__ == "__main__":
