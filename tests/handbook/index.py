@@ -27,7 +27,8 @@ class Module:
 
     def __init__(self, path: Path) -> None:
         self.path = path
-        tree = ast.parse(path.read_text(encoding="utf-8"))
+        self.text = path.read_text(encoding="utf-8").splitlines()
+        tree = ast.parse("\n".join(self.text))
         self.imported: dict[str, str] = {}
         self.local: dict[str, ast.AST] = {}
         self.tests: list[ast.FunctionDef] = []
@@ -182,6 +183,8 @@ def lines() -> set[str]:
             named |= {judges[one] for one in reached if one in judges}
             seconds = {_second(one) for one in reached if one.startswith("tests.second_paths.")}
             tables = {one for one in reached if one.startswith("tests.published.") and rows_of(one)}
+            if _says_second_path(module.text, test):
+                seconds.add(f"{place}::{test.name}")
             for name in named:
                 found.add(f"test\t{name}\t{place}::{test.name}")
                 found |= {f"second path\t{name}\t{one}" for one in seconds}
@@ -191,6 +194,12 @@ def lines() -> set[str]:
                     "\t".join(("row", _table(one), *row)) for one in tables for row in rows_of(one)
                 }
     return found
+
+
+def _says_second_path(lines: list[str], test: ast.FunctionDef) -> bool:
+    """Whether a comment in a test says that it holds a second path of its own."""
+    body = lines[test.lineno - 1 : test.end_lineno]
+    return any("# second path" in line.casefold() for line in body)
 
 
 def _second(path: str) -> str:
