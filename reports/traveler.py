@@ -10,6 +10,7 @@ from models.assess import Assessment
 from reports.back_pages import closing, raw_readings
 from reports.front_pages import bare_shaft, conventions, cover, instruments_and_people, limits
 from reports.page import Foot, build
+from reports.rotor_page import on_its_journals
 from reports.step_pages import step_pages
 
 __all__ = ["render", "write"]
@@ -25,6 +26,7 @@ def _pages(view: Assessment) -> Iterator[Flowable]:
     yield PageBreak()
     yield from limits(view)
     yield from instruments_and_people(view)
+    yield from on_its_journals(view)
     yield PageBreak()
     yield from bare_shaft(view)
     for step in view.job.plan.steps:

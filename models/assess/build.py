@@ -14,7 +14,11 @@ from models.assess.plan_findings import plan_findings
 from models.assess.runout import SurveyRunout, read_survey
 from models.assess.shaft import ShaftView, shaft_view
 from models.assess.stand import StandRepeatability, stand_repeatability
-from models.engineering.high_speed import Reason, reasons_for_high_speed_balance
+from models.engineering.high_speed import (
+    STATED_REASONS,
+    Reason,
+    reasons_for_high_speed_balance,
+)
 from models.job import (
     AnyEntry,
     AttemptOpened,
@@ -89,7 +93,11 @@ class Assessment:
         ]
         bow = stands[-1].bend.of_rotor if stands else None
         critical = self.shaft.critical
-        return reasons_for_high_speed_balance(
+        stated = tuple(
+            Reason(statement=STATED_REASONS[one], value=1.0, threshold=0.0, source="the plan")
+            for one in self.job.plan.rotor.balance_reasons
+        )
+        return stated + reasons_for_high_speed_balance(
             maximum_continuous_speed=speed.si,
             first_critical_speed=critical.speed if critical else None,
             span_over_diameter=self.shaft.span_over_diameter,

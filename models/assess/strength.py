@@ -183,10 +183,12 @@ class FitStrength:
         return "; ".join(part for part in parts if part) + "."
 
     def _grip_words(self) -> str:
-        least = min(land.least_pressure for land in self.lands)
+        least = min(self.lands, key=lambda land: land.least_pressure)
         words = (
-            f"It grips with at least {self.units.both(least, 'pressure')} and friction holds "
+            f"It grips with at least {self.units.both(least.least_pressure, 'pressure')}"
+            f"{self._unsure(least.pressure_uncertainty, 'pressure')} and friction holds "
             f"{self.units.both(self.holding.torque, 'torque')}"
+            f"{self._unsure(self.holding.torque_uncertainty, 'torque')}"
         )
         carried, thrust = self.holding.torque_to_carry, self.holding.thrust
         loads = [] if carried is None else [self.units.show(abs(carried), "torque")]
@@ -218,6 +220,9 @@ class FitStrength:
             f"{self._warm_words()}as a uniform disc it would open between {self._speed(low)} and "
             f"{self._speed(high)}{trip}, an estimate that is not judged"
         )
+
+    def _unsure(self, uncertainty: float | None, use: str) -> str:
+        return "" if uncertainty is None else f" ± {self.units.show(uncertainty, use)}"
 
     def _warm_words(self) -> str:
         running = self.item.running

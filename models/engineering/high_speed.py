@@ -9,6 +9,7 @@ from models.engineering.acceptance import SourcedLimit
 from models.engineering.ranges import demand_not_negative, demand_positive
 
 __all__ = [
+    "STATED_REASONS",
     "USUAL_FORCE_SHARE_AT_SPEED",
     "USUAL_SHAFT_VIBRATION_AT_SPEED",
     "Reason",
@@ -50,6 +51,14 @@ class Reason:
     def speaks(self) -> bool | None:
         """Whether it speaks for a balance at speed; None where nothing is known."""
         return None if self.value is None else self.value > self.threshold
+
+
+STATED_REASONS = {
+    "sensitive": "its owner calls it sensitive: it has shaken before, or others of its kind have",
+    "spare": "it is a spare, which lies for years and must run at once when it is needed",
+    "will not run in its casing first": "it will not run in its casing before it is delivered",
+}
+"""What an owner may state that speaks for a balance at speed: common practice, from memory."""
 
 
 def reasons_for_high_speed_balance(

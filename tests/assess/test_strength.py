@@ -40,7 +40,9 @@ def of_joint(monkeypatch, joint):
     with_material(monkeypatch, modulus=joint["hub_modulus"], poisson=joint["hub_poisson"])
     land = a_land(joint["interface_diameter"] * 1e3, joint["hub_outer_diameter"] * 1e3)
     interference = joint["interference"]
-    return strength(a_plan(), an_item(land), fit(land, interference, interference)).lands[0]
+    bore = joint.get("shaft_bore_diameter", 0.0)
+    plan = a_plan(shaft={"bore": mm(bore * 1e3) if bore else None})
+    return strength(plan, an_item(land), fit(land, interference, interference)).lands[0]
 
 
 @pytest.mark.parametrize("row", ALIKE, ids=lambda row: row.case)

@@ -8,7 +8,7 @@ from app.presenters.bench.state import BenchVerdict
 from app.presenters.reasons import handbook_words
 from models.assess import Attempt, LandFit
 from models.assess.attempts import fit_facts
-from models.assess.attempts.view import DRAW_UP_RULES
+from models.assess.attempts.view import DRAW_UP_RULES, STRENGTH_RULES
 from models.job import Job
 from models.rules import rule
 from models.rules.progress import Act, NextAct
@@ -22,8 +22,13 @@ _CAUSES = (
     "or a burr at the shoulder"
 )
 _RULES_OF: dict[Act, tuple[str, ...]] = {
-    Act.CONFIRM_FURNACE: ("interference-within", "target-below-highest"),
-    Act.DECIDE_FIT: ("sizes-plausible", "seat-larger-than-bore", "interference-within"),
+    Act.CONFIRM_FURNACE: ("interference-within", "target-below-highest", *STRENGTH_RULES),
+    Act.DECIDE_FIT: (
+        "sizes-plausible",
+        "seat-larger-than-bore",
+        "interference-within",
+        *STRENGTH_RULES,
+    ),
     Act.HEAT: ("target-below-highest", "bore-open", "heated-through", "not-overheated"),
     Act.CONFIRM_DOOR: ("bore-open", "heated-through", "not-overheated"),
     Act.MOUNT: ("bore-open", "heated-through"),
@@ -84,10 +89,18 @@ def verdict_at(act: NextAct, attempt: Attempt | None) -> BenchVerdict:
     return BenchVerdict(
         worst.verdict,
         worst.phrase,
-        (worst.message, *(one.message for one in rest[:1])),
+        (worst.message, *(one.message for one in rest[:1]), *_meaning(act, attempt)),
         reasons=reasons_of(findings),
         rules=_rules(worst, findings),
     )
+
+
+def _meaning(act: NextAct, attempt: Attempt) -> tuple[str, ...]:
+    """Say in one sentence what a measured fit does, where the fit is what is looked at."""
+    if act.act not in (Act.CONFIRM_FURNACE, Act.DECIDE_FIT):
+        return ()
+    view = next((one for one in attempt.items if one.item.key == act.item), None)
+    return (view.strength.means,) if view is not None and view.strength is not None else ()
 
 
 def verdict_so_far(so_far: SoFar, due: int, units: UnitSet) -> BenchVerdict:

@@ -27,8 +27,25 @@ from models.job import (
 )
 from models.rules.rule import Finding, Subject, Verdict
 
-__all__ = ["DRAW_UP_RULES", "HOME_RULES", "Attempt", "ItemView", "attempt_subject", "finding_key"]
+__all__ = [
+    "DRAW_UP_RULES",
+    "HOME_RULES",
+    "STRENGTH_RULES",
+    "Attempt",
+    "ItemView",
+    "attempt_subject",
+    "finding_key",
+]
 
+STRENGTH_RULES = (
+    "hub-not-yielding",
+    "seat-not-yielding",
+    "fit-stays-closed-at-trip",
+    "fit-holds-torque",
+    "fit-holds-torque-at-speed",
+    "fit-holds-thrust",
+    "fit-holds-thrust-at-speed",
+)
 HOME_RULES = ("part-seated",)
 DRAW_UP_RULES = (
     "interference-within",
