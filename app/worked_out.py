@@ -7,6 +7,7 @@ from app.worked_out_taper import drawn_up_out
 from models.assess import (
     Assessment,
     Attempt,
+    BalanceView,
     Bend,
     BowUnbalance,
     FitStrength,
@@ -96,6 +97,7 @@ def _attempt(attempt: Attempt) -> dict[str, Any]:
         "step": attempt.step.key,
         "attempt": attempt.number,
         "items": [_item(view) for view in attempt.items],
+        "balance": _balance(attempt.balance),
         "bend": _bend(attempt.bend) if attempt.judged is not None else None,
     }
 
@@ -196,6 +198,23 @@ def _holding(strength: FitStrength) -> dict[str, Any]:
         "release_speed_over_trip [-]": _number(strength.release_over_trip),
         "in words": strength.means,
     }
+
+
+def _balance(view: BalanceView | None) -> list[dict[str, Any]]:
+    if view is None or not view.runs:
+        return []
+    return [
+        {
+            "plane": one.plane.key,
+            "left [kg·m]": _number(None if one.residual is None else abs(one.residual)),
+            "brought_by_the_step [kg·m]": _number(
+                None if one.brought is None else abs(one.brought)
+            ),
+            "may_remain [kg·m]": _number(one.permissible),
+            "mass_at_radius [kg]": _number(one.mass_at_radius),
+        }
+        for one in view.planes
+    ]
 
 
 def _bend(bend: Bend) -> dict[str, Any]:

@@ -366,7 +366,7 @@ class Unbalance(Quantity):
     small_per_si = Decimal(10) ** 9
     units = _table(
         _small("g·mm", "1000", "gmm"),
-        _small("oz·in", "720077.886375", "oz-in"),
+        _small("oz·in", "720077.887375", "oz-in"),
         _small("g·in", "25400"),
         _small("kg·m", "1000000000"),
     )

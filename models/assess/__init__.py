@@ -1,6 +1,7 @@
 """Where jobs and rules meet: one frozen Job, from the record or a file, to facts to findings."""
 
 from models.assess.attempts import Attempt, ItemView, finding_key
+from models.assess.balance import BalanceView, PlaneLeft
 from models.assess.bend import Bend, KinkSeat
 from models.assess.bow_unbalance import BowUnbalance
 from models.assess.build import Assessment, Standing, assess, live_entries
@@ -16,6 +17,7 @@ from models.assess.strength import FitStrength, LandStrength
 __all__ = [
     "Assessment",
     "Attempt",
+    "BalanceView",
     "Bend",
     "BowUnbalance",
     "DrawnUp",
@@ -25,6 +27,7 @@ __all__ = [
     "KinkSeat",
     "LandFit",
     "LandStrength",
+    "PlaneLeft",
     "ShaftView",
     "Sizes",
     "StandRepeatability",

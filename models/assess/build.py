@@ -10,6 +10,7 @@ from models.assess.attempts import (
     finding_key,
     points_open,
 )
+from models.assess.balance import balance_verdict
 from models.assess.plan_findings import plan_findings
 from models.assess.runout import SurveyRunout, read_survey
 from models.assess.shaft import ShaftView, shaft_view
@@ -22,8 +23,10 @@ from models.engineering.high_speed import (
 from models.job import (
     AnyEntry,
     AttemptOpened,
+    BalanceRun,
     Decision,
     Job,
+    JournalsWeighed,
     RunoutSurvey,
     SizeSurvey,
 )
@@ -165,7 +168,11 @@ def _attempts(
     for one in opened:
         mine = [entry for entry in entries if entry.place == one.place]
         baseline = surveys.get(one.baseline or "")
-        yield assess_attempt(job, one, mine, earlier, baseline, bare_shaft)
+        until = entries.index(one)
+        balanced = [
+            entry for entry in entries[:until] if isinstance(entry, BalanceRun | JournalsWeighed)
+        ]
+        yield assess_attempt(job, one, mine, earlier, baseline, bare_shaft, balanced)
 
 
 def _standing(attempts: Sequence[Attempt], final: Iterable[Finding]) -> Iterable[Standing]:
@@ -281,6 +288,7 @@ def _attempt_progress(job: Job, attempt: Attempt) -> AttemptProgress:
         name=f"step {job.plan.step_number(attempt.step.key)}, {attempt.step.title}",
         items=tuple(_item_progress(attempt, index) for index in range(len(attempt.items))),
         survey_due=attempt.step.survey_due,
+        balance=_balance_now(attempt),
         cooling=_cooling_now(attempt) if hot and attempt.step.survey_due else None,
         open_survey=open_surveys[-1].id if open_surveys else None,
         open_purpose=open_surveys[-1].purpose if open_surveys else None,
@@ -290,6 +298,13 @@ def _attempt_progress(job: Job, attempt: Attempt) -> AttemptProgress:
         performed=any(one.meaning == "performed" for one in attempt.signatures),
         points_open=points_open(attempt.step, attempt.signatures),
     )
+
+
+def _balance_now(attempt: Attempt) -> Verdict | None:
+    asked = attempt.plan.balance
+    if asked is None or attempt.step.key not in asked.after_steps:
+        return None
+    return balance_verdict(attempt.findings)
 
 
 def _cooling_now(attempt: Attempt) -> Verdict:

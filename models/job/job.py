@@ -2,6 +2,7 @@
 
 from typing import Literal
 
+from models.job.balance import BalanceCorrection, BalanceRun, JournalsWeighed, TrialRound
 from models.job.base import Frozen
 from models.job.cooling_watch import StationWatched
 from models.job.draw_up import DrawUp
@@ -66,6 +67,10 @@ AnyEntry = (
     | StationWatched
     | Tightening
     | VisualFinding
+    | BalanceCorrection
+    | BalanceRun
+    | JournalsWeighed
+    | TrialRound
 )
 
 

@@ -12,6 +12,8 @@ from typing import ClassVar
 from models.job import (
     AnyEntry,
     AttemptOpened,
+    BalanceCorrection,
+    BalanceRun,
     Cooling,
     Correction,
     DrawUp,
@@ -28,6 +30,7 @@ from models.job import (
     SizeSurvey,
     StationWatched,
     Step,
+    TrialRound,
 )
 from models.jobfile.event_checks import event_faults, standing_faults
 from models.jobfile.faults import MISSING, Fault, Words
@@ -122,6 +125,16 @@ def _clock(place: str, angles: Sequence[Angle], *, required: bool = True) -> Ite
     for index, (before, after) in enumerate(itertools.pairwise(angles), start=1):
         if after.whole <= before.whole:
             yield Fault(f"{place}[{index}]", after.written, f"more than {before.written}")
+
+
+def _plain_number(place: str, text: str) -> Iterator[Fault]:
+    """Ask for a number that is not negative, as a machine shows it."""
+    try:
+        good = float(text) >= 0.0
+    except ValueError:
+        good = False
+    if not good:
+        yield Fault(place, text, "a number of 0 or more, as the machine shows it")
 
 
 def _round_the_clock(place: str, angle: Angle | None) -> Iterator[Fault]:
@@ -371,6 +384,30 @@ class _EntryChecks:
         yield from _known(f"{self.place}.station", entry.station, known, "station")
         yield from _round_the_clock(f"{self.place}.angle", entry.angle)
 
+    def _planes(self, *keys: tuple[str, str]) -> Iterator[Fault]:
+        asked = self.plan.balance if self.plan else None
+        known = [] if asked is None else [asked.first_plane.key, asked.second_plane.key]
+        for place, key in keys:
+            yield from _known(place, key, known, "correction plane")
+
+    def _balance_run(self, entry: BalanceRun) -> Iterator[Fault]:
+        for index, one in enumerate(entry.readings):
+            yield from self._planes((f"{self.place}.readings[{index}].plane", one.plane))
+            yield from _round_the_clock(f"{self.place}.readings[{index}].angle", one.angle)
+
+    def _balance_correction(self, entry: BalanceCorrection) -> Iterator[Fault]:
+        yield from self._planes((f"{self.place}.plane", entry.plane))
+        yield from _round_the_clock(f"{self.place}.angle", entry.angle)
+
+    def _trial_round(self, entry: TrialRound) -> Iterator[Fault]:
+        yield from self._planes((f"{self.place}.plane", entry.plane))
+        for index, one in enumerate(entry.readings):
+            place = f"{self.place}.readings[{index}]"
+            yield from _round_the_clock(f"{place}.angle", one.angle)
+            yield from _plain_number(f"{place}.reading", one.reading)
+        if entry.plain is not None:
+            yield from _plain_number(f"{self.place}.plain", entry.plain)
+
     _OWN: ClassVar[dict[type, Callable[..., Iterator[Fault]]]] = {
         AttemptOpened: _attempt,
         SizeSurvey: _sizes,
@@ -380,6 +417,9 @@ class _EntryChecks:
         Cooling: _cooling,
         Settled: _settled,
         DrawUp: _drawn_up,
+        BalanceRun: _balance_run,
+        BalanceCorrection: _balance_correction,
+        TrialRound: _trial_round,
         StationWatched: _watched,
     }
 

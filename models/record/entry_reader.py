@@ -11,6 +11,7 @@ from models.job import (
     Advance,
     AnyEntry,
     AttemptOpened,
+    BalanceRun,
     Check,
     Confirmation,
     Cooling,
@@ -21,10 +22,13 @@ from models.job import (
     Heating,
     Hot,
     Place,
+    PlaneReading,
     Question,
     RunoutSurvey,
     SizeSurvey,
     StationReadings,
+    TrialReading,
+    TrialRound,
     Warmth,
 )
 from models.record import tables
@@ -44,6 +48,8 @@ _PARTS: tuple[type[Base], ...] = (
     tables.SurveyPosition,
     tables.RunoutStation,
     tables.DrawUpAdvance,
+    tables.BalanceReading,
+    tables.TrialReading,
     tables.BroughtCorrection,
 )
 
@@ -77,6 +83,14 @@ class EntryReader:
         elif kind is Confirmation:
             given["checks"] = tuple(
                 struct_from(Check, part) for part in self._parts[tables.ConfirmationCheck][key]
+            )
+        elif kind is BalanceRun:
+            given["readings"] = tuple(
+                struct_from(PlaneReading, part) for part in self._parts[tables.BalanceReading][key]
+            )
+        elif kind is TrialRound:
+            given["readings"] = tuple(
+                struct_from(TrialReading, part) for part in self._parts[tables.TrialReading][key]
             )
         elif kind is DrawUp:
             given["advances"] = tuple(

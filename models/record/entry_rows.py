@@ -10,6 +10,8 @@ from models.job import (
     Attachment,
     AttemptOpened,
     AxialMeasured,
+    BalanceCorrection,
+    BalanceRun,
     Confirmation,
     Cooling,
     Correction,
@@ -19,6 +21,7 @@ from models.job import (
     Handling,
     Heating,
     Hot,
+    JournalsWeighed,
     Mount,
     Note,
     OutsideOperation,
@@ -34,6 +37,7 @@ from models.job import (
     StationReadings,
     StationWatched,
     Tightening,
+    TrialRound,
     VisualFinding,
     Warmth,
 )
@@ -72,6 +76,10 @@ COMMON = (
 )
 
 DETAILS: dict[type[AnyEntry], type[Base]] = {
+    BalanceCorrection: tables.BalanceCorrection,
+    BalanceRun: tables.BalanceRun,
+    JournalsWeighed: tables.JournalsWeighed,
+    TrialRound: tables.TrialRound,
     Attachment: tables.Attachment,
     AttemptOpened: tables.Attempt,
     AxialMeasured: tables.AxialPosition,
@@ -97,6 +105,8 @@ DETAILS: dict[type[AnyEntry], type[Base]] = {
 
 # Fields of each kind that stand in tables of their own.
 LEFT_OUT: dict[type[AnyEntry], tuple[str, ...]] = {
+    BalanceRun: ("readings",),
+    TrialRound: ("readings",),
     AttemptOpened: ("components",),
     Confirmation: ("checks",),
     Cooling: ("temperatures", "corrections"),
@@ -218,6 +228,14 @@ def _parts(entry: AnyEntry) -> Iterator[Line]:
     elif isinstance(entry, Confirmation):
         yield from _numbered(
             entry.id, tables.ConfirmationCheck, [columns_of(check) for check in entry.checks]
+        )
+    elif isinstance(entry, BalanceRun):
+        yield from _numbered(
+            entry.id, tables.BalanceReading, [columns_of(one) for one in entry.readings]
+        )
+    elif isinstance(entry, TrialRound):
+        yield from _numbered(
+            entry.id, tables.TrialReading, [columns_of(one) for one in entry.readings]
         )
     elif isinstance(entry, DrawUp):
         yield from _numbered(

@@ -19,11 +19,14 @@ from models.units import (
     Duration,
     Expansion,
     Length,
+    Mass,
     Pressure,
     Quantity,
     Ratio,
+    Speed,
     Temperature,
     Torque,
+    Unbalance,
 )
 
 __all__ = ["Cell", "Row", "columns_of", "quantity_columns", "quantity_from", "struct_from"]
@@ -42,9 +45,13 @@ _ENDINGS: dict[type[Quantity], str] = {
     Ratio: "ppm",
     Duration: "ms",
     Torque: "mnm",
+    Unbalance: "ugm",
+    Speed: "mrpm",
+    Mass: "mg",
 }
 # Field names that would be unclear, or words of SQL, as names of columns.
 _RENAMED = {
+    "allowed_by": "allowed_by_person",
     "by": "by_person",
     "order": "order_words",
     "plan": "plan_revision",

@@ -1,6 +1,7 @@
 """Judgements on plain facts: every rule, in the order people read them."""
 
 from models.rules import (
+    balance,
     blunders,
     cold,
     draw_up,
@@ -28,6 +29,7 @@ ALL_RULES: tuple[Rule, ...] = (
     *cold.RULES,
     *runout.RULES,
     *blunders.RULES,
+    *balance.RULES,
     *people.RULES,
 )
 

@@ -56,6 +56,7 @@ class Act(Enum):
     SURVEY = "survey the runout"
     SURVEY_SEAT = "survey the bare seat"
     REMOVE = "remove"
+    BALANCE = "balance"
     SETTLE = "settle"
     SIGN = "sign"
     NOTHING = "nothing"
@@ -89,6 +90,7 @@ class AttemptProgress:
     number: int
     items: tuple[ItemProgress, ...]
     survey_due: bool = True
+    balance: Verdict | None = None
     cooling: Verdict | None = None
     open_survey: str | None = None
     open_purpose: str | None = None
@@ -310,6 +312,8 @@ def _may_on_attempt(attempt: AttemptProgress, act: Act) -> Permission:
             return _no("remount-required", f"S{where[1:]} is outside its limits.")
         if attempt.verdict is not Verdict.WITHIN:
             return _no("not-judged-within", f"Nothing says that {where} is within its limits.")
+        if attempt.balance not in (None, Verdict.WITHIN):
+            return _no("not-balanced", f"The plan asks for balance after {where}.")
         return _YES
     waiting = [item for item in attempt.items if not item.mounted]
     if waiting:
@@ -392,7 +396,16 @@ def _next_in(attempt: AttemptProgress) -> NextAct:
             else "Read again: the last survey does not settle it."
         )
         return to(Stage.RUNOUT, Act.SURVEY, words, purpose=purpose)
+    if attempt.balance not in (None, Verdict.WITHIN):
+        return to(Stage.BALANCE, Act.BALANCE, _words_of_balance(attempt.balance))
     return to(Stage.SETTLED, Act.SETTLE, "Within limits: settle the step.")
+
+
+def _words_of_balance(verdict: Verdict | None) -> str:
+    return {
+        Verdict.OUTSIDE: "More unbalance is left than may remain: correct it and run again.",
+        Verdict.CANNOT_TELL: "The balance cannot be closed yet: weigh the journals or read again.",
+    }.get(verdict or Verdict.NOT_JUDGED, "Balance the rotor as it is now.")
 
 
 def _next_of_item(item: ItemProgress, to: _To) -> NextAct | None:

@@ -8,6 +8,7 @@ from models.assess import Assessment, Attempt
 from models.job import Step
 from reports.page import EvenPage, NowAt
 from reports.step_pages.afterwards import cooling, corrections, removals, signature_boxes
+from reports.step_pages.balance import balance
 from reports.step_pages.ending import ending, heading
 from reports.step_pages.mounting import on_the_shaft
 from reports.step_pages.runout import what_the_shaft_did
@@ -47,6 +48,7 @@ def _what_was_done(
             yield from sizes(job, item.name, pair, views)
         yield from on_the_shaft(job, item, pair, views)
     yield from cooling(job, pair)
+    yield from balance(job, pair)
     yield from removals(job, pair)
     yield from corrections(job, pair)
     if is_last:

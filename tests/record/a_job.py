@@ -5,6 +5,9 @@ from models.job import (
     AnyEntry,
     AttemptOpened,
     AxialMeasured,
+    BalanceCorrection,
+    BalancePlan,
+    BalanceRun,
     Calibration,
     Check,
     Component,
@@ -12,6 +15,7 @@ from models.job import (
     Cooling,
     CoolingLimits,
     Correction,
+    CorrectionPlane,
     Decision,
     DrawUp,
     ExpansionAt,
@@ -22,6 +26,7 @@ from models.job import (
     Instrument,
     Item,
     Job,
+    JournalsWeighed,
     Land,
     LengthLimit,
     ModulusAt,
@@ -33,6 +38,7 @@ from models.job import (
     Person,
     Place,
     Plan,
+    PlaneReading,
     Question,
     Removal,
     Rotor,
@@ -50,6 +56,8 @@ from models.job import (
     Step,
     StoredVerdict,
     TemperatureLimit,
+    TrialReading,
+    TrialRound,
     Warmth,
 )
 from models.units import (
@@ -60,11 +68,14 @@ from models.units import (
     Expansion,
     HeatCapacity,
     Length,
+    Mass,
     Pressure,
     Ratio,
+    Speed,
     Temperature,
     TemperatureStep,
     Torque,
+    Unbalance,
 )
 from tests.record.things import FOUND_OUT, NUMBERED, entries_beside
 
@@ -191,6 +202,18 @@ def a_plan(revision: str = "A", reason: str = "first issue") -> Plan:
             agreement=Length.read("2.5", "µm"),
             time_constant_hours=1.75,
             origin=DRAWING,
+        ),
+        balance=BalancePlan(
+            first_plane=CorrectionPlane(
+                key="P1", name="plane 1", position=mm("100"), radius=mm("150")
+            ),
+            second_plane=CorrectionPlane(
+                key="P2", name="plane 2", position=mm("800"), radius=mm("150")
+            ),
+            limit="grade",
+            grade=2.5,
+            origin=DRAWING,
+            after_steps=("one",),
         ),
         smoothing_factor=0.1,
         materials=(FORGING,),
@@ -349,6 +372,42 @@ def entries() -> tuple[AnyEntry, ...]:
                 Warmth(position=mm("450"), angle=ANGLES[0], temperature=celsius("21")),
                 Warmth(position=mm("450"), angle=ANGLES[2], temperature=celsius("21.5")),
             ),
+        ),
+        BalanceRun(
+            **common("balanced", one, 84),
+            purpose="as found",
+            speed=Speed.read("600 r/min"),
+            instrument="DI-3",
+            readings=(
+                PlaneReading(plane="P1", amount=Unbalance.read("31 g·mm"), angle=ANGLES[1]),
+                PlaneReading(plane="P2", amount=Unbalance.read("0.05 oz·in"), angle=ANGLES[2]),
+            ),
+        ),
+        BalanceCorrection(
+            **common("corrected", one, 84),
+            plane="P1",
+            angle=ANGLES[3],
+            amount=Unbalance.read("30 g·mm"),
+            how="ground",
+            item="w1",
+            allowed_by="ivo",
+        ),
+        TrialRound(
+            **common("round", one, 84),
+            plane="P2",
+            trial=Unbalance.read("40 g·mm"),
+            instrument="DI-3",
+            readings=tuple(
+                TrialReading(angle=angle, reading=shown)
+                for angle, shown in zip(ANGLES, ("7", "5", "1", "5"), strict=True)
+            ),
+            plain="3",
+        ),
+        JournalsWeighed(
+            **common("weighed", one, 84),
+            first=Mass.read("41.2 kg"),
+            second=Mass.read("88 lb"),
+            instrument="DI-3",
         ),
         StationWatched(
             **common("watched", one, 82),

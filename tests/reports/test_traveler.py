@@ -17,6 +17,8 @@ from models.job import AnyEntry, Head, Job, StationReadings
 from models.units import Angle
 from reports import traveler
 from sample_data.load import compressor, pump
+from tests.assess.test_balance import job as balanced
+from tests.assess.test_balance import run, weighed
 
 MILLIMETRE = 72.0 / 25.4
 
@@ -294,3 +296,12 @@ def test_a_failing_traveler_leaves_the_old_one_alone(
 
     assert path.read_bytes() == b"the old one"
     assert [one.name for one in tmp_path.iterdir()] == ["a.pdf"]
+
+
+def test_balance_stands_beside_its_limit_with_what_the_part_brought() -> None:
+    paper = Paper(balanced(weighed(), run("one", 20e-6 + 0j, 10e-6j)))
+
+    assert "Balance, attempt 1" in paper.words
+    assert "as found 600 r/min" in paper.words
+    assert "20.000 at 0.000°" in paper.words
+    assert "journal loads weighed" in paper.words

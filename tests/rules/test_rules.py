@@ -23,7 +23,7 @@ from models.rules.facts import (
     SurveyFacts,
 )
 from models.rules.rule import Subject, Verdict
-from tests.rules import blunder_cases, cold_cases, draw_up_cases, strength_cases
+from tests.rules import balance_cases, blunder_cases, cold_cases, draw_up_cases, strength_cases
 
 IN, OUT, DOUBT, UNKNOWN = Verdict.WITHIN, Verdict.OUTSIDE, Verdict.CANNOT_TELL, Verdict.NOT_JUDGED
 UM = 1e-6
@@ -106,6 +106,7 @@ GOOD: dict[type, Any] = {
     **draw_up_cases.GOOD,
     **cold_cases.GOOD,
     **blunder_cases.GOOD,
+    **balance_cases.GOOD,
 }
 
 
@@ -257,6 +258,7 @@ CASES = [
     *(Case(*row) for row in draw_up_cases.CASES),
     *(Case(*row) for row in cold_cases.CASES),
     *(Case(*row) for row in blunder_cases.CASES),
+    *(Case(*row) for row in balance_cases.CASES),
 ]  # fmt: skip
 
 # Rules that compare a number with a limit, and so need a case exactly on it.
@@ -264,7 +266,8 @@ _COMPARING = {case.rule for case in CASES if case.kind == "on the limit"}
 # Statements that are true, doubtful or missing; none of their cases is a stop.
 _NEVER_STOPS = {"survey-whole", "set-up-same", "circle-closed", "heated-through", "points-signed",
                 "piston-held", "second-survey-proves", "in-order", "every-step-settled",
-                "size-not-taken-hot", *(one.id for one in SURVEY_BLUNDERS)}  # fmt: skip
+                "balance-done", "size-not-taken-hot",
+                *(one.id for one in SURVEY_BLUNDERS)}  # fmt: skip
 
 
 @pytest.mark.parametrize("case", CASES, ids=lambda case: f"{case.rule}: {case.kind}")

@@ -28,6 +28,12 @@ _BY_ACT: dict[Act, tuple[str, ...]] = {
     Act.SURVEY: (_TURN, _RULES),
     Act.SURVEY_BARE_SHAFT: (_TURN, _RULES),
     Act.SURVEY_SEAT: (_TURN, _RULES),
+    Act.BALANCE: (
+        "The rotor turns at speed: guards closed, nobody in the plane of the parts, weights "
+        "secured before each start.",
+        _LIFT,
+        _RULES,
+    ),
     Act.REMOVE: (
         "It may let go suddenly: stand clear along the shaft, keep it held by its own weight only.",
         _HOT,

@@ -10,6 +10,7 @@ from models.assess.attempts.on_people import people_findings
 from models.assess.attempts.on_runout import runout_findings
 from models.assess.attempts.on_sizes import size_findings
 from models.assess.attempts.view import Attempt, attempt_subject
+from models.assess.balance import balance_findings
 from models.assess.strength_findings import strength_findings
 from models.job import Job
 from models.rules import rule
@@ -32,4 +33,13 @@ def attempt_findings(job: Job, attempt: Attempt) -> Iterable[Finding]:
         yield rule("may-be-read").apply(cool_facts(job, attempt), subject)
     yield from cold_findings(job, attempt)
     yield from runout_findings(job, attempt)
+    if attempt.balance is not None:
+        asked = attempt.plan.balance
+        yield from balance_findings(
+            attempt.balance,
+            where=f"after {attempt.step.title}",
+            due=asked is not None and attempt.step.key in asked.after_steps,
+            new_parts=[one.item.key for one in attempt.items],
+            subject=attempt_subject(attempt),
+        )
     yield from people_findings(job, attempt)

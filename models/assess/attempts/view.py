@@ -3,6 +3,7 @@
 from dataclasses import dataclass
 from functools import cached_property
 
+from models.assess.balance import BalanceView
 from models.assess.bend import Bend, bend_of
 from models.assess.draw_up import DrawnUp
 from models.assess.heat import Heat
@@ -99,6 +100,8 @@ class Attempt:
     drift: tuple[StationChange, ...]
     settled: Settled | None
     signatures: tuple[Signature, ...]
+    # None where the plan asks for no balance at all.
+    balance: BalanceView | None
     # Given for an earlier state: something was recorded or corrected since.
     signatures_before: tuple[Signature, ...]
     decisions: tuple[Decision, ...]

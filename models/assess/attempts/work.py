@@ -6,6 +6,7 @@ from functools import lru_cache
 
 from models.assess.attempts.findings import attempt_findings
 from models.assess.attempts.view import Attempt, ItemView
+from models.assess.balance import balance_view
 from models.assess.draw_up import drawn_up, taper_fits
 from models.assess.ground import Ground, ground_of
 from models.assess.heat import item_heat
@@ -40,6 +41,7 @@ def assess_attempt(
     earlier_sizes: Sequence[SizeSurvey],
     baseline: RunoutSurvey | None,
     bare_shaft: RunoutSurvey | None,
+    earlier_balance: Sequence[AnyEntry] = (),
 ) -> Attempt:
     """Sort, work out and judge one attempt.
 
@@ -48,7 +50,13 @@ def assess_attempt(
     """
     ground = ground_of(job)
     return _assess_attempt(
-        ground, opened, tuple(entries), tuple(earlier_sizes), baseline, bare_shaft
+        ground,
+        opened,
+        tuple(entries),
+        tuple(earlier_sizes),
+        baseline,
+        bare_shaft,
+        tuple(earlier_balance),
     )
 
 
@@ -60,6 +68,7 @@ def _assess_attempt(
     earlier_sizes: tuple[SizeSurvey, ...],
     named_baseline: RunoutSurvey | None,
     bare_shaft: RunoutSurvey | None,
+    earlier_balance: tuple[AnyEntry, ...],
 ) -> Attempt:
     job = ground.job
     step = job.plan.step(opened.place.step or "")
@@ -93,6 +102,7 @@ def _assess_attempt(
         drift=compare_surveys(job, bare, judged) if bare and judged else (),
         settled=settled[-1] if settled else None,
         signatures=signed_now,
+        balance=balance_view(job, entries, earlier_balance),
         signatures_before=signed_before,
         decisions=tuple(one for one in entries if isinstance(one, Decision)),
         findings=(),

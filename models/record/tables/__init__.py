@@ -4,6 +4,7 @@ from sqlalchemy import CheckConstraint, Table
 
 from models.record.tables.assembly import *  # noqa: F403
 from models.record.tables.backups import *  # noqa: F403
+from models.record.tables.balance import *  # noqa: F403
 from models.record.tables.base import SMALL_UNITS, Base
 from models.record.tables.chains import *  # noqa: F403
 from models.record.tables.entries import *  # noqa: F403

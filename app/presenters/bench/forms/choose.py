@@ -2,6 +2,7 @@
 
 from collections.abc import Callable
 
+from app.presenters.bench.forms.balancing import balance_form
 from app.presenters.bench.forms.confirming import confirmation_form
 from app.presenters.bench.forms.cooling import cooling_form
 from app.presenters.bench.forms.drawing_up import draw_up_form
@@ -32,5 +33,7 @@ def form_for(bench: Bench, act: NextAct, attempt: Attempt | None) -> Form | None
     }
     if act.act is Act.COOL:
         return cooling_form(bench, act, attempt)
+    if act.act is Act.BALANCE:
+        return balance_form(bench, act, attempt)
     maker = on_item.get(act.act)
     return maker(bench, act, item) if maker is not None and item is not None else None

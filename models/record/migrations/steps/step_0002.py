@@ -5,6 +5,7 @@ from collections.abc import Callable
 from models.record.migrations.form_2 import (
     assembly,
     backups,
+    balance,
     carried,
     events,
     keys,
@@ -26,6 +27,7 @@ _LAID: tuple[Callable[[], None], ...] = (
     backups.lay,
     events.lay,
     carried.lay,
+    balance.lay,
 )
 
 
