@@ -16,6 +16,10 @@ _SPREAD = ("uncertainty.combined_uncertainty",)
 _INTERFERENCE = ("sizes.interference", "sizes.diameter_at_reference", "sizes.summarise_sizes")
 _KINK = ("one_kink.fit_one_kink",)
 _BOW = ("bow_shape.unbalance_of_bow",)
+_BY_GRADE = (
+    "balance_limits.permissible_residual_of_grade",
+    "balance_limits.allocate_between_bearings",
+)
 _MAY_REMAIN = ("balance_limits.permissible_residual",)
 _CHANGE = ("mount_change.change_at_stations", "harmonics.fit_harmonics", "survey_fit.fit_survey",
            "datum.journal_datum")  # fmt: skip
@@ -160,7 +164,16 @@ NUMBERS: Mapping[str, tuple[str, ...]] = MappingProxyType(
         "may_remain_at_second_journal": _MAY_REMAIN,
         "over_what_may_remain": (*_BOW, *_MAY_REMAIN),
         "greatest_drift_tir": ("mount_change.drift",),
+        # Balance.
+        "permissible": (*_MAY_REMAIN, *_BY_GRADE),
+        "may_remain": (*_MAY_REMAIN, *_BY_GRADE),
+        "brought_by_the_step": ("balance.stage_contribution",),
+        "mass_at_radius": ("balance.mass_to_add",),
+        "smaller": ("residual.residual_from_amplitudes", "residual.root_by_plain_reading"),
+        "larger": ("residual.residual_from_amplitudes", "residual.root_by_plain_reading"),
         # Read, or set by the plan: no formula stands behind these.
+        "residual": _READ,
+        "left": _READ,
         "speed": _READ,
         "taper": _READ,
         "least_advance": _READ,
