@@ -5,6 +5,7 @@ from collections.abc import Iterator
 from reportlab.platypus import Flowable
 
 from models.assess import Assessment
+from models.assess.torque import SeatShear
 from models.units import unit_set
 from reports.parts import Cell, gap, head, note, table, text, words
 
@@ -17,7 +18,7 @@ def on_its_journals(view: Assessment) -> Iterator[Flowable]:
     yield head("The rotor on its journals", "worked out from the plan; nothing here was weighed")
     for sentence in view.shaft.sentences:
         yield text(words(sentence))
-    shears = [one for one in view.shaft.shears if one.torque > 0.0]
+    shears = _worst_of_each_stretch(view)
     if shears:
         limit = view.job.plan.shaft.shear_limit
         rows: list[list[Cell]] = [
@@ -44,8 +45,8 @@ def on_its_journals(view: Assessment) -> Iterator[Flowable]:
         named = "the plan gives no limit of shear" if limit is None else limit.origin.words
         yield note(
             words(
-                "From the free end to the coupling; T = P/ω, shear 16 T d/(π (d⁴ − b⁴)), Shigley, "
-                f"9th ed., 3-12, from memory; {named}."
+                "Worst seat of each stretch, from the free end to the coupling; T = P/ω, shear "
+                f"16 T d/(π (d⁴ − b⁴)), Shigley, 9th ed., 3-12, from memory; {named}."
             )
         )
     reasons = [one for one in view.reasons_for_speed if one.speaks]
@@ -53,3 +54,13 @@ def on_its_journals(view: Assessment) -> Iterator[Flowable]:
         listed = "; ".join(f"{one.statement} ({one.source})" for one in reasons)
         yield gap(1)
         yield text(words(f"For a balance at speed speaks: {listed}."))
+
+
+def _worst_of_each_stretch(view: Assessment) -> list[SeatShear]:
+    """Keep the most sheared seat of every stretch over which the shaft carries one torque."""
+    worst: dict[float, SeatShear] = {}
+    for one in view.shaft.shears:
+        stretch = round(one.torque, 3)
+        if stretch > 0.0 and (stretch not in worst or one.shear > worst[stretch].shear):
+            worst[stretch] = one
+    return list(worst.values())

@@ -26,9 +26,9 @@ def _pages(view: Assessment) -> Iterator[Flowable]:
     yield PageBreak()
     yield from limits(view)
     yield from instruments_and_people(view)
-    yield from on_its_journals(view)
     yield PageBreak()
     yield from bare_shaft(view)
+    yield from on_its_journals(view)
     for step in view.job.plan.steps:
         yield from step_pages(view, step)
     yield from closing(view)
