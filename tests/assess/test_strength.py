@@ -26,6 +26,7 @@ from tests.published.rotation import TIP_SPEEDS
 
 ALIKE = [row for row in PRESSURES if row.joint["hub_modulus"] == row.joint["shaft_modulus"]
          and row.joint["hub_poisson"] == row.joint["shaft_poisson"]
+         and row.joint["shaft_bore_diameter"] == 0.0
          and row.joint["interface_diameter"] < 1.0]  # fmt: skip
 COUPLING_HUB = next(row for row in PRESSURES if row.case.startswith("coupling hub 150/250"))
 
