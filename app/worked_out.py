@@ -46,6 +46,16 @@ def worked_out(view: Assessment) -> dict[str, Any]:
             "vector_uncertainty [m]": _number(stand.found.vector_uncertainty),
             "in words": stand.sentence,
         },
+        "index_tests": [
+            {
+                "step": one.step,
+                "station": one.station,
+                "turns_with_the_part_tir [m]": _number(2.0 * abs(one.shares.part)),
+                "stays_with_the_seat_tir [m]": _number(2.0 * abs(one.shares.seat)),
+                "in words": one.sentence,
+            }
+            for one in view.index_tests
+        ],
         "attempts": [_attempt(one) for one in view.attempts],
         "lacks": list(lacks(view.job)),
     }

@@ -7,6 +7,7 @@ from models.assess.bow_unbalance import BowUnbalance
 from models.assess.build import Assessment, Standing, assess, live_entries
 from models.assess.draw_up import DrawnUp
 from models.assess.heat import Heat, land_gauge
+from models.assess.index import IndexView
 from models.assess.lacks import lacks
 from models.assess.runout import StationChange, StationRunout, SurveyRunout
 from models.assess.shaft import ShaftView
@@ -23,6 +24,7 @@ __all__ = [
     "DrawnUp",
     "FitStrength",
     "Heat",
+    "IndexView",
     "ItemView",
     "KinkSeat",
     "LandFit",

@@ -1,6 +1,6 @@
 """A whole job, worked out and judged: attempts, findings, and how far the build is."""
 
-from collections.abc import Iterable, Sequence
+from collections.abc import Iterable, Mapping, Sequence
 from dataclasses import dataclass
 from functools import cached_property
 
@@ -11,6 +11,7 @@ from models.assess.attempts import (
     points_open,
 )
 from models.assess.balance import balance_verdict
+from models.assess.index import IndexView, index_views
 from models.assess.plan_findings import plan_findings
 from models.assess.runout import SurveyRunout, read_survey
 from models.assess.shaft import ShaftView, shaft_view
@@ -31,7 +32,7 @@ from models.job import (
     SizeSurvey,
 )
 from models.rules import rule
-from models.rules.facts import FinalFacts, ProgressFacts
+from models.rules.facts import FinalFacts, ProgressFacts, StandFacts
 from models.rules.progress import (
     AttemptProgress,
     BuildProgress,
@@ -82,6 +83,11 @@ class Assessment:
     def stand(self) -> StandRepeatability | None:
         """What the stand repeats, from surveys between which nothing was touched."""
         return stand_repeatability(self.job.plan, live_entries(self.job), self.surveys)
+
+    @cached_property
+    def index_tests(self) -> tuple[IndexView, ...]:
+        """What parts mounted half a turn apart say of part and seat."""
+        return index_views(self.attempts)
 
     @cached_property
     def reasons_for_speed(self) -> tuple[Reason, ...]:
@@ -141,7 +147,11 @@ def assess(job: Job) -> Assessment:
     ]
     bare_shaft = bare[-1] if bare else None
     attempts = tuple(_attempts(job, entries, bare_shaft.entry if bare_shaft else None))
-    of_job = (*plan_findings(job.plan), *_final_findings(job, attempts))
+    of_job = (
+        *plan_findings(job.plan),
+        *_stand_findings(job, entries, surveys),
+        *_final_findings(job, attempts),
+    )
     findings = tuple(_standing(attempts, of_job))
     progress = _progress(job, entries, attempts, bare_shaft)
     return Assessment(
@@ -196,6 +206,20 @@ def _answer(attempt: Attempt, finding: Finding, came_off: bool) -> str | None:
     if came_off and finding.rule.id != "seat-came-back":
         return f"attempt {attempt.number} came off"
     return None
+
+
+def _stand_findings(
+    job: Job, entries: Sequence[AnyEntry], surveys: Mapping[str, SurveyRunout]
+) -> Iterable[Finding]:
+    """Compare the plan's finest limit with what the stand can see, once it has shown that."""
+    found = stand_repeatability(job.plan, entries, surveys)
+    if found is not None and found.finest_limit is not None:
+        facts = StandFacts(
+            units=unit_set(job.plan.rotor.units),
+            visible_change=found.found.visible_change_tir,
+            finest_limit=found.finest_limit,
+        )
+        yield rule("stand-sees-limit").apply(facts, Subject())
 
 
 def _final_findings(job: Job, attempts: Sequence[Attempt]) -> Iterable[Finding]:

@@ -164,6 +164,10 @@ NUMBERS: Mapping[str, tuple[str, ...]] = MappingProxyType(
         "may_remain_at_second_journal": _MAY_REMAIN,
         "over_what_may_remain": (*_BOW, *_MAY_REMAIN),
         "greatest_drift_tir": ("mount_change.drift",),
+        # The stand, and a part mounted half a turn apart.
+        "visible_change": ("same_state.repeatability",),
+        "turns_with_the_part_tir": ("same_state.index_test",),
+        "stays_with_the_seat_tir": ("same_state.index_test",),
         # Balance.
         "permissible": (*_MAY_REMAIN, *_BY_GRADE),
         "may_remain": (*_MAY_REMAIN, *_BY_GRADE),
@@ -173,6 +177,7 @@ NUMBERS: Mapping[str, tuple[str, ...]] = MappingProxyType(
         "larger": ("residual.residual_from_amplitudes", "residual.root_by_plain_reading"),
         # Read, or set by the plan: no formula stands behind these.
         "residual": _READ,
+        "finest_limit": _READ,
         "left": _READ,
         "speed": _READ,
         "taper": _READ,

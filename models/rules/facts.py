@@ -20,6 +20,7 @@ __all__ = [
     "PeopleFacts",
     "ProgressFacts",
     "SizeFacts",
+    "StandFacts",
     "StationFacts",
     "SurveyFacts",
 ]
@@ -153,6 +154,15 @@ class StationFacts:
     limit: float | None = known("the limit of change", "m")
     proved: bool | None = known("the plan's decision rule")
     limit_origin: str | None = known("the limit's origin")
+
+
+@dataclass(frozen=True, kw_only=True)
+class StandFacts:
+    """What a stand can see, beside the finest limit that is judged on it."""
+
+    units: UnitSet = metric_set
+    visible_change: float | None = known("two surveys with nothing touched between", "m")
+    finest_limit: float | None = known("a change limit", "m")
 
 
 @dataclass(frozen=True, kw_only=True)

@@ -1,7 +1,7 @@
 """Judgements on runout surveys and on what a mount moved."""
 
 from models.rules.compare import LENGTH_STEP, at_most
-from models.rules.facts import ClosureFacts, FinalFacts, StationFacts, SurveyFacts
+from models.rules.facts import ClosureFacts, FinalFacts, StandFacts, StationFacts, SurveyFacts
 from models.rules.rule import Judgement, Rule, Verdict
 from models.units import UnitSet
 
@@ -182,6 +182,22 @@ def seat_came_back(
     return Judgement(verdict, f"{words}: the shaft took a set. An engineer decides.")
 
 
+def stand_sees_the_limit(
+    *, units: UnitSet, visible_change: float, finest_limit: float
+) -> Judgement:
+    """Ask whether the stand repeats itself well enough for the plan's finest limit."""
+    verdict = at_most(visible_change, finest_limit, resolution=LENGTH_STEP)
+    words = (
+        f"This stand sees a change of {units.both(visible_change, 'runout')} TIR, the plan's "
+        f"finest limit is {units.show(finest_limit, 'runout')}"
+    )
+    if verdict is Verdict.WITHIN:
+        return Judgement(verdict, f"{words}.")
+    return Judgement(
+        Verdict.CANNOT_TELL, f"{words}: tell the planner, or find what keeps it from repeating."
+    )
+
+
 def final_runout_is_within(
     *,
     units: UnitSet,
@@ -251,6 +267,14 @@ RULES = (
         source="the plan's change limit",
         facts=StationFacts,
         judge=seat_came_back,
+    ),
+    Rule(
+        id="stand-sees-limit",
+        statement="The stand repeats itself well enough to judge the plan's finest limit.",
+        source="JCGM 106:2012: a limit finer than the uncertainty cannot be judged; repeatability "
+        "from the job's own surveys",
+        facts=StandFacts,
+        judge=stand_sees_the_limit,
     ),
     Rule(
         id="final-runout",

@@ -63,6 +63,9 @@ def what_the_shaft_did(view: Assessment, step: Step, pair: Sequence[Attempt]) ->
     )
     yield from _station_table(view, step, judged)
     yield from _bends(view, judged)
+    for one in view.index_tests:
+        if one.step == step.key and one.second_attempt == judged[-1].number:
+            yield text(words(one.sentence))
 
 
 def _along(view: Assessment, step: Step, judged: Sequence[Attempt]) -> Flowable:

@@ -19,6 +19,7 @@ from models.rules.facts import (
     PeopleFacts,
     ProgressFacts,
     SizeFacts,
+    StandFacts,
     StationFacts,
     SurveyFacts,
 )
@@ -102,6 +103,7 @@ GOOD: dict[type, Any] = {
     ),
     OrderFacts: OrderFacts(entry="Mounted", out_of_order=""),
     ProgressFacts: ProgressFacts(steps_due=2, steps_waiting=()),
+    StandFacts: StandFacts(visible_change=8 * UM, finest_limit=25 * UM),
     **strength_cases.GOOD,
     **draw_up_cases.GOOD,
     **cold_cases.GOOD,
@@ -236,6 +238,10 @@ CASES = [
     Case("seat-came-back", "cannot tell", {"change_tir": 24 * UM}, DOUBT),
     Case("seat-came-back", "on the limit", {"change_tir": 25 * UM, "expanded_uncertainty": 0}, IN),
     Case("seat-came-back", "unknown", {"change_tir": None}, UNKNOWN),
+    Case("stand-sees-limit", "within", {}, IN),
+    Case("stand-sees-limit", "cannot tell", {"visible_change": 26 * UM}, DOUBT),
+    Case("stand-sees-limit", "on the limit", {"visible_change": 25 * UM}, IN),
+    Case("stand-sees-limit", "unknown", {"visible_change": None}, UNKNOWN),
     Case("final-runout", "within", {}, IN),
     Case("final-runout", "outside", {"tir": 60 * UM}, OUT),
     Case("final-runout", "cannot tell", {"tir": 49 * UM}, DOUBT),
@@ -266,7 +272,7 @@ _COMPARING = {case.rule for case in CASES if case.kind == "on the limit"}
 # Statements that are true, doubtful or missing; none of their cases is a stop.
 _NEVER_STOPS = {"survey-whole", "set-up-same", "circle-closed", "heated-through", "points-signed",
                 "piston-held", "second-survey-proves", "in-order", "every-step-settled",
-                "balance-done", "size-not-taken-hot",
+                "balance-done", "stand-sees-limit", "size-not-taken-hot",
                 *(one.id for one in SURVEY_BLUNDERS)}  # fmt: skip
 
 
