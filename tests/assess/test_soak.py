@@ -162,8 +162,8 @@ def test_the_bench_says_when_a_second_survey_may_be_taken_and_why(cool):
     lines = " ".join(soak_lines(bench.job.plan, attempt))
 
     # 4 h · ln 2 = 2.8 h.
-    assert "A second survey proves it only 2.8 h or more after the first" in lines
-    assert "time constant of 4.0 h (shop instruction 12" in lines
+    assert "a second survey proves it, 2.8 h or more after the first" in lines
+    assert "at a time constant of 4.0 h two that agree" in lines
     words = second_survey_words(bench.job.plan, attempt)
     closed = datetime.fromisoformat(attempt.judged.entry.closed_at)
     assert words.startswith(f"from {closed + timedelta(hours=4.0 * math.log(2.0)):%H:%M}")

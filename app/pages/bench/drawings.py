@@ -175,7 +175,7 @@ def _fitting(lines: Sequence[str], room: float, medium: Medium) -> Medium:
 def ranges_height(picture: RangePicture | DecayPicture, frame: Frame) -> float:
     """Give the height that values against their limits, or a decay, ask for [px of the drawing]."""
     if isinstance(picture, DecayPicture):
-        return min(math.ceil(decay_height(medium=frame.medium)), frame.between(180, 260))
+        return min(math.ceil(decay_height(medium=frame.medium)), frame.between(150, 220))
     asked = fit_bar_height(picture=picture, medium=frame.medium) + 8.0
     return min(math.ceil(asked), frame.between(210, 300))
 

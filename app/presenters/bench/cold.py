@@ -17,13 +17,16 @@ _POINTS = 48
 def soak_lines(plan: Plan, attempt: Attempt) -> tuple[str, ...]:
     """Say how long the rotor takes, when a second survey may be taken and why, and what is seen."""
     soak = soak_of(plan, attempt.coolings)
-    lines = []
+    lines: list[str] = []
     if soak.readable_in is not None and soak.readable_in > 0.0:
         lines.append(
             f"About {soak.readable_in / 3600.0:.1f} h from the last temperatures until it may be "
             "read: advice, the thermometer says when."
         )
-    lines += [_interval_words(plan, soak)] if soak.least_interval is not None else []
+    if soak.least_interval is not None:
+        lines.append(_interval_words(plan, soak))
+    else:
+        lines.append("Temperatures permit reading; a second survey that agrees is what proves it.")
     lines += [one.sentence for one in forecast_of(plan, attempt.entries)]
     return tuple(lines)
 
@@ -31,12 +34,15 @@ def soak_lines(plan: Plan, attempt: Attempt) -> tuple[str, ...]:
 def _interval_words(plan: Plan, soak: Soak) -> str:
     assert soak.least_interval is not None
     assert soak.time_constant is not None
+    # What the plan gives stands in the plan; an estimate says so here.
+    is_planned = plan.cooling.time_constant_hours is not None
+    source = "" if is_planned else f" ({soak.time_constant_source})"
     agreed = unit_set(plan.rotor.units).show(soak.agreement, "runout")
     return (
-        f"A second survey proves it only {soak.least_interval / 3600.0:.1f} h or more after the "
-        f"first: at a time constant of {soak.time_constant / 3600.0:.1f} h "
-        f"({soak.time_constant_source}) two that agree within {agreed} sooner can hide more than "
-        "that."
+        "Temperatures permit reading; a second survey proves it, "
+        f"{soak.least_interval / 3600.0:.1f} h or more after the first: at a time constant of "
+        f"{soak.time_constant / 3600.0:.1f} h{source} two that agree within "
+        f"{agreed} sooner can hide more."
     )
 
 

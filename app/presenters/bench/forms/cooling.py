@@ -31,7 +31,6 @@ def cooling_form(bench: Bench, act: NextAct, attempt: Attempt) -> Form:
         lines=(
             f"Side to side within {limits.side_to_side.written}, no more than "
             f"{limits.above_surroundings.written} above the room.",
-            "Temperatures permit reading; a second survey that agrees is what proves it.",
             *soak_lines(bench.job.plan, attempt),
         ),
         fields=(
