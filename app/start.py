@@ -139,6 +139,7 @@ class Opened:
 
     def close(self) -> None:
         """End the threads and give the record back."""
+        self.backups.close()
         self.background.close()
         self.writer.close()
         self._store.close()

@@ -11,6 +11,7 @@ from pathlib import Path
 from PySide6.QtCore import QObject, Signal
 
 from app.backup_text import local_time, look_words
+from app.presenters.background import Background
 from app.presenters.shop import Said, ShopPresenter
 from models.acts.backups import back_up, restore
 from models.job import Signature
@@ -70,6 +71,17 @@ class BackupsPresenter(QObject):
         self._second_is_missing = False
         self._look: Look | None = None
         self._under_way = False
+        # A share that does not answer must hold up nothing but the backups themselves.
+        self.beside = Background(self)
+
+    @property
+    def is_idle(self) -> bool:
+        """Whether nothing is being copied, listed or looked into."""
+        return self.beside.is_idle
+
+    def close(self) -> None:
+        """Finish what is being copied, and end the thread."""
+        self.beside.close()
 
     # -- the schedule
 
@@ -78,7 +90,7 @@ class BackupsPresenter(QObject):
         self._shop.writer.written.connect(self._count)
         self._shop.job_changed.connect(self._look_for_final)
         self._look_for_final()
-        self._shop.background.run(
+        self.beside.run(
             lambda: backups_in(self._folder),
             words="looking for the last backup",
             done=self._back_up_if_stale,
@@ -141,7 +153,7 @@ class BackupsPresenter(QObject):
 
     def _copy(self, backup: Path) -> None:
         folder = Path(self._second)
-        self._shop.background.run(
+        self.beside.run(
             lambda: copy_backup(backup, folder),
             words="copying the backup",
             done=self._copied,
@@ -188,7 +200,7 @@ class BackupsPresenter(QObject):
 
     def read(self) -> None:
         """List the backups anew."""
-        self._shop.background.run(
+        self.beside.run(
             self._list, words="listing the backups", done=self._have_rows, failed=self._not_read
         )
 
@@ -260,7 +272,7 @@ class BackupsPresenter(QObject):
             The backup.
         """
         folder = self._store.path.parent
-        self._shop.background.run(
+        self.beside.run(
             lambda: look_into(row.path, folder),
             words=f"looking into {row.path.name}",
             done=self._have_look,

@@ -95,7 +95,10 @@ def open_window(qtbot, tmp_path):
 
         def wait():
             qtbot.waitUntil(
-                lambda: opened.background.is_idle and opened.writer.is_idle, timeout=20000
+                lambda: all(
+                    part.is_idle for part in (opened.backups, opened.background, opened.writer)
+                ),
+                timeout=20000,
             )
 
         opened.settle = wait

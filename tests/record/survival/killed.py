@@ -1,12 +1,13 @@
 """Kill the program's own writer at every statement boundary of every kind of act.
 
-    python -m tests.record.survival.killed FOLDER PART OF
+    python -m tests.record.survival.killed FOLDER PART OF [KINDS_OF]
 
 Each boundary has a life of its own: a child forked warm opens the record, begins the act and is
 killed (SIGKILL) before its n-th statement, those of triggers among them, or after the last one and
 before it could tell anybody. A second child then looks at what is there, as the program would
-after a restart, and repeats the act with the same identifier. Every OF-th boundary is taken,
-beginning with PART. What was found is printed as JSON: lives, boundaries by kind, faults.
+after a restart, and repeats the act with the same identifier. Every KINDS_OF-th kind is taken, and
+of their boundaries every OF-th, beginning with PART. What was found is printed as JSON: lives,
+boundaries by kind, faults.
 """
 
 import gc
@@ -17,7 +18,7 @@ import shutil
 import signal
 import sqlite3
 import sys
-from collections.abc import Callable
+from collections.abc import Callable, Iterable
 from pathlib import Path
 from typing import Any
 
@@ -181,9 +182,9 @@ class Bases:
         return self._made[of]
 
 
-def warm(bases: Bases, folder: Path) -> None:
-    """Do one act of every kind, so that a child finds everything loaded and nothing open."""
-    for number, case in enumerate({**OPENINGS, **CASES}.values()):
+def warm(bases: Bases, cases: Iterable[Case | Opening], folder: Path) -> None:
+    """Do one act of each kind, so that a child finds everything loaded and nothing open."""
+    for number, case in enumerate(cases):
         work = folder / str(number)
         shutil.copytree(bases.before(case), work)
         with case.opened(work) as act:
@@ -193,15 +194,17 @@ def warm(bases: Bases, folder: Path) -> None:
     gc.freeze()
 
 
-def main(folder: Path, part: int, of: int) -> dict[str, Any]:
-    """Take every `of`-th boundary of all kinds in one row."""
+def main(folder: Path, part: int, of: int, kinds_of: int = 1) -> dict[str, Any]:
+    """Take every `kinds_of`-th kind, and of all their boundaries in one row every `of`-th."""
+    every = sorted({**CASES, **OPENINGS}.items())
+    chosen = every[part % kinds_of :: kinds_of]
     bases = Bases(folder / "bases")
-    warm(bases, folder / "warm")
+    warm(bases, (case for _, case in chosen), folder / "warm")
     lives = 0
     place = 0
     boundaries: dict[str, int] = {}
     faults: list[str] = []
-    for name, case in {**CASES, **OPENINGS}.items():
+    for name, case in chosen:
         killing = Killing(case, bases.before(case), folder / "work")
         boundaries[name] = killing.boundaries
         for boundary in range(killing.boundaries):
@@ -217,4 +220,4 @@ def main(folder: Path, part: int, of: int) -> dict[str, Any]:
 
 
 if __name__ == "__main__":
-    sys.stdout.write(json.dumps(main(Path(sys.argv[1]), int(sys.argv[2]), int(sys.argv[3]))))
+    sys.stdout.write(json.dumps(main(Path(sys.argv[1]), *map(int, sys.argv[2:]))))

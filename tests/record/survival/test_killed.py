@@ -8,17 +8,19 @@ from typing import Any
 
 import pytest
 
-from tests.journeys.test_random_rotors import slice_of_this_commit
+from tests.journeys.test_random_rotors import SLICE, slice_of_this_commit
 
 ROOT = Path(__file__).resolve().parents[3]
-# A run takes one boundary in so many; which ones changes with the commit.
-_ONE_IN = 37
+# A run takes one kind in so many, and one of their boundaries in so many; which ones changes with
+# the commit.
+_KINDS_IN, _ONE_IN = 6, 13
 
 
-def killed(folder: Path, *, part: int, of: int) -> dict[str, Any]:
+def killed(folder: Path, *, part: int, of: int, kinds_of: int = 1) -> dict[str, Any]:
     """Run the program that kills, in a process that has nothing open."""
     done = subprocess.run(
-        [sys.executable, "-m", "tests.record.survival.killed", str(folder), str(part), str(of)],
+        [sys.executable, "-m", "tests.record.survival.killed", str(folder)]
+        + [str(one) for one in (part, of, kinds_of)],
         cwd=ROOT,
         capture_output=True,
         text=True,
@@ -31,7 +33,7 @@ def killed(folder: Path, *, part: int, of: int) -> dict[str, Any]:
 
 
 def test_a_slice_of_all_boundaries_leaves_the_act_whole_or_absent(tmp_path: Path) -> None:
-    found = killed(tmp_path, part=slice_of_this_commit(), of=_ONE_IN)
+    found = killed(tmp_path, part=slice_of_this_commit() // SLICE, of=_ONE_IN, kinds_of=_KINDS_IN)
 
     assert found["faults"] == []
     assert min(found["boundaries"].values()) > 10
