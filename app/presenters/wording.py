@@ -18,6 +18,7 @@ _WAITED_FOR = {
     Act.HEAT: ("its heat and its opening", _TECHNICIAN),
     Act.CONFIRM_DOOR: ("the look before the door", _TECHNICIAN),
     Act.MOUNT: ("its mount", _TECHNICIAN),
+    Act.DRAW_UP: ("its draw-up on oil", _TECHNICIAN),
     Act.COMPLETE_MOUNT: ("how it came to rest", _TECHNICIAN),
     Act.MEASURE_AXIAL: ("its axial position, cold", _TECHNICIAN),
     Act.COOL: ("temperatures while it cools", _TECHNICIAN),

@@ -81,6 +81,8 @@ def _of_item(plan: Plan, step: Step, item: Item) -> Iterable[str]:
         known = material_of(plan, item.material) is not None
         how = "is estimated from its outline" if known else "is left out"
         yield f"no mass, so it {how} in journal loads, sag and critical speed."
+    if item.kind == "hydraulic" and item.taper is None:
+        yield "no taper, so sizes are asked for as for a straight fit and no draw-up is judged."
     if item.kind != "hot":
         return
     if material_of(plan, item.material) is None:

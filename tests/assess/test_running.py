@@ -4,6 +4,7 @@ import math
 
 import msgspec
 import pytest
+from uncertainties import ufloat
 
 import sample_data
 from models.assess import assess
@@ -245,3 +246,20 @@ def test_a_shear_limit_without_power_is_not_judged():
     ]
 
     assert found == [Verdict.NOT_JUDGED]
+
+
+def test_uncertainty_reaches_pressure_torque_and_force_as_a_library_propagates_it(monkeypatch):
+    steel(monkeypatch)
+    land = a_land(150.0, 250.0)
+    found = strength(a_plan(), an_item(land), fit(land, 3e-4, 3e-4, 12e-6))
+    # Second path: linear propagation by the library, p = E·Δ/(2·d)·(1 − d²/D²) for one material on
+    # a solid shaft, friction 0.10 over 100 mm; k = 2 on both sides.
+    interference = ufloat(3e-4, 12e-6)
+    pressure = 207e9 * interference / (2.0 * 0.15) * (1.0 - (0.15 / 0.25) ** 2)
+    force = 0.10 * math.pi * 0.15 * 0.1 * pressure
+
+    assert found.lands[0].least_pressure == pytest.approx(pressure.n)
+    assert found.lands[0].pressure_uncertainty == pytest.approx(pressure.s)
+    assert found.holding.force_uncertainty == pytest.approx(force.s)
+    assert found.holding.torque_uncertainty == pytest.approx((force * 0.075).s)
+    assert "± 5.3 MPa" in found.means
