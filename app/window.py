@@ -224,6 +224,7 @@ class Window(QWidget):
             asks="Who is at the window?",
             look=self._look,
             present=self._shop.person_key,
+            keyed=self._shop.keys is not None and self._shop.keys.needs_key,
             parent=self,
         )
         dialog.exec()

@@ -26,6 +26,12 @@ _ON_TRUST = (
 )
 
 
+_SIGNING_ASKS = (
+    "What you record from now on stands under the name you choose. Signing asks for that person's "
+    "passphrase or PIN."
+)
+
+
 class PeopleDialog(QDialog):
     """Lists people with their role; Enter or a double touch takes one."""
 
@@ -36,6 +42,7 @@ class PeopleDialog(QDialog):
         asks: str,
         look: Look,
         present: str = "",
+        keyed: bool = False,
         parent: QWidget | None = None,
     ) -> None:
         super().__init__(parent)
@@ -61,7 +68,14 @@ class PeopleDialog(QDialog):
         self.table.set_rows(tuple(people))
         self.table.taken.connect(self._take)
         column.addWidget(self.table, 1)
-        column.addWidget(Words(_ON_TRUST, look=dress, size=Size.NOTE, colour=Colour.INK2))
+        column.addWidget(
+            Words(
+                _SIGNING_ASKS if keyed else _ON_TRUST,
+                look=dress,
+                size=Size.NOTE,
+                colour=Colour.INK2,
+            )
+        )
         row = QHBoxLayout()
         row.setSpacing(12)
         row.addStretch(1)

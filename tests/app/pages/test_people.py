@@ -50,3 +50,12 @@ def test_changing_nothing_chooses_nobody(dialog, qtbot, how):
 
     assert dialog.chosen == ""
     assert not dialog.isVisible()
+
+
+def test_once_people_have_keys_it_says_that_signing_asks(qtbot):
+    made = PeopleDialog(compressor().people, asks="Who?", look=Look(), keyed=True)
+    qtbot.addWidget(made)
+    words = " ".join(one.text() for one in made.findChildren(QLabel))
+
+    assert "Signing asks for that person's passphrase or PIN." in words
+    assert "on trust" not in words
