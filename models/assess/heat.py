@@ -304,7 +304,10 @@ def _window(heat: Heat) -> DropWindow | None:
                 inner_diameter=plan.shaft.bore.si if plan.shaft.bore else 0.0,
             ),
             part_expansion=part_expansion,
-            bore_temperature=heat.coldest_bore,
+            # A bore follows the mean of its part; a hot bore in a cool disc closes sooner.
+            bore_temperature=min(
+                one for one in (heat.coldest_bore, heat.mean_temperature) if one is not None
+            ),
             air_temperature=_ROOM_TEMPERATURE,
         )
     except OutOfRangeError:

@@ -177,3 +177,16 @@ def test_a_derived_cap_is_judged_and_says_where_it_comes_from():
     assert found[0].verdict is Verdict.OUTSIDE
     assert found[0].inputs["highest_temperature"] == printed("150.0")
     assert found[0].limit_origin == f"50 K below the temper; {ORIGIN.words}"
+
+
+def test_a_cool_disc_leaves_less_time_than_its_hot_bore_promises():
+    even = heated(("bore", 240.0), ("rim", 240.0))[1].window
+    cool = heated(("bore", 240.0), ("rim", 140.0))[1].window
+
+    assert cool.clearance_now < even.clearance_now
+    assert cool.in_air_least < even.in_air_least
+    assert cool.over_seat_least < even.over_seat_least
+    # As if all of it were as warm as its mean.
+    mean = heated(("bore", 240.0), ("rim", 140.0))[1].mean_temperature
+    alone = heated(("bore", round(mean, 3)))[1].window
+    assert cool.over_seat_greatest == pytest.approx(alone.over_seat_greatest, rel=1e-3)
