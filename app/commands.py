@@ -90,6 +90,12 @@ def _parser() -> argparse.ArgumentParser:
     traveler.add_argument("jobfile", type=Path)
     traveler.add_argument("-o", "--output", type=Path, required=True, metavar="OUT.pdf")
     traveler.set_defaults(run=_traveler)
+    moved = commands.add_parser(
+        "in-service", help="compare a rotor as received with what an earlier job left"
+    )
+    moved.add_argument("earlier", type=Path, metavar="EARLIER", help="job file of the build")
+    moved.add_argument("present", type=Path, metavar="PRESENT", help="job file it came back in")
+    moved.set_defaults(run=_in_service)
     verify = commands.add_parser(
         "verify", help="recompute a record from its rows and say what does not hold"
     )
@@ -178,6 +184,18 @@ def _traveler(given: argparse.Namespace) -> int:
     write(assess(job), given.output)
     _say(f"Traveler written to {given.output}")
     return _WITHIN
+
+
+def _in_service(given: argparse.Namespace) -> int:
+    from app.in_service_text import compared
+    from models.assess.in_service import InServiceError
+
+    try:
+        words, nothing_moved = compared(_read(given.earlier), _read(given.present))
+    except InServiceError as trouble:
+        raise _UnusableError(str(trouble)) from None
+    _say(words)
+    return _WITHIN if nothing_moved else _NOT_WITHIN
 
 
 def _verify(given: argparse.Namespace) -> int:
