@@ -6,6 +6,7 @@ from dataclasses import dataclass
 from app.presenters.bench.reading import Reading, SoFar
 from app.presenters.bench.state import Drop
 from models.assess import Assessment, Attempt, ItemView
+from models.engineering.drop_window import DropWindow
 from models.job import RunoutSurvey
 from models.rules.progress import Act, NextAct
 from models.units import unit_set
@@ -21,6 +22,9 @@ __all__ = ["Shown", "drop_of", "show_rotor"]
 
 # A part that is not on hangs by its mounting clearance; where the plan gives none, by this much.
 _LIFT = 50e-6
+
+# One to six minutes over the seat, in seconds: common practice, and seconds once metal touches.
+_LONGEST_KNOWN = 360.0
 
 
 @dataclass(frozen=True)
@@ -139,10 +143,18 @@ def drop_of(view: ItemView) -> Drop | None:
     gap = GapPicture(gap=radial, opening_gap=radial, least_gap=radial) if radial > 0 else None
     return Drop(
         in_air=(window.in_air_least, _bounded(window.in_air_greatest)),
-        over_seat=(window.over_seat_least, _bounded(window.over_seat_greatest)),
+        over_seat=(window.over_seat_least, _hoped(window)),
         gap=gap,
         words=words,
     )
+
+
+def _hoped(window: DropWindow) -> float:
+    """Hold the hopeful end over the seat to what sleeves, collars and hubs are known to take.
+
+    It rests on a shaft that stays cold, which is too much to hope for under a thick disc.
+    """
+    return max(window.over_seat_least, min(_bounded(window.over_seat_greatest), _LONGEST_KNOWN))
 
 
 def _bounded(seconds: float) -> float:
