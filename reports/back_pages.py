@@ -60,6 +60,7 @@ def closing(view: Assessment) -> Iterator[Flowable]:
         )
     yield from _drift(view)
     yield from _final(view)
+    yield from _at_speed(view)
     yield from _open_points(view)
     yield from _notes(job, view)
     yield head("Cautions")
@@ -113,6 +114,22 @@ def _final(view: Assessment) -> Iterator[Flowable]:
         for one in found
     ]  # fmt: skip
     yield table(["", "station", "", "from"], rows, [6, 14, 100, 52])
+
+
+def _at_speed(view: Assessment) -> Iterator[Flowable]:
+    """Set what was asked of the finished rotor beyond runout: speed, probe tracks, magnetism."""
+    wanted = ("vibration-within", "probe-track-within", "magnetism-within")
+    found = [one.finding for one in view.findings if one.finding.rule.id in wanted]
+    if not found:
+        return
+    asked = view.job.plan.acceptance
+    yield head("At speed, and before it leaves", asked.origin.words if asked else "")
+    yield table(
+        ["", "judged"],
+        [[shape(verdict_kind(one.verdict)), words(one.message)] for one in found],
+        [6, 168],
+        align="cl",
+    )
 
 
 def _open_points(view: Assessment) -> Iterator[Flowable]:

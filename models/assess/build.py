@@ -4,6 +4,7 @@ from collections.abc import Iterable, Mapping, Sequence
 from dataclasses import dataclass
 from functools import cached_property
 
+from models.assess.acceptance import acceptance_findings
 from models.assess.attempts import (
     Attempt,
     assess_attempt,
@@ -150,7 +151,7 @@ def assess(job: Job) -> Assessment:
     of_job = (
         *plan_findings(job.plan),
         *_stand_findings(job, entries, surveys),
-        *_final_findings(job, attempts),
+        *_final_findings(job, attempts, entries),
     )
     findings = tuple(_standing(attempts, of_job))
     progress = _progress(job, entries, attempts, bare_shaft)
@@ -222,7 +223,9 @@ def _stand_findings(
         yield rule("stand-sees-limit").apply(facts, Subject())
 
 
-def _final_findings(job: Job, attempts: Sequence[Attempt]) -> Iterable[Finding]:
+def _final_findings(
+    job: Job, attempts: Sequence[Attempt], entries: Sequence[AnyEntry]
+) -> Iterable[Finding]:
     settled = {
         one.step.key
         for one in attempts
@@ -235,6 +238,7 @@ def _final_findings(job: Job, attempts: Sequence[Attempt]) -> Iterable[Finding]:
     if waiting:
         return
     last = next((one.judged for one in reversed(attempts) if one.judged is not None), None)
+    yield from acceptance_findings(job.plan, entries, last)
     for station in job.plan.stations_in_reach(job.plan.steps[-1].key):
         if station.final_limit is None:
             continue

@@ -168,6 +168,13 @@ NUMBERS: Mapping[str, tuple[str, ...]] = MappingProxyType(
         "visible_change": ("same_state.repeatability",),
         "turns_with_the_part_tir": ("same_state.index_test",),
         "stays_with_the_seat_tir": ("same_state.index_test",),
+        # The finished rotor.
+        "vibration_limit": (
+            "acceptance.compressor_vibration_limit",
+            "acceptance.steam_turbine_vibration_limit",
+        ),
+        "track_runout": (*_OFFSET,),
+        "track_limit": ("acceptance.compressor_probe_runout_limit",),
         # Balance.
         "permissible": (*_MAY_REMAIN, *_BY_GRADE),
         "may_remain": (*_MAY_REMAIN, *_BY_GRADE),
@@ -178,6 +185,11 @@ NUMBERS: Mapping[str, tuple[str, ...]] = MappingProxyType(
         # Read, or set by the plan: no formula stands behind these.
         "residual": _READ,
         "finest_limit": _READ,
+        "vibration": _READ,
+        "run_speed": _READ,
+        "highest_speed": _READ,
+        "flux_density": _READ,
+        "flux_limit": _READ,
         "left": _READ,
         "speed": _READ,
         "taper": _READ,

@@ -4,6 +4,8 @@ Everything that judges, draws or prints a job starts from these types. They hold
 (`models.units`), never bare floats, except where a setting has no unit.
 """
 
+from models.job.acceptance import *  # noqa: F403
+from models.job.acceptance_plan import *  # noqa: F403
 from models.job.balance import *  # noqa: F403
 from models.job.balance_plan import *  # noqa: F403
 from models.job.base import *  # noqa: F403

@@ -2,6 +2,7 @@
 
 from typing import Literal
 
+from models.job.acceptance import HighSpeedRun, Magnetism
 from models.job.balance import BalanceCorrection, BalanceRun, JournalsWeighed, TrialRound
 from models.job.base import Frozen
 from models.job.cooling_watch import StationWatched
@@ -71,6 +72,8 @@ AnyEntry = (
     | BalanceRun
     | JournalsWeighed
     | TrialRound
+    | HighSpeedRun
+    | Magnetism
 )
 
 

@@ -7,6 +7,7 @@ clock angles from the reference mark, the way the rotor names.
 
 from typing import Literal
 
+from models.job.acceptance_plan import AcceptancePlan
 from models.job.balance_plan import BalancePlan
 from models.job.base import Frozen
 from models.job.heat_words import Chilling, Surface
@@ -279,6 +280,7 @@ class Plan(Frozen, frozen=True, kw_only=True):
     drift_limit: LengthLimit | None = None
     bare_shaft_limit: LengthLimit | None = None
     balance: BalancePlan | None = None
+    acceptance: AcceptancePlan | None = None
     smoothing_factor: float | None = None
     smoothing_edition: str = ""
     # Copies of the shop's own materials that this plan rests on; by name before the table.

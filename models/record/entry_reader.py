@@ -18,9 +18,12 @@ from models.job import (
     Correction,
     DrawUp,
     Entry,
+    FieldReading,
     GaugeTry,
     Heating,
+    HighSpeedRun,
     Hot,
+    Magnetism,
     Place,
     PlaneReading,
     Question,
@@ -29,6 +32,7 @@ from models.job import (
     StationReadings,
     TrialReading,
     TrialRound,
+    VibrationReading,
     Warmth,
 )
 from models.record import tables
@@ -49,6 +53,8 @@ _PARTS: tuple[type[Base], ...] = (
     tables.RunoutStation,
     tables.DrawUpAdvance,
     tables.BalanceReading,
+    tables.VibrationReading,
+    tables.FieldReading,
     tables.TrialReading,
     tables.BroughtCorrection,
 )
@@ -83,6 +89,15 @@ class EntryReader:
         elif kind is Confirmation:
             given["checks"] = tuple(
                 struct_from(Check, part) for part in self._parts[tables.ConfirmationCheck][key]
+            )
+        elif kind is HighSpeedRun:
+            given["readings"] = tuple(
+                struct_from(VibrationReading, part)
+                for part in self._parts[tables.VibrationReading][key]
+            )
+        elif kind is Magnetism:
+            given["readings"] = tuple(
+                struct_from(FieldReading, part) for part in self._parts[tables.FieldReading][key]
             )
         elif kind is BalanceRun:
             given["readings"] = tuple(

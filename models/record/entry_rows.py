@@ -20,8 +20,10 @@ from models.job import (
     GaugeTry,
     Handling,
     Heating,
+    HighSpeedRun,
     Hot,
     JournalsWeighed,
+    Magnetism,
     Mount,
     Note,
     OutsideOperation,
@@ -76,6 +78,8 @@ COMMON = (
 )
 
 DETAILS: dict[type[AnyEntry], type[Base]] = {
+    HighSpeedRun: tables.HighSpeedRun,
+    Magnetism: tables.Magnetism,
     BalanceCorrection: tables.BalanceCorrection,
     BalanceRun: tables.BalanceRun,
     JournalsWeighed: tables.JournalsWeighed,
@@ -106,6 +110,8 @@ DETAILS: dict[type[AnyEntry], type[Base]] = {
 # Fields of each kind that stand in tables of their own.
 LEFT_OUT: dict[type[AnyEntry], tuple[str, ...]] = {
     BalanceRun: ("readings",),
+    HighSpeedRun: ("readings",),
+    Magnetism: ("readings",),
     TrialRound: ("readings",),
     AttemptOpened: ("components",),
     Confirmation: ("checks",),
@@ -228,6 +234,14 @@ def _parts(entry: AnyEntry) -> Iterator[Line]:
     elif isinstance(entry, Confirmation):
         yield from _numbered(
             entry.id, tables.ConfirmationCheck, [columns_of(check) for check in entry.checks]
+        )
+    elif isinstance(entry, HighSpeedRun):
+        yield from _numbered(
+            entry.id, tables.VibrationReading, [columns_of(one) for one in entry.readings]
+        )
+    elif isinstance(entry, Magnetism):
+        yield from _numbered(
+            entry.id, tables.FieldReading, [columns_of(one) for one in entry.readings]
         )
     elif isinstance(entry, BalanceRun):
         yield from _numbered(

@@ -18,6 +18,7 @@ from models.units import (
     Angle,
     Duration,
     Expansion,
+    FieldStrength,
     Length,
     Mass,
     Pressure,
@@ -48,6 +49,7 @@ _ENDINGS: dict[type[Quantity], str] = {
     Unbalance: "ugm",
     Speed: "mrpm",
     Mass: "mg",
+    FieldStrength: "nt",
 }
 # Field names that would be unclear, or words of SQL, as names of columns.
 _RENAMED = {

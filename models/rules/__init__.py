@@ -1,6 +1,7 @@
 """Judgements on plain facts: every rule, in the order people read them."""
 
 from models.rules import (
+    acceptance,
     balance,
     blunders,
     cold,
@@ -30,6 +31,7 @@ ALL_RULES: tuple[Rule, ...] = (
     *runout.RULES,
     *blunders.RULES,
     *balance.RULES,
+    *acceptance.RULES,
     *people.RULES,
 )
 

@@ -19,9 +19,11 @@ from models.job import (
     Decision,
     DrawUp,
     ExpansionAt,
+    FieldReading,
     GaugeTry,
     Handling,
     Heating,
+    HighSpeedRun,
     Hot,
     Instrument,
     Item,
@@ -29,6 +31,7 @@ from models.job import (
     JournalsWeighed,
     Land,
     LengthLimit,
+    Magnetism,
     ModulusAt,
     Mount,
     Note,
@@ -58,6 +61,7 @@ from models.job import (
     TemperatureLimit,
     TrialReading,
     TrialRound,
+    VibrationReading,
     Warmth,
 )
 from models.units import (
@@ -66,6 +70,7 @@ from models.units import (
     Density,
     Duration,
     Expansion,
+    FieldStrength,
     HeatCapacity,
     Length,
     Mass,
@@ -402,6 +407,18 @@ def entries() -> tuple[AnyEntry, ...]:
                 for angle, shown in zip(ANGLES, ("7", "5", "1", "5"), strict=True)
             ),
             plain="3",
+        ),
+        HighSpeedRun(
+            **common("at speed", one, 84),
+            where_run="vacuum chamber",
+            speed=Speed.read("11000 r/min"),
+            instrument="DI-3",
+            readings=(VibrationReading(place="probe 1", amplitude=Length.read("12 µm")),),
+        ),
+        Magnetism(
+            **common("magnetism", one, 84),
+            instrument="DI-3",
+            readings=(FieldReading(place="journal 1", value=FieldStrength.read("-1.4 gauss")),),
         ),
         JournalsWeighed(
             **common("weighed", one, 84),

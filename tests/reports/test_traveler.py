@@ -17,6 +17,9 @@ from models.job import AnyEntry, Head, Job, StationReadings
 from models.units import Angle
 from reports import traveler
 from sample_data.load import compressor, pump
+from tests.assess.test_acceptance import field
+from tests.assess.test_acceptance import job as finished_job
+from tests.assess.test_acceptance import run as run_at_speed
 from tests.assess.test_balance import job as balanced
 from tests.assess.test_balance import run, weighed
 
@@ -305,3 +308,11 @@ def test_balance_stands_beside_its_limit_with_what_the_part_brought() -> None:
     assert "as found 600 r/min" in paper.words
     assert "20.000 at 0.000°" in paper.words
     assert "journal loads weighed" in paper.words
+
+
+def test_what_was_asked_at_speed_stands_on_the_closing_page() -> None:
+    paper = Paper(finished_job(run_at_speed(12), field("1.4")))
+
+    assert "At speed, and before it leaves" in paper.words
+    assert "peak to peak, limit" in paper.words
+    assert "1.4 gauss (0.14 mT) remain, limit 2.0 gauss" in paper.words

@@ -24,7 +24,14 @@ from models.rules.facts import (
     SurveyFacts,
 )
 from models.rules.rule import Subject, Verdict
-from tests.rules import balance_cases, blunder_cases, cold_cases, draw_up_cases, strength_cases
+from tests.rules import (
+    acceptance_cases,
+    balance_cases,
+    blunder_cases,
+    cold_cases,
+    draw_up_cases,
+    strength_cases,
+)
 
 IN, OUT, DOUBT, UNKNOWN = Verdict.WITHIN, Verdict.OUTSIDE, Verdict.CANNOT_TELL, Verdict.NOT_JUDGED
 UM = 1e-6
@@ -109,6 +116,7 @@ GOOD: dict[type, Any] = {
     **cold_cases.GOOD,
     **blunder_cases.GOOD,
     **balance_cases.GOOD,
+    **acceptance_cases.GOOD,
 }
 
 
@@ -265,6 +273,7 @@ CASES = [
     *(Case(*row) for row in cold_cases.CASES),
     *(Case(*row) for row in blunder_cases.CASES),
     *(Case(*row) for row in balance_cases.CASES),
+    *(Case(*row) for row in acceptance_cases.CASES),
 ]  # fmt: skip
 
 # Rules that compare a number with a limit, and so need a case exactly on it.

@@ -2,6 +2,7 @@
 
 from sqlalchemy import CheckConstraint, Table
 
+from models.record.tables.acceptance import *  # noqa: F403
 from models.record.tables.assembly import *  # noqa: F403
 from models.record.tables.backups import *  # noqa: F403
 from models.record.tables.balance import *  # noqa: F403

@@ -34,7 +34,20 @@ __all__ = [
 ]
 
 # Endings of column names that hold whole numbers of a quantity.
-SMALL_UNITS = ("nm", "mk", "mdeg", "per_tera_kelvin", "pa", "ppm", "ms", "mnm", "ugm", "mrpm", "mg")
+SMALL_UNITS = (
+    "nm",
+    "mk",
+    "mdeg",
+    "per_tera_kelvin",
+    "pa",
+    "ppm",
+    "ms",
+    "mnm",
+    "ugm",
+    "mrpm",
+    "mg",
+    "nt",
+)
 
 _WHOLE = BigInteger().with_variant(Integer(), "sqlite")
 _OPTIONS = {"sqlite_strict": True, "sqlite_with_rowid": False}

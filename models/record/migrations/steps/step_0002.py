@@ -3,6 +3,7 @@
 from collections.abc import Callable
 
 from models.record.migrations.form_2 import (
+    acceptance,
     assembly,
     backups,
     balance,
@@ -28,6 +29,7 @@ _LAID: tuple[Callable[[], None], ...] = (
     events.lay,
     carried.lay,
     balance.lay,
+    acceptance.lay,
 )
 
 
