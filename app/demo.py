@@ -10,7 +10,9 @@ from app.findings_text import summary
 from models.acts import Acts
 from models.assess import assess
 from models.job import Job
+from models.record.files import keep_file
 from models.record.store import Store
+from sample_data.beside import picture_content
 from sample_data.load import compressor, pump
 
 __all__ = ["Made", "make"]
@@ -42,6 +44,8 @@ def make(folder: Path | None, *, secrets: Path | None = None) -> Made:
     lines = ["The demo shop: two rotors, people and readings that are invented.", ""]
     with Store.open(home) as store:
         acts = Acts(store)
+        # The file lies there before the row that speaks of it, as at every attaching.
+        keep_file(home, picture_content())
         keys = DemoKeys(store, acts, secrets=secrets)
         keys.make((unfinished, pump()))
         for job in (unfinished, pump()):

@@ -19,6 +19,7 @@ from app.pages.handbook import HandbookPage
 from app.pages.inspection import InspectionPage
 from app.pages.jobs import JobsPage
 from app.pages.plan import PlanPage
+from app.pages.register.instruments import InstrumentsLeaf
 from app.pages.register.materials import MaterialsLeaf
 from app.pages.register.page import RegisterPage
 from app.pages.story import StoryPage
@@ -27,6 +28,7 @@ from app.presenters.backups import BackupsPresenter
 from app.presenters.bench.bench import BenchPresenter
 from app.presenters.handbook import HandbookPresenter
 from app.presenters.inspection import InspectionPresenter
+from app.presenters.instruments import InstrumentsPresenter
 from app.presenters.jobs import JobsPresenter
 from app.presenters.keys import KeysPresenter
 from app.presenters.materials import MaterialsPresenter
@@ -34,12 +36,13 @@ from app.presenters.plan import PlanPresenter
 from app.presenters.register import RegisterPresenter
 from app.presenters.shop import Said, ShopPresenter
 from app.presenters.story import StoryPresenter
+from app.presenters.telling.telling import TellingPresenter
 from app.presenters.writing import Writer
 from app.settings import Settings, shop_folder
 from app.style.theme import apply_theme
 from app.style.tokens import load_fonts
 from app.window import BENCH, HANDBOOK, Window
-from models.acts import Acts, Keys
+from models.acts import Acts, Instruments, Keys
 from models.record.errors import (
     DiskFaultError,
     DiskFullError,
@@ -85,11 +88,18 @@ class Opened:
         window.add_desk("Plan", PlanPage(PlanPresenter(self.shop), look=look))
         window.add_desk(BENCH, None)
         inspection = InspectionPresenter(self.shop)
-        window.add_desk("Inspection", InspectionPage(inspection, look=look))
+        telling = TellingPresenter(self.shop)
+        window.listen_to(telling)
+        window.add_desk("Inspection", InspectionPage(inspection, telling=telling, look=look))
         window.add_desk("Witness", StoryPage(StoryPresenter(self.shop), look=look))
         register = RegisterPresenter(self.shop, self.keys)
         self.materials = MaterialsPresenter(self.shop)
-        leaves = (("Materials", MaterialsLeaf(self.materials, look=look)),)
+        instruments = InstrumentsPresenter(self.shop, Instruments(self._store))
+        window.listen_to(instruments)
+        leaves = (
+            ("Instruments", InstrumentsLeaf(instruments, look=look)),
+            ("Materials", MaterialsLeaf(self.materials, look=look)),
+        )
         window.add_desk("Register", RegisterPage(register, look=look, more=leaves))
         window.add_desk(HANDBOOK, HandbookPage(HandbookPresenter(), look=look))
         self.backups = BackupsPresenter(

@@ -43,10 +43,11 @@ def verified(folder: Path, *, job: str | None, head: Head | None) -> Verified:
     with Store.open(folder, create=False, on_network=True) as store, store.reading() as session:
         found = verify(session, number=job, expected=head)
         beside = compared_with_backups(session, (folder / FOLDER_NAME,))
-    troubles = (*found.troubles, *beside.troubles)
+    troubles = (*found.troubles, *found.file_troubles, *beside.troubles)
     lines = [trouble.words for trouble in troubles]
     whole = "holds: every link agrees with its rows"
     lines.append(f"{found.acts} acts: the record {'does not hold' if lines else whole}.")
+    lines += [one.words for one in found.files_not_here]
     lines += beside.notices
     lines += [
         f"  {name}: {one.sequence} {one.digest[:16]}…" for name, one in sorted(found.heads.items())

@@ -17,7 +17,8 @@ from app.pages.ask_form import AskForm
 from app.pages.desk import DeskPage, Judged
 from app.pages.handbook import HandbookPage
 from app.pages.people import PeopleDialog
-from app.presenters.keys import Asking
+from app.presenters.asker import Asker
+from app.presenters.keys import Asking, KeysPresenter
 from app.presenters.shop import Said, ShopPresenter
 from app.presenters.wording import person_words
 from app.settings import Settings
@@ -81,8 +82,7 @@ class Window(QWidget):
         shop.job_changed.connect(self._job_changed)
         shop.shelf_changed.connect(self._shelf_changed)
         if shop.keys is not None:
-            shop.keys.asked.connect(self.ask_form)
-            shop.keys.refused.connect(self._say_refused)
+            self.listen_to(shop.keys)
 
     # -- desks
 
@@ -232,23 +232,33 @@ class Window(QWidget):
         dialog.deleteLater()
         return chosen
 
-    def ask_form(self, asking: Asking) -> None:
-        """Show a form of the keys; it stays until it is done or given up.
+    def listen_to(self, asker: Asker | KeysPresenter) -> None:
+        """Show the forms of whoever asks.
+
+        Parameters
+        ----------
+        asker : Asker or KeysPresenter
+            Who asks, and does something with the answers.
+        """
+        asker.asked.connect(lambda asking: self.ask_form(asking, asker))
+        asker.refused.connect(self._say_refused)
+
+    def ask_form(self, asking: Asking, asker: Asker | KeysPresenter) -> None:
+        """Show a form; it stays until it is done or given up.
 
         Parameters
         ----------
         asking : Asking
             What it says and asks.
+        asker : Asker or KeysPresenter
+            Who gets the answers.
         """
-        keys = self._shop.keys
-        if keys is None:
-            return
         dialog = AskForm(asking, look=self._look, parent=self)
-        dialog.answered.connect(keys.answer)
-        dialog.given_up.connect(keys.give_up)
+        dialog.answered.connect(asker.answer)
+        dialog.given_up.connect(asker.give_up)
         self._form = dialog
-        keys.refused.connect(dialog.refuse)
-        keys.finished.connect(dialog.accept)
+        asker.refused.connect(dialog.refuse)
+        asker.finished.connect(dialog.accept)
         dialog.finished.connect(self._form_is_gone)
         dialog.open()
 

@@ -26,6 +26,7 @@ from reports.parts import (
     title,
     words,
 )
+from reports.record_pages import record_pages
 
 __all__ = ["closing", "raw_readings"]
 
@@ -62,6 +63,7 @@ def closing(view: Assessment) -> Iterator[Flowable]:
     yield from _final(view)
     yield from _at_speed(view)
     yield from _open_points(view)
+    yield from record_pages(view)
     yield from _notes(job, view)
     yield head("Cautions")
     yield cautions(_CAUTIONS)

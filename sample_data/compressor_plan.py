@@ -23,7 +23,17 @@ from models.job import (
     Step,
     TemperatureLimit,
 )
-from models.units import Angle, Length, Mass, Power, Ratio, Speed, Temperature, TemperatureStep
+from models.units import (
+    Angle,
+    Duration,
+    Length,
+    Mass,
+    Power,
+    Ratio,
+    Speed,
+    Temperature,
+    TemperatureStep,
+)
 
 __all__ = ["AFTER_A_WEEKEND", "BUILT", "NEXT", "PLAN"]
 
@@ -162,7 +172,14 @@ def _hot(part: _Part) -> Item:
 def _points(part: _Part) -> tuple[Point, ...]:
     if part.kind not in ("impeller", "drum", "collar", "hub"):
         return ()
-    return (Point(kind="hold", role="inspector", what="fit and runout before the next part"),)
+    hold = Point(kind="hold", role="inspector", what="fit and runout before the next part")
+    if part.key != "impeller-3":
+        return (hold,)
+    what = "runout after the third impeller"
+    return (
+        hold,
+        Point(kind="witness", role="witness", what=what, notice=Duration.read("48 h")),
+    )
 
 
 _NUT = Step(
@@ -315,6 +332,7 @@ PLAN = Plan(
         closure_limit=_length("0.0002 in"),
         reading_uncertainty=_length("0.00004 in"),
         mark_uncertainty=_angle("1 °"),
+        indicator_resolution=_length("0.0001 in"),
     ),
     cooling=CoolingLimits(
         side_to_side=TemperatureStep.read("1.0 °F"),

@@ -6,7 +6,7 @@ from pathlib import Path
 
 from models import jobfile
 from models.job import Component, Job, Plan
-from sample_data import compressor_plan, pump_plan
+from sample_data import beside, compressor_plan, pump_plan
 from sample_data.calendar import ShopClock
 from sample_data.shop import AMERICAN, EUROPEAN, Shop
 from sample_data.story import Story
@@ -34,8 +34,12 @@ def compressor_story() -> Story:
         clock=clock,
     )
     story.bare_shaft()
+    hub = next(one.serial for one in story.components if one.item == "hub")
+    sent = beside.send_off(story, subject=hub, what="dye penetrant test of the hub's bore")
     for key in compressor_plan.BUILT:
         story.step(key, after_a_weekend=key == compressor_plan.AFTER_A_WEEKEND)
+        if key == "impeller-2":
+            beside.take_back(story, sent)
     return story
 
 

@@ -21,7 +21,17 @@ from models.job import (
     Step,
     TemperatureLimit,
 )
-from models.units import Angle, Length, Mass, Power, Ratio, Speed, Temperature, TemperatureStep
+from models.units import (
+    Angle,
+    Duration,
+    Length,
+    Mass,
+    Power,
+    Ratio,
+    Speed,
+    Temperature,
+    TemperatureStep,
+)
 
 __all__ = ["PLAN"]
 
@@ -136,6 +146,13 @@ def _stage(number: int) -> Step:
     return _step(f"impeller-{number}", f"Stage {number}", (*before, impeller), hold=True)
 
 
+def _witnessed(key: str) -> tuple[Point, ...]:
+    if key != "impeller-5":
+        return ()
+    what = "runout at the fifth stage"
+    return (Point(kind="witness", role="witness", what=what, notice=Duration.read("48 h")),)
+
+
 def _step(key: str, title: str, items: tuple[Item, ...], *, hold: bool = False) -> Step:
     point = Point(kind="hold", role="inspector", what="fit and runout before the next part")
     return Step(
@@ -143,7 +160,7 @@ def _step(key: str, title: str, items: tuple[Item, ...], *, hold: bool = False) 
         title=title,
         items=items,
         change_limit=_limit("20 µm"),
-        points=(point,) if hold else (),
+        points=(point, *_witnessed(key)) if hold else (),
     )
 
 
@@ -307,6 +324,7 @@ PLAN = Plan(
         closure_limit=_length("4 µm"),
         reading_uncertainty=_length("0.6 µm"),
         mark_uncertainty=_angle("1 °"),
+        indicator_resolution=_length("1 µm"),
     ),
     cooling=CoolingLimits(
         side_to_side=TemperatureStep.read("0.5 K"),

@@ -79,7 +79,9 @@ def _calibrated(done_on: str, due_on: str, certificate: str) -> Calibration:
     return Calibration(done_on=done_on, due_on=due_on, certificate=certificate)
 
 
-def _gauge(tag: str, kind: str, span: str, resolution: str, doubt: str, cal: int) -> Instrument:
+def _gauge(
+    tag: str, kind: str, span: str, resolution: str, doubt: str, cal: int, due: str = ""
+) -> Instrument:
     return Instrument(
         tag=tag,
         kind=kind,
@@ -87,7 +89,7 @@ def _gauge(tag: str, kind: str, span: str, resolution: str, doubt: str, cal: int
         uncertainty=Length.read(doubt),
         expansion=Expansion.read("11.5 µm/(m·K)") if "micrometer" in kind else None,
         range=span,
-        calibration=_calibrated(f"2026-0{cal}-14", f"2027-0{cal}-14", f"invented {tag}/26"),
+        calibration=_calibrated(f"2026-0{cal}-14", due or f"2027-0{cal}-14", f"invented {tag}/26"),
     )
 
 
@@ -125,7 +127,8 @@ AMERICAN = Shop(
         _gauge("OM-05", "outside micrometer", "3 to 5 in", "0.0001 in", "0.0001 in", 5),
         _gauge("OM-06", "outside micrometer", "5 to 6 in", "0.0001 in", "0.0001 in", 5),
         _gauge("IM-02", "inside micrometer", "3 to 7 in", "0.0001 in", "0.00015 in", 5),
-        _gauge("DM-04", "depth gauge", "0 to 84 in", "0.001 in", "0.001 in", 8),
+        # Due soon, so that the registers have something to say.
+        _gauge("DM-04", "depth gauge", "0 to 84 in", "0.001 in", "0.001 in", 8, "2026-12-18"),
         _thermometer("CT-11", "contact thermometer", "32 to 212 °F"),
         _thermometer("CT-14", "contact thermometer", "70 to 900 °F"),
     ),

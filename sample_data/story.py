@@ -19,6 +19,7 @@ from models.job import (
     Step,
 )
 from models.units import Angle
+from sample_data import beside
 from sample_data.geometry import change_in_journal_axis
 from sample_data.scribe import Scribe
 from sample_data.truth import Mounted
@@ -55,6 +56,8 @@ class Story(Scribe):
             mounted = self.truth.mount(key, number)
             self.place = Place(kind="attempt", step=key, attempt=number)
             self._open(step)
+            if number == 1:
+                beside.tell_of_points(self, step, before=True)
             if after_a_weekend and number == 1:
                 self._look_again_after_the_weekend(step)
             for item in step.items:
@@ -108,6 +111,8 @@ class Story(Scribe):
             shoulder="felt all round",
             clock_position=Angle.read("0 °"),
         )
+        if item.kind == "clamped":
+            beside.tighten(self, item)
         if item.axial is not None:
             self.axial(item, "hot", attempt)
 
@@ -173,6 +178,8 @@ class Story(Scribe):
             kinks=self.kinks,
             name=f"{step.key} {attempt} bare seat",
         )
+        if item.key in beside.PICTURED:
+            beside.seen_on_seat(self, item)
         self.add(Note, words="High spot on the seat dressed with a fine stone and blued.")
         self.add(Settled, outcome="removed", survey=bare)
         self.sign(f"step {step.key}, attempt {attempt}", inspected=True)
@@ -184,3 +191,4 @@ class Story(Scribe):
         self.add(Settled, outcome="within limits", survey=judged)
         held = bool(step.points)
         self.sign(f"step {step.key}, attempt {self.place.attempt}", inspected=held)
+        beside.tell_of_points(self, step, before=False)

@@ -11,6 +11,7 @@ from app.pages.desk import DeskPage, FlatLine, Rule, Words, desk_key
 from app.pages.leaves import Leaves
 from app.pages.side_by_side import SideBySide
 from app.pages.table import DeskTable
+from app.pages.told import add_told_leaves
 from app.pages.worked_leaf import WorkedLeaf
 from app.presenters.inspection import DISPOSITIONS, InspectionPresenter
 from app.presenters.inspection_rows import (
@@ -20,6 +21,7 @@ from app.presenters.inspection_rows import (
     PointRow,
 )
 from app.presenters.reasons import Reason
+from app.presenters.telling.telling import TellingPresenter
 from app.viewmodels.rows import Column
 from reports.palette import Colour
 from reports.sheet.medium import Size
@@ -81,13 +83,19 @@ _INSTRUMENT_COLUMNS = (
 
 
 class InspectionPage(DeskPage):
-    """Six leaves, the findings first."""
+    """The findings first, then what else an inspector looks at."""
 
     def __init__(
-        self, presenter: InspectionPresenter, *, look: Look, parent: QWidget | None = None
+        self,
+        presenter: InspectionPresenter,
+        *,
+        look: Look,
+        telling: TellingPresenter | None = None,
+        parent: QWidget | None = None,
     ) -> None:
         super().__init__(name="Inspection", look=look, parent=parent)
         self._presenter = presenter
+        self._telling = telling
         around = QVBoxLayout(self)
         around.setContentsMargins(0, 0, 0, 0)
         self._stack = QStackedWidget(self)
@@ -135,6 +143,8 @@ class InspectionPage(DeskPage):
             (WORKED, self.worked),
         ):
             self.leaves.add(name, leaf)
+        if self._telling is not None:
+            add_told_leaves(self.leaves, self._telling, look=self.look)
         column.addWidget(self.leaves, 1)
         return whole
 

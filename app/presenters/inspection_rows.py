@@ -143,7 +143,12 @@ def points_of(view: Assessment) -> Iterator[PointRow]:
         given = {(one.role, one.meaning) for one in last.signatures}
         where = attempt_title(view, last)
         wanted: list[tuple[str, Role, str]] = [("hold", "technician", "the work of this step")]
-        wanted += [(one.kind, one.role, one.what) for one in step.points]
+        # A point that was waived, or that nobody came to after notice, waits for nobody.
+        wanted += [
+            (one.point.kind, one.point.role, one.point.what)
+            for one in last.points
+            if not one.passed
+        ]
         for kind, role, what in wanted:
             meaning = _MEANING_OF[role]
             signed = any(said == meaning and by == role for by, said in given)
@@ -156,7 +161,7 @@ def points_of(view: Assessment) -> Iterator[PointRow]:
                     role=role,
                     meaning=meaning,
                     what=what,
-                    holds=kind == "hold",
+                    holds=kind != "review",
                 )
 
 

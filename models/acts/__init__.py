@@ -9,8 +9,19 @@ its reason in `out_of_order` is taken and becomes a finding. Nothing ever stands
 """
 
 from models.acts.door import Acts, Reading, Recorded
+from models.acts.instruments import Instruments, Touched
 from models.acts.keys import Keys, KeyStanding
 from models.acts.permissions import NotAllowedError
 from models.acts.verdicts import new_id
 
-__all__ = ["Acts", "KeyStanding", "Keys", "NotAllowedError", "Reading", "Recorded", "new_id"]
+__all__ = [
+    "Acts",
+    "Instruments",
+    "KeyStanding",
+    "Keys",
+    "NotAllowedError",
+    "Reading",
+    "Recorded",
+    "Touched",
+    "new_id",
+]

@@ -5,9 +5,12 @@ from dataclasses import dataclass
 from datetime import datetime
 from pathlib import Path
 
+import msgspec
+
 from models import jobfile
 from models.acts.carrying import take_in, with_chain
 from models.acts.materials import keep_material, materials_kept
+from models.acts.numbering import number_findings, number_of_entry
 from models.acts.permissions import demand, permission_for
 from models.acts.verdicts import (
     changed_verdicts,
@@ -20,6 +23,7 @@ from models.acts.verdicts import (
 from models.assess import assess
 from models.job import (
     AnyEntry,
+    Attachment,
     AttemptOpened,
     GaugeTry,
     Hot,
@@ -29,13 +33,16 @@ from models.job import (
     Person,
     Question,
     RunoutReading,
+    RunoutSurvey,
     Settled,
     Signature,
     SizeReading,
+    VisualFinding,
     Warmth,
 )
 from models.record import journal, queries
 from models.record.carried import Laid
+from models.record.files import keep_file, read_file
 from models.record.key_rows import add_key_signature, authority_of_the_shop
 from models.record.signed_text import read_text, to_sign
 from models.record.store import Session, Store
@@ -45,6 +52,7 @@ __all__ = ["Acts", "Reading", "Recorded", "SignedWith"]
 
 Reading = RunoutReading | SizeReading | Hot | Warmth | GaugeTry
 _JUDGED_AT = (Mount, Settled, AttemptOpened)
+_NUMBERED_AT = (*_JUDGED_AT, RunoutSurvey, VisualFinding)
 
 
 @dataclass(frozen=True)
@@ -198,6 +206,8 @@ class Acts:
                 if isinstance(entry, _JUDGED_AT):
                     later = with_entry(job, entry)
                     act.add_verdicts(verdicts_due(later, entry, at))
+                if isinstance(entry, _NUMBERED_AT):
+                    number_of_entry(act, with_entry(job, entry), entry, at=at)
             return Recorded(act.sequence, at)
 
     def add_reading(
@@ -234,6 +244,35 @@ class Acts:
                     act.add_verdicts(changed_verdicts(before, after, entry_id, at))
             return Recorded(act.sequence, at)
 
+    def attach(
+        self,
+        number: str,
+        entry: Attachment,
+        content: bytes,
+        *,
+        act_id: str | None = None,
+    ) -> Recorded:
+        """Attach a picture or document: the file is on the disk before the row that names it.
+
+        Raises
+        ------
+        AttachedFileError
+            If the folder or the disk do not take the file; nothing is recorded then.
+        """
+        digest = keep_file(self._store.path.parent, content)
+        whole = msgspec.structs.replace(entry, file_digest=digest, size_bytes=len(content))
+        return self.record(number, whole, act_id=act_id)
+
+    def attached(self, entry: Attachment) -> bytes:
+        """Read an attached file, and look whether it is as it was attached.
+
+        Raises
+        ------
+        AttachedFileError
+            If it is missing or changed; the message names it.
+        """
+        return read_file(self._store.path.parent, entry.file_digest, name=entry.name)
+
     def answer(self, number: str, entry_id: str, question: Question, *, act_id: str) -> Recorded:
         """Record why a questioned reading stays."""
         with (
@@ -265,4 +304,6 @@ class Acts:
                     for one in view.findings
                     if one.finding.subject.entry == entry_id or rests_on(view, one, entry_id)
                 )
+                closed = next(one for one in view.job.entries if one.id == entry_id)
+                number_findings(act, view, at=at, place=closed.place)
             return Recorded(act.sequence, at)

@@ -1,5 +1,6 @@
 """Whether an entry may be made now: by its person's role, then by the order of the work."""
 
+from models.acts.beside import NO_WORK, beside_permission
 from models.assess import Assessment
 from models.job import (
     AnyEntry,
@@ -147,8 +148,9 @@ def _role_permission(view: Assessment, entry: AnyEntry) -> Permission:
         return _refuse(
             "role-may-not-decide", f"{person.name} is {_a(person.role)}; an inspector decides."
         )
-    if not isinstance(entry, Signature):
-        return Permission(True)
+    beside = beside_permission(view, entry, person)
+    if not beside.allowed or not isinstance(entry, Signature):
+        return beside
     if entry.role != person.role:
         return _refuse(
             "role-not-held", f"{person.name} is {_a(person.role)} and cannot sign as {entry.role}."
@@ -162,9 +164,10 @@ def _role_permission(view: Assessment, entry: AnyEntry) -> Permission:
         )
     attempt = view.attempt(entry.place.step or "", entry.place.attempt or 0)
     did_it = attempt is not None and any(
-        one.by == entry.by and not isinstance(one, Signature | Decision) for one in attempt.entries
+        one.by == entry.by and not isinstance(one, NO_WORK) for one in attempt.entries
     )
-    if entry.meaning == "inspected" and did_it:
+    agreed = any(one.what == "whoever performed may inspect" for one in view.job.plan.waivers)
+    if entry.meaning == "inspected" and did_it and not agreed:
         return _refuse(
             "performer-cannot-inspect",
             f"{person.name} worked on this step and cannot inspect it.",

@@ -9,11 +9,14 @@ from models.assess.attempts import (
     Attempt,
     assess_attempt,
     finding_key,
-    points_open,
 )
 from models.assess.balance import balance_verdict
+from models.assess.completeness import complete_facts
+from models.assess.decided import decision_about, decisions_of
 from models.assess.index import IndexView, index_views
 from models.assess.plan_findings import plan_findings
+from models.assess.points import point_events, waits_for
+from models.assess.record_findings import record_findings
 from models.assess.runout import SurveyRunout, read_survey
 from models.assess.shaft import ShaftView, shaft_view
 from models.assess.stand import StandRepeatability, stand_repeatability
@@ -26,7 +29,6 @@ from models.job import (
     AnyEntry,
     AttemptOpened,
     BalanceRun,
-    Decision,
     Job,
     JournalsWeighed,
     RunoutSurvey,
@@ -151,9 +153,11 @@ def assess(job: Job) -> Assessment:
     of_job = (
         *plan_findings(job.plan),
         *_stand_findings(job, entries, surveys),
+        *record_findings(job, entries),
         *_final_findings(job, attempts, entries),
     )
-    findings = tuple(_standing(attempts, of_job))
+    standing = tuple(_standing(job, entries, attempts, of_job))
+    findings = (*standing, *_completeness(job, entries, attempts, standing))
     progress = _progress(job, entries, attempts, bare_shaft)
     return Assessment(
         job=job,
@@ -183,26 +187,36 @@ def _attempts(
         balanced = [
             entry for entry in entries[:until] if isinstance(entry, BalanceRun | JournalsWeighed)
         ]
-        yield assess_attempt(job, one, mine, earlier, baseline, bare_shaft, balanced)
+        events = point_events(entries, one.place.step or "")
+        yield assess_attempt(job, one, mine, earlier, baseline, bare_shaft, balanced, events)
 
 
-def _standing(attempts: Sequence[Attempt], final: Iterable[Finding]) -> Iterable[Standing]:
+def _standing(
+    job: Job,
+    entries: Sequence[AnyEntry],
+    attempts: Sequence[Attempt],
+    of_job: Iterable[Finding],
+) -> Iterable[Standing]:
+    decisions = decisions_of(entries)
+
+    def answer(finding: Finding, attempt: Attempt | None) -> str | None:
+        if finding.verdict is Verdict.WITHIN:
+            return None
+        key = finding_key(finding)
+        decided = decision_about(job, decisions, key, finding.subject.entry)
+        if decided is not None:
+            return f"{decided.disposition}: {decided.words}"
+        return None if attempt is None else _came_off(attempt, finding)
+
     for attempt in attempts:
-        came_off = attempt.settled is not None and attempt.settled.outcome == "removed"
         for finding in attempt.findings:
-            yield Standing(finding, _answer(attempt, finding, came_off))
-    for finding in final:
-        yield Standing(finding)
+            yield Standing(finding, answer(finding, attempt))
+    for finding in of_job:
+        yield Standing(finding, answer(finding, None))
 
 
-def _answer(attempt: Attempt, finding: Finding, came_off: bool) -> str | None:
-    if finding.verdict is Verdict.WITHIN:
-        return None
-    decided: list[Decision] = [
-        one for one in attempt.decisions if one.about == finding_key(finding)
-    ]
-    if decided:
-        return f"{decided[-1].disposition}: {decided[-1].words}"
+def _came_off(attempt: Attempt, finding: Finding) -> str | None:
+    came_off = attempt.settled is not None and attempt.settled.outcome == "removed"
     # What the shaft kept is not answered by the part's coming off.
     if came_off and finding.rule.id != "seat-came-back":
         return f"attempt {attempt.number} came off"
@@ -221,6 +235,25 @@ def _stand_findings(
             finest_limit=found.finest_limit,
         )
         yield rule("stand-sees-limit").apply(facts, Subject())
+
+
+def _completeness(
+    job: Job,
+    entries: Sequence[AnyEntry],
+    attempts: Sequence[Attempt],
+    standing: Sequence[Standing],
+) -> Iterable[Standing]:
+    """Say what a finished build lacks on paper; before its last step is settled, nothing."""
+    settled = {one.step.key for one in attempts if one.settled and one.settled.outcome != "removed"}
+    if settled != {step.key for step in job.plan.steps}:
+        return
+    still_open = [
+        finding_key(one.finding)
+        for one in standing
+        if one.answered_by is None and one.finding.verdict in (Verdict.OUTSIDE, Verdict.CANNOT_TELL)
+    ]
+    facts = complete_facts(job, entries, attempts, still_open)
+    yield Standing(rule("record-complete").apply(facts, Subject()))
 
 
 def _final_findings(
@@ -324,7 +357,7 @@ def _attempt_progress(job: Job, attempt: Attempt) -> AttemptProgress:
         seat_survey_closed=attempt.seat_survey is not None,
         outcome=attempt.settled.outcome if attempt.settled else None,
         performed=any(one.meaning == "performed" for one in attempt.signatures),
-        points_open=points_open(attempt.step, attempt.signatures),
+        points_open=waits_for(attempt.points),
     )
 
 

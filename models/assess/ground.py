@@ -30,6 +30,19 @@ class Ground:
         return self.job is other.job or (self._hash == other._hash and self.job == other.job)
 
 
+def _without_history(job: Job) -> Job:
+    """Leave out what grows with the work and what no attempt is worked out from."""
+    return msgspec.structs.replace(
+        job,
+        entries=(),
+        verdicts=(),
+        key_signatures=(),
+        numbered_findings=(),
+        instrument_events=(),
+        head=None,
+    )
+
+
 _recent: tuple[tuple[Job, Ground], ...] = ()
 
 
@@ -39,7 +52,7 @@ def ground_of(job: Job) -> Ground:
     for known, ground in _recent:
         if known is job:
             return ground
-    ground = Ground(msgspec.structs.replace(job, entries=(), verdicts=(), head=None))
+    ground = Ground(_without_history(job))
     # The same plan read anew is the same ground, so that later looks need not compare it again.
     ground = next((one for _, one in _recent if one == ground), ground)
     # One assignment, so that another thread sees the old row or the new one.

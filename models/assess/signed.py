@@ -5,11 +5,14 @@ from datetime import datetime
 
 from models.job import (
     AnyEntry,
+    Attachment,
     Cooling,
     Decision,
     Handling,
     Heating,
     Note,
+    OutsideOperation,
+    PointEvent,
     RunoutSurvey,
     Signature,
     SizeSurvey,
@@ -18,7 +21,15 @@ from models.job import (
 __all__ = ["given_for_now"]
 
 # What may follow a signature without touching what was signed.
-_TOUCH_NOTHING = (Decision, Handling, Note, Signature)
+_TOUCH_NOTHING = (
+    Attachment,
+    Decision,
+    Handling,
+    Note,
+    OutsideOperation,
+    PointEvent,
+    Signature,
+)
 
 
 def given_for_now(

@@ -45,6 +45,11 @@ NUMBERS: Mapping[str, tuple[str, ...]] = MappingProxyType(
         "threshold": ("high_speed.reasons_for_high_speed_balance",),
         "visible_change_tir": ("same_state.repeatability",),
         "vector_uncertainty": ("same_state.repeatability",),
+        # The record: as typed in the plan, or told by the clock.
+        "resolution": _READ,
+        "least_limit": _READ,
+        "hours_between": _READ,
+        "hours_allowed": _READ,
         # Sizes and fit at rest.
         "least_diameter": ("sizes.summarise_sizes", "sizes.diameter_at_reference"),
         "greatest_diameter": ("sizes.summarise_sizes", "sizes.diameter_at_reference"),

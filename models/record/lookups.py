@@ -15,6 +15,7 @@ from models.record.tables import Base, table
 __all__ = [
     "KnownInstrument",
     "chain_of_job",
+    "every_instrument",
     "head_of",
     "instrument_in_force",
     "instruments_in_force",
@@ -115,6 +116,25 @@ def instruments_in_force(
     for row in session.execute(asked).mappings():
         newest[row["tag"]] = KnownInstrument(row["key"], _instrument(row), row)
     return list(newest.values())
+
+
+def every_instrument(session: Session) -> list[Instrument]:
+    """List each instrument that the shop or any job knows, as calibrated last."""
+    of, done = table(tables.Instrument), table(tables.Calibration)
+    calibration = [done.c[name].label(f"calibration_{name}") for name in _CALIBRATION]
+    asked = select(of, *calibration).outerjoin(
+        done, (done.c.chain_id == of.c.chain_id) & (done.c.instrument_key == of.c.key)
+    )
+    newest: dict[str, Row] = {}
+    for row in session.execute(asked).mappings():
+        known = newest.get(row["tag"])
+        if known is None or _later(row, known):
+            newest[row["tag"]] = row
+    return [_instrument(newest[tag]) for tag in sorted(newest)]
+
+
+def _later(one: Row, other: Row) -> bool:
+    return (one["calibration_done_on"] or "") > (other["calibration_done_on"] or "")
 
 
 _CALIBRATION = ("done_on", "due_on", "certificate", "result")

@@ -7,9 +7,11 @@ from sqlalchemy import Select, and_, func, select
 from sqlalchemy.orm import Session
 
 from models.job import (
+    Calibration,
     Component,
     Head,
     Instrument,
+    InstrumentEvent,
     Job,
     KeySignature,
     OwnMaterial,
@@ -28,13 +30,16 @@ from models.record.tables import Base, table
 
 __all__ = [
     "JobRow",
+    "calibrations",
     "head",
     "instruments",
+    "instruments_of",
     "job_rows",
     "materials",
     "people",
     "read_job",
     "shelf_query",
+    "shop_instrument_events",
 ]
 
 
@@ -120,6 +125,39 @@ def instruments(session: Session) -> tuple[Instrument, ...]:
     """List the shop's instruments."""
     chain_id = shop_chain(session)
     return () if chain_id is None else _instruments(session, chain_id)
+
+
+def instruments_of(session: Session, number: str) -> tuple[Instrument, ...]:
+    """List the instruments of a job.
+
+    Raises
+    ------
+    UnknownJobError
+        If there is no job of this number.
+    """
+    chain_id = chain_of_job(session, number)
+    if chain_id is None:
+        raise UnknownJobError(number)
+    return _instruments(session, chain_id)
+
+
+def calibrations(session: Session, tag: str) -> tuple[Calibration, ...]:
+    """List every calibration of an instrument that the record holds, the last one first."""
+    of, done = table(tables.Instrument), table(tables.Calibration)
+    rows = session.execute(
+        select(done)
+        .join(of, and_(done.c.chain_id == of.c.chain_id, done.c.instrument_key == of.c.key))
+        .where(of.c.tag == tag)
+        .order_by(done.c.done_on.desc())
+    ).mappings()
+    # The shop and every job keep a copy of the same calibration.
+    return tuple(dict.fromkeys(struct_from(Calibration, row) for row in rows))
+
+
+def shop_instrument_events(session: Session, tag: str) -> tuple[InstrumentEvent, ...]:
+    """List what the shop found out about an instrument."""
+    chain_id = shop_chain(session)
+    return () if chain_id is None else instrument_events(session, chain_id, tag)
 
 
 def materials(session: Session) -> tuple[OwnMaterial, ...]:

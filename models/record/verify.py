@@ -16,6 +16,7 @@ from models.job import Head
 from models.record import tables
 from models.record.chain_check import ChainCheck, Trouble
 from models.record.errors import UnknownJobError
+from models.record.files import file_troubles
 from models.record.heads_seen import heads_seen_troubles
 from models.record.lookups import chain_of_job, shop_chain
 from models.record.schema import differences
@@ -32,12 +33,16 @@ class Verification:
     """What was found; `heads` by job number, the shop's own under `SHOP_NAME`."""
 
     troubles: tuple[Trouble, ...]
+    # Files beside the record; the links say nothing about them but their digest.
+    file_troubles: tuple[Trouble, ...] = ()
+    # Files that never came with a job from elsewhere: told, and no fault of this record.
+    files_not_here: tuple[Trouble, ...] = ()
     heads: dict[str, Head]
     acts: int
 
     @property
     def is_whole(self) -> bool:
-        """Whether everything is as it was recorded."""
+        """Whether every row is as it was recorded."""
         return not self.troubles
 
 
@@ -62,6 +67,8 @@ def verify(
     """
     troubles = [*_of_the_file(session), *_second_shop(session)]
     heads: dict[str, Head] = {}
+    beside: list[Trouble] = []
+    not_here: list[Trouble] = []
     acts = 0
     chains = _chains(session, number)
     troubles += heads_seen_troubles(session, chains)
@@ -70,11 +77,29 @@ def verify(
         troubles += chain.troubles()
         troubles += signature_troubles(session, chain_id, name)
         acts += len(chain.acts)
+        for never_came, trouble in _of_files(session, chain_id, name):
+            (not_here if never_came else beside).append(trouble)
         if chain.head is not None:
             heads[name] = chain.head
         if expected is not None and number is not None:
             troubles += chain.compared_with(expected)
-    return Verification(troubles=tuple(troubles), heads=heads, acts=acts)
+    return Verification(
+        troubles=tuple(troubles),
+        file_troubles=tuple(beside),
+        files_not_here=tuple(not_here),
+        heads=heads,
+        acts=acts,
+    )
+
+
+def _of_files(session: Session, chain_id: str, name: str) -> Iterator[tuple[bool, Trouble]]:
+    store = session.info.get("store")
+    # While a file is brought to its next form no store is there yet, and no attachment either.
+    if store is None:
+        return
+    for one in file_troubles(session, store.path.parent, chain_id):
+        trouble = Trouble(what=one.words, job=name, table="attachment", key=one.entry)
+        yield one.never_came, trouble
 
 
 def _of_the_file(session: Session) -> Iterator[Trouble]:

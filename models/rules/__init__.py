@@ -11,6 +11,7 @@ from models.rules import (
     holding,
     mount,
     people,
+    record,
     runout,
     sizes,
     strength,
@@ -33,6 +34,7 @@ ALL_RULES: tuple[Rule, ...] = (
     *balance.RULES,
     *acceptance.RULES,
     *people.RULES,
+    *record.RULES,
 )
 
 

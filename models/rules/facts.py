@@ -187,6 +187,8 @@ class PeopleFacts:
     inspectors: tuple[str, ...] | None = known("who inspected the step")
     points_due: tuple[str, ...] | None = known("the points of the step")
     points_open: tuple[str, ...] | None = known("the signatures at the points")
+    points_without: tuple[str, ...] | None = known("the points passed without a signature")
+    agreed_waiver: str | None = known("the waiver that the plan agrees to")
 
 
 @dataclass(frozen=True, kw_only=True)

@@ -7,10 +7,20 @@ __all__ = ["RULES"]
 
 
 def performer_is_not_inspector(
-    *, performers: tuple[str, ...], inspectors: tuple[str, ...]
+    *,
+    performers: tuple[str, ...],
+    inspectors: tuple[str, ...],
+    agreed_waiver: str | None = None,
 ) -> Judgement:
-    """Refuse an inspection by whoever performed the step."""
+    """Refuse an inspection by whoever performed the step, unless the plan agreed to it."""
     both = [name for name in inspectors if name in performers]
+    if both and agreed_waiver:
+        return Judgement(
+            Verdict.WITHIN,
+            f"{', '.join(both)} performed this step and inspected it, as the plan agrees: "
+            f"{agreed_waiver}.",
+            phrase="Within limits, by an agreed waiver",
+        )
     if both:
         return Judgement(
             Verdict.OUTSIDE,
@@ -21,13 +31,23 @@ def performer_is_not_inspector(
     )
 
 
-def points_are_signed(*, points_due: tuple[str, ...], points_open: tuple[str, ...]) -> Judgement:
+def points_are_signed(
+    *,
+    points_due: tuple[str, ...],
+    points_open: tuple[str, ...],
+    points_without: tuple[str, ...] | None = None,
+) -> Judgement:
     """Ask for the signatures that the plan calls for before work goes past a step."""
     if points_open:
         return Judgement(Verdict.NOT_JUDGED, f"Waits for {'; '.join(points_open)}.")
-    return Judgement(
-        Verdict.WITHIN, f"Signed: {'; '.join(points_due)}." if points_due else "No point here."
-    )
+    if not points_due:
+        return Judgement(Verdict.WITHIN, "No point here.")
+    if points_without:
+        return Judgement(
+            Verdict.WITHIN,
+            f"Every point is passed; without a signature: {'; '.join(points_without)}.",
+        )
+    return Judgement(Verdict.WITHIN, f"Signed: {'; '.join(points_due)}.")
 
 
 def entry_is_in_order(*, entry: str, out_of_order: str) -> Judgement:
@@ -62,6 +82,7 @@ RULES = (
         source="common practice: separation of doing and checking",
         facts=PeopleFacts,
         judge=performer_is_not_inspector,
+        edition=2,
     ),
     Rule(
         id="points-signed",
@@ -69,6 +90,7 @@ RULES = (
         source="the plan's points",
         facts=PeopleFacts,
         judge=points_are_signed,
+        edition=2,
     ),
     Rule(
         id="in-order",

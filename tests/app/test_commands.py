@@ -209,16 +209,16 @@ def test_a_job_goes_to_another_shop_by_command_and_is_verified_on_the_way(
     Store.open(other).close()
     assert main(["export", str(shop_folder), "26-0417", "-o", str(file)]) == 0
     assert main(["verify", str(file)]) == 0
-    assert "job 26-0417, 110 acts: the file holds" in capsys.readouterr().out
+    assert "job 26-0417, 116 acts: the file holds" in capsys.readouterr().out
     assert main(["take-in", str(file), str(other), "--by", "AT"]) == 0
-    assert "110 acts are new; head 110:" in capsys.readouterr().out
+    assert "116 acts are new; head 116:" in capsys.readouterr().out
     assert main(["take-in", str(file), str(other), "--by", "AT"]) == 0
     assert "all of it was there already" in capsys.readouterr().out
     assert main(["verify", str(other)]) == 0
-    head = next(line for line in capsys.readouterr().out.splitlines() if "26-0417: 110" in line)
-    kept = "110:" + head.split()[-1].rstrip("…")
+    head = next(line for line in capsys.readouterr().out.splitlines() if "26-0417: 116" in line)
+    kept = "116:" + head.split()[-1].rstrip("…")
     assert main(["verify", str(file), "--head", kept]) == 0
-    assert main(["verify", str(file), "--head", "110:" + "0" * 16]) == 1
+    assert main(["verify", str(file), "--head", "116:" + "0" * 16]) == 1
     assert "is not the one whose head was kept" in capsys.readouterr().out
     assert main(["verify", str(file), "--head", "999:" + "0" * 16]) == 1
 

@@ -75,7 +75,7 @@ def test_the_form_says_whose_name_stands_under_what_before_it_asks(
     said = " ".join(words(form))
     assert "Ansel Tarrowby" in said
     assert "Signs as technician, “performed”: did the work as it is recorded here." in said
-    assert "Covers step 5, attempt 1 of job 26-0417, as recorded up to act 110; digest " in said
+    assert "Covers step 5, attempt 1 of job 26-0417, as recorded up to act 116; digest " in said
     for label in ("Passphrase", "PIN"):
         assert field(form, label).echoMode() is QLineEdit.EchoMode.Password
     form.reject()

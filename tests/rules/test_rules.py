@@ -30,6 +30,7 @@ from tests.rules import (
     blunder_cases,
     cold_cases,
     draw_up_cases,
+    record_cases,
     strength_cases,
 )
 
@@ -117,6 +118,7 @@ GOOD: dict[type, Any] = {
     **blunder_cases.GOOD,
     **balance_cases.GOOD,
     **acceptance_cases.GOOD,
+    **record_cases.GOOD,
 }
 
 
@@ -274,6 +276,7 @@ CASES = [
     *(Case(*row) for row in blunder_cases.CASES),
     *(Case(*row) for row in balance_cases.CASES),
     *(Case(*row) for row in acceptance_cases.CASES),
+    *(Case(*row) for row in record_cases.CASES),
 ]  # fmt: skip
 
 # Rules that compare a number with a limit, and so need a case exactly on it.
@@ -281,7 +284,8 @@ _COMPARING = {case.rule for case in CASES if case.kind == "on the limit"}
 # Statements that are true, doubtful or missing; none of their cases is a stop.
 _NEVER_STOPS = {"survey-whole", "set-up-same", "circle-closed", "heated-through", "points-signed",
                 "piston-held", "second-survey-proves", "in-order", "every-step-settled",
-                "balance-done", "stand-sees-limit", "size-not-taken-hot",
+                "balance-done", "stand-sees-limit", "size-not-taken-hot", "instrument-still-good",
+                "indicator-resolves-limit", "entered-in-time", "record-complete",
                 *(one.id for one in SURVEY_BLUNDERS)}  # fmt: skip
 
 

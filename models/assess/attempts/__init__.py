@@ -1,6 +1,5 @@
 """One attempt at a stacking step: its entries sorted, worked out and judged."""
 
-from models.assess.attempts.on_people import points_open
 from models.assess.attempts.on_runout import closure_allowed, station_facts, survey_findings
 from models.assess.attempts.on_sizes import fit_facts
 from models.assess.attempts.view import Attempt, ItemView, finding_key
@@ -13,7 +12,6 @@ __all__ = [
     "closure_allowed",
     "finding_key",
     "fit_facts",
-    "points_open",
     "station_facts",
     "survey_findings",
 ]

@@ -1,14 +1,15 @@
 """Findings on who did, signed and measured what."""
 
-from collections.abc import Iterable, Sequence
+from collections.abc import Iterable
 
 from models.assess.attempts.view import Attempt, attempt_subject
-from models.job import Heating, Job, Mount, Removal, RunoutSurvey, Signature, SizeSurvey, Step
+from models.assess.points import waits_for
+from models.job import Heating, Job, Mount, Removal, RunoutSurvey, SizeSurvey
 from models.rules import rule
 from models.rules.facts import InstrumentFacts, OrderFacts, PeopleFacts
 from models.rules.rule import Finding, Subject
 
-__all__ = ["instrument_finding", "people_findings", "points_open"]
+__all__ = ["instrument_finding", "people_findings"]
 
 
 def people_findings(job: Job, attempt: Attempt) -> Iterable[Finding]:
@@ -22,8 +23,14 @@ def people_findings(job: Job, attempt: Attempt) -> Iterable[Finding]:
     facts = PeopleFacts(
         performers=tuple(sorted(job.person(key).name for key in performed)),
         inspectors=tuple(sorted(job.person(key).name for key in inspected)),
-        points_due=tuple(_point_words(point.role, point.what) for point in attempt.step.points),
-        points_open=points_open(attempt.step, attempt.signatures),
+        points_due=tuple(one.due_words for one in attempt.points),
+        points_open=waits_for(attempt.points),
+        points_without=tuple(
+            f"{one.point.what}, {one.how}"
+            for one in attempt.points
+            if one.passed and not one.signed
+        ),
+        agreed_waiver=_agreed_waiver(job),
     )
     yield rule("performer-not-inspector").apply(facts, attempt_subject(attempt))
     if attempt.settled is not None and attempt.settled.outcome != "removed":
@@ -36,19 +43,11 @@ def people_findings(job: Job, attempt: Attempt) -> Iterable[Finding]:
             )
 
 
-def points_open(step: Step, signatures: Sequence[Signature]) -> tuple[str, ...]:
-    """Name the hold points of a step whose signature is still missing."""
-    meanings = {"inspector": "inspected", "witness": "witnessed", "engineer": "decided"}
-    given = {(one.role, one.meaning) for one in signatures}
-    return tuple(
-        _point_words(point.role, point.what)
-        for point in step.points
-        if point.kind == "hold" and (point.role, meanings.get(point.role, "performed")) not in given
-    )
-
-
-def _point_words(role: str, what: str) -> str:
-    return f"{role} to sign: {what}"
+def _agreed_waiver(job: Job) -> str | None:
+    for one in job.plan.waivers:
+        if one.what == "whoever performed may inspect":
+            return f"agreed by {one.agreed_by} on {one.agreed_on}, {one.reason.rstrip('.')}"
+    return None
 
 
 def instrument_finding(job: Job, tag: str, done_at: str, subject: Subject) -> Finding:

@@ -5,8 +5,10 @@ from functools import cached_property
 
 from models.assess.balance import BalanceView
 from models.assess.bend import Bend, bend_of
+from models.assess.decided import answers
 from models.assess.draw_up import DrawnUp
 from models.assess.heat import Heat
+from models.assess.points import PointState
 from models.assess.runout import StationChange, SurveyRunout
 from models.assess.sizes import LandFit
 from models.assess.strength import FitStrength
@@ -105,6 +107,7 @@ class Attempt:
     # Given for an earlier state: something was recorded or corrected since.
     signatures_before: tuple[Signature, ...]
     decisions: tuple[Decision, ...]
+    points: tuple[PointState, ...]
     findings: tuple[Finding, ...]
 
     @cached_property
@@ -154,7 +157,7 @@ class Attempt:
     def counted(self, finding: Finding) -> Verdict:
         """Give the verdict as it counts for going on: a person's decision settles a doubt."""
         about = finding_key(finding)
-        decided = [one for one in self.decisions if one.about == about]
+        decided = [one for one in self.decisions if one.about == about and answers(self.plan, one)]
         if decided and decided[-1].disposition in (
             "accept reading",
             "use as is under concession",

@@ -10,6 +10,7 @@ from models.assess.balance import balance_view
 from models.assess.draw_up import drawn_up, taper_fits
 from models.assess.ground import Ground, ground_of
 from models.assess.heat import item_heat
+from models.assess.points import point_states
 from models.assess.runout import compare_surveys, read_survey, where_the_bend_sits
 from models.assess.signed import given_for_now
 from models.assess.sizes import land_fit
@@ -25,6 +26,7 @@ from models.job import (
     Item,
     Job,
     Mount,
+    PointEvent,
     Removal,
     RunoutSurvey,
     Settled,
@@ -42,6 +44,7 @@ def assess_attempt(
     baseline: RunoutSurvey | None,
     bare_shaft: RunoutSurvey | None,
     earlier_balance: Sequence[AnyEntry] = (),
+    point_events: Sequence[PointEvent] = (),
 ) -> Attempt:
     """Sort, work out and judge one attempt.
 
@@ -57,6 +60,7 @@ def assess_attempt(
         baseline,
         bare_shaft,
         tuple(earlier_balance),
+        tuple(point_events),
     )
 
 
@@ -69,6 +73,7 @@ def _assess_attempt(
     named_baseline: RunoutSurvey | None,
     bare_shaft: RunoutSurvey | None,
     earlier_balance: tuple[AnyEntry, ...],
+    point_events: tuple[PointEvent, ...],
 ) -> Attempt:
     job = ground.job
     step = job.plan.step(opened.place.step or "")
@@ -105,6 +110,7 @@ def _assess_attempt(
         balance=balance_view(job, entries, earlier_balance),
         signatures_before=signed_before,
         decisions=tuple(one for one in entries if isinstance(one, Decision)),
+        points=point_states(step, signed_now, point_events),
         findings=(),
     )
     return replace(attempt, findings=tuple(attempt_findings(job, attempt)))

@@ -35,6 +35,7 @@ from models.record.verify import verify
 from models.units import Angle
 from tests.record.a_job import ANGLES, FORGING, NUMBER, a_job, a_survey, at, celsius, common, mm
 from tests.record.survival.key_cases import key_cases
+from tests.record.survival.thing_cases import thing_cases
 
 __all__ = ["CASES", "Case", "verified"]
 
@@ -231,6 +232,7 @@ CASES: dict[str, Case] = {
     "answer": Case(_with_open_entries, _answer),
     "back_up": Case(_with_open_entries, _back_up),
     "restore": Case(_backed_up, _restore),
+    **{name: Case(*case) for name, case in thing_cases(_JOB).items()},
     "keep_material": Case(_nothing, _keep_material),
     "close_survey": Case(_with_open_entries, _close_survey),
     **{name: Case(*case) for name, case in key_cases(_JOB).items()},

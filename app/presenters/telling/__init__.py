@@ -1,0 +1,1 @@
+"""What happens beside the mounting: told in a plain form, and listed."""
