@@ -17,6 +17,7 @@ from models.assess import (
     ShaftView,
     lacks,
 )
+from models.assess.swept import swept_views
 
 __all__ = ["worked_out"]
 
@@ -55,6 +56,18 @@ def worked_out(view: Assessment) -> dict[str, Any]:
                 "in words": one.sentence,
             }
             for one in view.index_tests
+        ],
+        "swept_totals": [
+            {
+                "survey": one.survey,
+                "station": one.station,
+                "swept_tir [m]": _number(one.swept),
+                "at_marks_tir [m]": _number(one.at_marks),
+                "reach_of_marks_tir [m]": _number(one.reach),
+                "outcome": one.outcome,
+                "in words": one.sentence,
+            }
+            for one in swept_views(view.job, view.surveys.values())
         ],
         "attempts": [_attempt(one) for one in view.attempts],
         "lacks": list(lacks(view.job)),

@@ -7,6 +7,7 @@ from reportlab.lib.units import mm
 from reportlab.platypus import Flowable, Table
 
 from models.assess import Assessment, Attempt, StationChange
+from models.assess.swept import swept_views
 from models.job import Step
 from models.rules.rule import Verdict
 from models.units import unit_set
@@ -66,6 +67,10 @@ def what_the_shaft_did(view: Assessment, step: Step, pair: Sequence[Attempt]) ->
     for one in view.index_tests:
         if one.step == step.key and one.second_attempt == judged[-1].number:
             yield text(words(one.sentence))
+    last = judged[-1].judged
+    for swept in swept_views(view.job, [last] if last is not None else []):
+        if swept.outcome != "agrees":
+            yield text(words(swept.sentence))
 
 
 def _along(view: Assessment, step: Step, judged: Sequence[Attempt]) -> Flowable:
