@@ -48,6 +48,15 @@ def permission_for(view: Assessment, entry: AnyEntry) -> Permission:
     role = _role_permission(view, entry)
     if not role.allowed:
         return role
+    if isinstance(entry, RunoutSurvey):
+        known = {one.key for one in view.job.plan.stations}
+        strange = [one.station for one in entry.stations if one.station not in known]
+        if strange:
+            return _refuse(
+                "station-unknown",
+                f"The plan knows no station {', '.join(strange)}. Read those of the plan, or have "
+                "it revised.",
+            )
     if entry.supersedes is not None:
         return _correction_permission(view, entry)
     act = _act_of(entry)

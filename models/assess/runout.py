@@ -199,7 +199,11 @@ def read_survey(job: Job, survey: RunoutSurvey) -> SurveyRunout:
 @lru_cache(maxsize=1024)
 def _read_survey(ground: Ground, survey: RunoutSurvey) -> SurveyRunout:
     job = ground.job
-    stations = tuple(read_station(job, survey, one) for one in survey.stations)
+    known = {one.key for one in job.plan.stations}
+    # What was read where this plan revision names no station stays in the record, unjudged.
+    stations = tuple(
+        read_station(job, survey, one) for one in survey.stations if one.station in known
+    )
     keys = [one.key for one in stations]
     in_axis = uncertainty = None
     journals = (job.plan.first_journal, job.plan.second_journal)

@@ -25,6 +25,7 @@ from models.job import (
     RunoutSurvey,
     Settled,
     Signature,
+    StationReadings,
 )
 from models.record.errors import HeadMovedError, RecordError
 from models.record.store import Store
@@ -388,3 +389,26 @@ def test_the_chain_is_whole_after_all_of_it(acts: Acts, tmp_path: Path) -> None:
 
     with Store.open(tmp_path) as store, store.reading() as session:
         assert verify(session).is_whole
+
+
+def test_a_survey_of_a_station_that_the_plan_does_not_know_is_refused_by_name(acts: Acts) -> None:
+    survey = next(one for one in AHEAD if isinstance(one, RunoutSurvey))
+    strange = msgspec.structs.replace(
+        survey, id=new_id(), stations=(StationReadings(station="Z9", typed=("0",)),)
+    )
+    with pytest.raises(NotAllowedError, match="knows no station Z9") as refused:
+        acts.record(NUMBER, strange)
+    assert refused.value.name == "station-unknown"
+
+
+def test_a_station_that_the_plan_no_longer_names_is_left_unjudged(acts: Acts) -> None:
+    """Such a survey can come in with a reason, or stand there from an earlier revision."""
+    survey = next(one for one in AHEAD if isinstance(one, RunoutSurvey))
+    strange = msgspec.structs.replace(
+        survey,
+        id=new_id(),
+        stations=(*survey.stations, StationReadings(station="Z9", typed=("0",))),
+        out_of_order="read before the plan was revised",
+    )
+    acts.record(NUMBER, strange)
+    assert judged(acts).surveys[strange.id].station("Z9") is None
