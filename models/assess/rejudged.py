@@ -60,13 +60,14 @@ def rejudged(job: Job) -> Iterable[Rejudged]:
 
 
 def _facts(rule: Rule, stored: StoredVerdict, units: Any) -> Any:  # noqa: ANN401
-    lists = _lists(rule.facts)
+    lists, names = _lists(rule.facts), {one.name for one in dataclasses.fields(rule.facts)}
     given = {
         name: _listed(value) if name in lists else value
         for name, value in stored.inputs.items()
-        if name in {one.name for one in dataclasses.fields(rule.facts)}
+        if name in names
     }
-    return rule.facts(units=units, **given)
+    # Facts whose message shows no quantity need no units.
+    return rule.facts(**({"units": units} if "units" in names else {}), **given)
 
 
 def _listed(value: object) -> tuple[str, ...] | None:

@@ -12,6 +12,7 @@ import os
 import signal
 import sys
 import time
+import traceback
 from collections.abc import Callable
 from pathlib import Path
 from typing import Any
@@ -49,6 +50,10 @@ def make_shop(folder: Path) -> None:
 def bare(written: str) -> str:
     """The number of a written quantity."""
     return written.split()[0]
+
+
+# Fields of the Cool stage that hold no temperature of the rotor.
+_NO_TEMPERATURE = {"room", "instrument", "watched", "shown"}
 
 
 class Technician:
@@ -195,7 +200,7 @@ class Technician:
         if "room" in names:
             cooling = told.cooling[0]
             warmest = max(float(bare(one["temperature"])) for one in cooling["temperatures"])
-            warm = {name: f"{warmest:g}" for name in names - {"room", "instrument"}}
+            warm = {name: f"{warmest:g}" for name in names - _NO_TEMPERATURE}
             return {**warm, "room": bare(cooling["surroundings"])}
         if "value" in names:
             return {"value": bare(told.axial[-1]["value"])}
@@ -241,6 +246,9 @@ def main(folder: Path, moves: int) -> int:
         if child == 0:
             try:
                 work(folder, moves, ahead)
+            except BaseException:
+                # Nobody else would say it: the child ends here.
+                traceback.print_exc()
             finally:
                 os._exit(1)
         _, status = os.waitpid(child, 0)

@@ -39,7 +39,7 @@ def test_typing_a_number_s_name_opens_the_formula_behind_it(page, qtbot):
     assert told["formula"].startswith("p = Δ/d")
     assert "Shigley" in told["source"]
     assert "12.6: Brown in SI" in told["compared with"]
-    assert told["second path"] == "tests/second_paths/ring.py"
+    assert told["second path"].splitlines()[-1] == "tests/second_paths/ring.py"
     assert "the pressure is the one printed (tests/engineering/test_fits.py)" in told["tests"]
 
 
