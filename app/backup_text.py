@@ -5,11 +5,11 @@ from datetime import datetime
 from pathlib import Path
 
 from models.acts.backups import back_up, restore
-from models.record.backups import Contents, made_at
+from models.record.backups import Backup, Contents, made_at
 from models.record.restoring import Look, Lost, look_into
 from models.record.store import Store
 
-__all__ = ["backed_up", "local_time", "look_words", "looked_into", "put_back"]
+__all__ = ["backed_up", "counted", "local_time", "look_words", "looked_into", "put_back"]
 
 
 def local_time(written: str) -> str:
@@ -43,8 +43,21 @@ def backed_up(folder: Path, *, to: Path | None) -> str:
         size = backup.path.stat().st_size
     return (
         f"Backup written and compared with the record: {backup.path} "
-        f"({size / 1e6:.1f} MB, {len(backup.heads)} chains)."
+        f"({size / 1e6:.1f} MB, {len(backup.heads)} chains).{_files_words(backup)}"
     )
+
+
+def _files_words(backup: Backup) -> str:
+    words = f" {counted(backup.files, 'attached file')} beside it, each as attached."
+    if not backup.files_lacking:
+        return words if backup.files else ""
+    lack = counted(backup.files_lacking, "attached file")
+    return f"{words} {lack} not as attached beside the record: `thirdjournal verify` names each."
+
+
+def counted(number: int, what: str) -> str:
+    """Count things in words, as "1 backup", "3 backups"."""
+    return f"{number} {what}" if number == 1 else f"{number} {what}s"
 
 
 def looked_into(backup: Path, folder: Path) -> str:
@@ -56,6 +69,11 @@ def put_back(backup: Path, folder: Path) -> str:
     """Put the record of a folder back to a backup, and say what became of the present one."""
     done = restore(backup, folder, act_id=str(uuid.uuid4()))
     lines = [look_words(done.look), f"The record of {folder} now is what {backup.name} held."]
+    if done.files_back:
+        lines.append(f"{counted(done.files_back, 'attached file')} brought back.")
+    if done.files_lacking:
+        lack = counted(done.files_lacking, "attached file")
+        lines.append(f"{lack} lie neither here nor beside the backup as attached.")
     if done.set_aside is not None:
         lines.append(f"What stood there is kept as {done.set_aside}.")
     return "\n".join(lines)

@@ -3,6 +3,7 @@
 from dataclasses import dataclass
 from pathlib import Path
 
+from app.backup_text import counted
 from models.acts.carrying import look_at
 from models.job import Head
 from models.jobfile import JobFileError, chain_of
@@ -49,6 +50,11 @@ def verified(folder: Path, *, job: str | None, head: Head | None) -> Verified:
     lines.append(f"{found.acts} acts: the record {'does not hold' if lines else whole}.")
     lines += [one.words for one in found.files_not_here]
     lines += beside.notices
+    if beside.backups:
+        lines.append(
+            f"Compared with {counted(beside.backups, 'backup')}; beside them "
+            f"{counted(beside.files, 'attached file')} whole."
+        )
     lines += [
         f"  {name}: {one.sequence} {one.digest[:16]}…" for name, one in sorted(found.heads.items())
     ]

@@ -8,6 +8,7 @@ from sqlalchemy.orm import Session
 
 from models.job import Head
 from models.record import tables
+from models.record.backup_files import lacking
 from models.record.backups import Contents, backups_in, contents_of, links_held
 from models.record.chain_check import Trouble
 from models.record.errors import RecordError
@@ -18,11 +19,15 @@ __all__ = ["Compared", "compared_with_backups"]
 
 @dataclass(frozen=True, kw_only=True)
 class Compared:
-    """What the backups of some folders say: what does not hold, and what is only to be known."""
+    """What the backups of some folders say: what does not hold, and what is only to be known.
+
+    `files` counts the attached files beside them that are whole, each once in a folder.
+    """
 
     troubles: tuple[Trouble, ...]
     notices: tuple[str, ...]
     backups: int
+    files: int = 0
 
 
 def compared_with_backups(session: Session, folders: tuple[Path, ...]) -> Compared:
@@ -34,6 +39,7 @@ def compared_with_backups(session: Session, folders: tuple[Path, ...]) -> Compar
     notices: list[str] = []
     count = 0
     restored = _restorations(session)
+    named: dict[Path, dict[str, str]] = {folder: {} for folder in folders}
     for path in (path for folder in folders for path in backups_in(folder)):
         try:
             contents = contents_of(path)
@@ -41,6 +47,7 @@ def compared_with_backups(session: Session, folders: tuple[Path, ...]) -> Compar
             notices.append(f"backup {path.name} is of no use: {trouble}")
             continue
         count += 1
+        named[path.parent].update(contents.files)
         told = _missing(session, contents)
         # A restoring that the backup itself holds came before it, and explains nothing.
         later = [one for one in restored if not links_held(path, {one.chain: one.link})[one.chain]]
@@ -52,7 +59,16 @@ def compared_with_backups(session: Session, folders: tuple[Path, ...]) -> Compar
             )
         else:
             troubles += told
-    return Compared(troubles=tuple(troubles), notices=tuple(notices), backups=count)
+    whole = 0
+    for folder, files in named.items():
+        missing = lacking(files, folder)
+        whole += len(files) - len(missing)
+        notices += [
+            f"the attached file “{files[digest]}” is missing or changed beside the backups in "
+            f"{folder}; the next backup puts it there if the record still has it"
+            for digest in missing
+        ]
+    return Compared(troubles=tuple(troubles), notices=tuple(notices), backups=count, files=whole)
 
 
 @dataclass(frozen=True, kw_only=True)

@@ -16,6 +16,7 @@ from pathlib import Path
 from sqlalchemy.orm import Session
 
 from models.job import Head
+from models.record.backup_files import bring, files_named, lacking
 from models.record.errors import NewerRecordError, NotARecordError, RecordError, TornRecordError
 from models.record.heads_seen import all_heads
 from models.record.making import free_place, make_empty, put_in_place
@@ -63,11 +64,17 @@ class BackupError(RecordError):
 
 @dataclass(frozen=True, kw_only=True)
 class Backup:
-    """A backup that was written and verified; heads by the id of their chain."""
+    """A backup that was written and verified; heads by the id of their chain.
+
+    `files` says how many attached files lie beside it, each looked at by its digest, and
+    `files_lacking` how many could not, since they are not as attached beside the record either.
+    """
 
     path: Path
     made_at: datetime
     heads: dict[str, Head]
+    files: int = 0
+    files_lacking: int = 0
 
 
 @dataclass(frozen=True, kw_only=True)
@@ -75,7 +82,7 @@ class Contents:
     """What a copy of the record holds.
 
     Heads and the time of each chain's last act by the id of the chain; names likewise: the number
-    of the job, or nothing for the shop's own.
+    of the job, or nothing for the shop's own. The names of attached files by their digest.
     """
 
     path: Path
@@ -83,6 +90,7 @@ class Contents:
     heads: dict[str, Head]
     names: dict[str, str]
     last_at: dict[str, str]
+    files: dict[str, str]
 
     @property
     def shop(self) -> str:
@@ -136,6 +144,9 @@ def write_backup(store: Store, folder: Path) -> Backup:
         found = contents_of(draft, whole=True)
         if found.heads != heads:
             raise BackupError(folder, "the copy does not end where the record does")
+        # Before the backup has its name: one that stands there has its files beside it.
+        bring(found.files, source=store.path.parent, target=folder)
+        missing = len(lacking(found.files, folder))
         path = _free(folder, now)
         put_in_place(draft, path)
     except BackupError:
@@ -145,7 +156,13 @@ def write_backup(store: Store, folder: Path) -> Backup:
     finally:
         with suppress(OSError):
             draft.unlink(missing_ok=True)
-    return Backup(path=path, made_at=now, heads=heads)
+    return Backup(
+        path=path,
+        made_at=now,
+        heads=heads,
+        files=len(found.files) - missing,
+        files_lacking=missing,
+    )
 
 
 def _reason(error: Exception, folder: Path) -> str:
@@ -227,12 +244,14 @@ def contents_of(path: Path, *, whole: bool = False, live: bool = False) -> Conte
             " (SELECT max(sequence) FROM act WHERE act.chain_id = chain.chain_id)"
             " LEFT JOIN job ON job.chain_id = chain.chain_id"
         ).fetchall()
+        files = files_named(connection)
     return Contents(
         path=path,
         form=form,
         heads={row[0]: Head(sequence=row[1], digest=row[2]) for row in rows},
         names={row[0]: row[4] for row in rows},
         last_at={row[0]: row[3] for row in rows},
+        files=files,
     )
 
 
@@ -284,12 +303,14 @@ def copy_backup(backup: Path, folder: Path) -> Path:
     try:
         if not folder.is_dir():
             raise BackupError(folder, "the folder is not there")
+        held = contents_of(backup)
+        bring(held.files, source=backup.parent, target=folder)
         if place.exists():
             return place
         make_empty(draft)
         with opened_copy(backup) as source, closing(sqlite3.connect(draft)) as target:
             copy_whole(source, target)
-        if contents_of(draft, whole=True).heads != contents_of(backup).heads:
+        if contents_of(draft, whole=True).heads != held.heads:
             raise BackupError(folder, "the copy does not end where the backup does")
         put_in_place(draft, place)
     except BackupError:
@@ -299,7 +320,7 @@ def copy_backup(backup: Path, folder: Path) -> Path:
     finally:
         with suppress(OSError):
             draft.unlink(missing_ok=True)
-    keep_generations(folder, of=contents_of(backup).shop)
+    keep_generations(folder, of=held.shop)
     return place
 
 

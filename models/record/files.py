@@ -27,6 +27,7 @@ __all__ = [
     "FileTrouble",
     "digest_of_bytes",
     "file_troubles",
+    "is_whole",
     "keep_file",
     "read_file",
 ]
@@ -71,7 +72,7 @@ def keep_file(folder: Path, content: bytes) -> str:
     draft = beside / f".{digest}.new-{uuid.uuid4()}"
     try:
         beside.mkdir(mode=0o700, exist_ok=True)
-        if _is_whole(path, digest):
+        if is_whole(path, digest):
             return digest
         handle = os.open(draft, os.O_CREAT | os.O_EXCL | os.O_WRONLY, 0o600)
         with os.fdopen(handle, "wb") as stream:
@@ -135,11 +136,12 @@ def file_troubles(session: Session, folder: Path, chain_id: str) -> Iterator[Fil
             yield FileTrouble(row.key, words, never_came=True)
         elif not path.is_file():
             yield FileTrouble(row.key, f"{named} is missing")
-        elif not _is_whole(path, row.file_digest):
+        elif not is_whole(path, row.file_digest):
             yield FileTrouble(row.key, f"{named} is changed")
 
 
-def _is_whole(path: Path, digest: str) -> bool:
+def is_whole(path: Path, digest: str) -> bool:
+    """Whether a file can be read and has this digest."""
     found = hashlib.sha256()
     try:
         with path.open("rb") as stream:

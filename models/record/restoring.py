@@ -15,6 +15,7 @@ from pathlib import Path
 
 from models.record import journal
 from models.record.act import PROGRAM
+from models.record.backup_files import bring, lacking
 from models.record.backups import (
     Contents,
     contents_of,
@@ -78,10 +79,16 @@ class Look:
 
 @dataclass(frozen=True, kw_only=True)
 class Restored:
-    """The record was put back."""
+    """The record was put back.
+
+    `files_back` counts the attached files brought back, `files_lacking` those that lie neither
+    beside the record nor beside the backup as they were attached.
+    """
 
     look: Look
     set_aside: Path | None
+    files_back: int = 0
+    files_lacking: int = 0
 
 
 def look_into(backup: Path, folder: Path) -> Look:
@@ -156,6 +163,8 @@ def put_back(backup: Path, folder: Path, *, act_id: str, now: Callable[[], str])
     try:
         with sentences(path):
             work.mkdir()
+            # First the files, then the record that names them: as at attaching.
+            back = bring(look.backup.files, source=backup.parent, target=folder)
             draft = _prepared(backup, work, look, aside=aside, act_id=act_id, now=now())
             if aside is not None:
                 _set_aside(path, aside, readable=not look.unreadable)
@@ -166,7 +175,12 @@ def put_back(backup: Path, folder: Path, *, act_id: str, now: Callable[[], str])
     finally:
         with suppress(OSError):
             shutil.rmtree(work)
-    return Restored(look=look, set_aside=aside)
+    return Restored(
+        look=look,
+        set_aside=aside,
+        files_back=len(back),
+        files_lacking=len(lacking(look.backup.files, folder)),
+    )
 
 
 def _is_done(path: Path, act_id: str) -> bool:
