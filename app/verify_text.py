@@ -49,7 +49,7 @@ def verified(folder: Path, *, job: str | None, head: Head | None) -> Verified:
     whole = "holds: every link agrees with its rows"
     lines.append(f"{found.acts} acts: the record {'does not hold' if lines else whole}.")
     lines += [one.words for one in found.files_not_here]
-    lines += beside.notices
+    lines += (*beside.notices, *beside.lacking)
     if beside.backups:
         lines.append(
             f"Compared with {counted(beside.backups, 'backup')}; beside them "

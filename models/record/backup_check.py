@@ -21,13 +21,15 @@ __all__ = ["Compared", "compared_with_backups"]
 class Compared:
     """What the backups of some folders say: what does not hold, and what is only to be known.
 
-    `files` counts the attached files beside them that are whole, each once in a folder.
+    `files` counts the attached files beside them that are whole, each once in a folder; `lacking` says
+    which are not.
     """
 
     troubles: tuple[Trouble, ...]
     notices: tuple[str, ...]
     backups: int
     files: int = 0
+    lacking: tuple[str, ...] = ()
 
 
 def compared_with_backups(session: Session, folders: tuple[Path, ...]) -> Compared:
@@ -60,15 +62,22 @@ def compared_with_backups(session: Session, folders: tuple[Path, ...]) -> Compar
         else:
             troubles += told
     whole = 0
+    lacks: list[str] = []
     for folder, files in named.items():
         missing = lacking(files, folder)
         whole += len(files) - len(missing)
-        notices += [
+        lacks += [
             f"the attached file “{files[digest]}” is missing or changed beside the backups in "
             f"{folder}; the next backup puts it there if the record still has it"
             for digest in missing
         ]
-    return Compared(troubles=tuple(troubles), notices=tuple(notices), backups=count, files=whole)
+    return Compared(
+        troubles=tuple(troubles),
+        notices=tuple(notices),
+        backups=count,
+        files=whole,
+        lacking=tuple(lacks),
+    )
 
 
 @dataclass(frozen=True, kw_only=True)
