@@ -21,8 +21,8 @@ __all__ = ["Compared", "compared_with_backups"]
 class Compared:
     """What the backups of some folders say: what does not hold, and what is only to be known.
 
-    `files` counts the attached files beside them that are whole, each once in a folder; `lacking` says
-    which are not.
+    `files` counts the attached files beside them that are whole, each once in a folder;
+    `lacking` says which are not.
     """
 
     troubles: tuple[Trouble, ...]
