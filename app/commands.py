@@ -214,7 +214,9 @@ def _verify(given: argparse.Namespace) -> int:
     else:
         folder = given.record.parent if given.record.name == FILE_NAME else given.record
         _tell_network(folder)
-        found = _with_record(lambda: verified(folder, job=given.job, head=head))
+        found = _with_record(
+            lambda: verified(folder, job=given.job, head=head, progress=_say_progress)
+        )
     _say(found.words)
     return _WITHIN if found.is_whole else _NOT_WITHIN
 
@@ -259,6 +261,12 @@ def _restore(given: argparse.Namespace) -> int:
     act = looked_into if given.look else put_back
     _say(_with_record(lambda: act(given.backup, given.record)))
     return _WITHIN
+
+
+def _say_progress(done: int, of: int) -> None:
+    """Show a person at the screen how far a long verification is; Ctrl+C stops it."""
+    if of > 20 and done % 10 == 0 and sys.stderr.isatty():
+        print(f"\r{done} of {of} chains", end="", file=sys.stderr, flush=True)  # noqa: T201
 
 
 def _export(given: argparse.Namespace) -> int:

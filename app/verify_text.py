@@ -1,5 +1,6 @@
 """What `verify` says: whether the record holds, and what does not, in words."""
 
+from collections.abc import Callable
 from dataclasses import dataclass
 from pathlib import Path
 
@@ -39,10 +40,16 @@ def head_from(text: str) -> Head:
     return Head(sequence=int(sequence), digest=plain)
 
 
-def verified(folder: Path, *, job: str | None, head: Head | None) -> Verified:
+def verified(
+    folder: Path,
+    *,
+    job: str | None,
+    head: Head | None,
+    progress: Callable[[int, int], None] = lambda _done, _of: None,
+) -> Verified:
     """Recompute every link of a shop's record from its rows, and say what does not hold."""
     with Store.open(folder, create=False, on_network=True) as store, store.reading() as session:
-        found = verify(session, number=job, expected=head)
+        found = verify(session, number=job, expected=head, progress=progress)
         beside = compared_with_backups(session, (folder / FOLDER_NAME,))
     troubles = (*found.troubles, *found.file_troubles, *beside.troubles)
     lines = [trouble.words for trouble in troubles]

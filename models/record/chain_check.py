@@ -3,24 +3,20 @@
 from collections import defaultdict
 from collections.abc import Iterator
 from dataclasses import dataclass
-from typing import Any
 
-from sqlalchemy import select
 from sqlalchemy.exc import DBAPIError
 from sqlalchemy.orm import Session
 
 from models.job import Head
-from models.record import tables
 from models.record.canonical import (
     FIRST_PREVIOUS,
     UnfitValueError,
-    canonical_text,
     parse,
     short_digest,
 )
 from models.record.flat import Row
-from models.record.links import NamedRow, digest_of, filled
-from models.record.tables import recorded_tables, table
+from models.record.links import NamedRow, digest_of_texts, row_text
+from models.record.tables import recorded_tables
 
 __all__ = ["ChainCheck", "Trouble"]
 
@@ -51,14 +47,12 @@ class ChainCheck:
     def __init__(self, session: Session, chain_id: str, name: str) -> None:
         self._name = name
         self._unread: list[Trouble] = []
-        act = table(tables.Act)
-        asked = select(act).where(act.c.chain_id == chain_id).order_by(act.c.sequence)
-        self.acts = self._read(session, "act", asked)
+        acts = self._read(session, "act", chain_id)
+        self.acts = sorted(acts, key=lambda row: row["sequence"])
         rows: dict[int, list[NamedRow]] = defaultdict(list)
-        for each in recorded_tables():
-            asked = select(each).where(each.c.chain_id == chain_id)
-            for row in self._read(session, each.name, asked):
-                rows[row["sequence"]].append((each.name, row))
+        for each in self._with_rows(session, chain_id):
+            for row in self._read(session, each, chain_id):
+                rows[row["sequence"]].append((each, row))
         self._rows = {
             sequence: sorted(found, key=lambda one: one[1]["line"])
             for sequence, found in rows.items()
@@ -98,9 +92,26 @@ class ChainCheck:
                 "the chain was written anew: its digest is not the one that was kept",
             )
 
-    def _read(self, session: Session, name: str, asked: Any) -> list[Row]:  # noqa: ANN401
+    def _with_rows(self, session: Session, chain_id: str) -> list[str]:
+        """List the recorded tables that hold rows of the chain: most of them hold none."""
+        names = [each.name for each in recorded_tables()]
+        asked = " UNION ALL ".join(
+            f"SELECT '{name}' WHERE EXISTS (SELECT 1 FROM \"{name}\" WHERE chain_id = ?)"
+            for name in names
+        )
         try:
-            return [dict(row) for row in session.execute(asked).mappings()]
+            found = session.connection().exec_driver_sql(asked, (chain_id,) * len(names))
+            return [row[0] for row in found]
+        except DBAPIError:
+            return names
+
+    def _read(self, session: Session, name: str, chain_id: str) -> list[Row]:
+        try:
+            found = session.connection().exec_driver_sql(
+                f'SELECT * FROM "{name}" WHERE chain_id = ?', (chain_id,)
+            )
+            columns = list(found.keys())
+            return [dict(zip(columns, row, strict=True)) for row in found.fetchall()]
         except (DBAPIError, UnicodeDecodeError) as error:
             self._unread.append(self._trouble(None, name, "", f"cannot be read: {error}"))
             return []
@@ -134,11 +145,13 @@ class ChainCheck:
         except (UnfitValueError, ValueError, TypeError):
             yield self._trouble(sequence, "act", key, "its list of rows is changed")
             return
-        told = list(self._differing(sequence, found, listed))
+        # Written once, for the list of rows and for the link alike.
+        texts = [(name, _text(row)) for name, row in found]
+        told = list(self._differing(sequence, found, texts, listed))
         yield from told
         try:
-            digest = digest_of(act, found)
-        except (UnfitValueError, ValueError) as error:
+            digest = digest_of_texts(act, texts)
+        except (TypeError, ValueError) as error:
             digest = str(error)
         if digest != act["digest"] and not told:
             yield self._trouble(
@@ -146,15 +159,21 @@ class ChainCheck:
             )
 
     def _differing(
-        self, sequence: int, found: list[NamedRow], listed: dict[tuple[str, str], str]
+        self,
+        sequence: int,
+        found: list[NamedRow],
+        texts: list[tuple[str, str]],
+        listed: dict[tuple[str, str], str],
     ) -> Iterator[Trouble]:
-        there = {(name, row["key"]): row for name, row in found}
+        there = {
+            (name, row["key"]): text for (name, row), (_, text) in zip(found, texts, strict=True)
+        }
         for name, key in sorted(listed.keys() - there.keys()):
             yield self._trouble(sequence, name, key, "was removed, or is no longer in its act")
         for name, key in sorted(there.keys() - listed.keys()):
             yield self._trouble(sequence, name, key, "was added to an act that was closed")
-        for place, row in there.items():
-            if place in listed and _digest(row) != listed[place]:
+        for place, text in there.items():
+            if place in listed and _digest(text) != listed[place]:
                 yield self._trouble(sequence, *place, "is changed")
         kept = [place for place in there if place in listed]
         if kept != [place for place in listed if place in there]:
@@ -168,8 +187,16 @@ def _triples(text: str) -> list[tuple[str, str, str]]:
     return [(str(name), str(key), str(digest)) for name, key, digest in listed]
 
 
-def _digest(row: Row) -> str:
+def _text(row: Row) -> str:
     try:
-        return short_digest(canonical_text(filled(row)))
-    except UnfitValueError:
+        return row_text(row)
+    except (TypeError, ValueError):
+        # A cell of a kind that nothing recorded has: its text fits no digest.
+        return "no row of this program"
+
+
+def _digest(text: str) -> str:
+    try:
+        return short_digest(text)
+    except UnicodeEncodeError:
         return ""

@@ -5,7 +5,7 @@ itself. Only a head that somebody else kept (on a traveler, in a backup) shows i
 as `expected`.
 """
 
-from collections.abc import Iterator
+from collections.abc import Callable, Iterator
 from dataclasses import dataclass
 
 from sqlalchemy import select
@@ -47,7 +47,11 @@ class Verification:
 
 
 def verify(
-    session: Session, *, number: str | None = None, expected: Head | None = None
+    session: Session,
+    *,
+    number: str | None = None,
+    expected: Head | None = None,
+    progress: Callable[[int, int], None] = lambda _done, _of: None,
 ) -> Verification:
     """Recompute the links of one job, or of the whole record.
 
@@ -59,6 +63,8 @@ def verify(
         The job to look at, or `SHOP_NAME`; all jobs and the shop if absent.
     expected
         A head of that job which was kept elsewhere; the chain must contain it.
+    progress
+        Told before each chain how many are done, and of how many; what it raises ends the work.
 
     Raises
     ------
@@ -72,7 +78,8 @@ def verify(
     acts = 0
     chains = _chains(session, number)
     troubles += heads_seen_troubles(session, chains)
-    for chain_id, name in chains.items():
+    for done, (chain_id, name) in enumerate(chains.items()):
+        progress(done, len(chains))
         chain = ChainCheck(session, chain_id, name)
         troubles += chain.troubles()
         troubles += signature_troubles(session, chain_id, name)
