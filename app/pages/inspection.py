@@ -179,17 +179,21 @@ class InspectionPage(DeskPage):
         lines = QVBoxLayout(self._decision)
         lines.setContentsMargins(8, 8, 24, 12)
         lines.setSpacing(8)
-        lines.addWidget(Words("Decide about this finding", look=self.look, weight=Weight.SEMI_BOLD))
-        grid = QGridLayout()
-        grid.setSpacing(8)
+        self._deciding = Words(look=self.look, weight=Weight.SEMI_BOLD)
+        lines.addWidget(self._deciding)
+        self._ways = QWidget()
+        below = QVBoxLayout(self._ways)
+        below.setContentsMargins(0, 0, 0, 0)
+        below.setSpacing(8)
+        self._grid = QGridLayout()
+        self._grid.setSpacing(8)
         self._dispositions = {}
-        for place, word in enumerate(DISPOSITIONS):
-            key = desk_key(word, look=self.look)
+        for word in DISPOSITIONS:
+            key = desk_key(word, look=self.look, parent=self._ways)
             key.setCheckable(True)
             key.clicked.connect(lambda _checked=False, word=word: self._choose(word))
             self._dispositions[word] = key
-            grid.addWidget(key, place // 2, place % 2)
-        lines.addLayout(grid)
+        below.addLayout(self._grid)
         self._why = FlatLine(name="Why it is decided so", hint="Why", look=self.look)
         self._why.entered.connect(self._decide)
         last = QHBoxLayout()
@@ -198,7 +202,8 @@ class InspectionPage(DeskPage):
         decide = desk_key("Record the decision", look=self.look)
         decide.clicked.connect(self._decide)
         last.addWidget(decide)
-        lines.addLayout(last)
+        below.addLayout(last)
+        lines.addWidget(self._ways)
         column.addWidget(self._decision)
         return panel
 
@@ -206,9 +211,21 @@ class InspectionPage(DeskPage):
         self.reasons.set_rows(row.reasons if row is not None else ())
         words = "Choose a finding to see what it rests on."
         self._head.say(f"{row.phrase}: {row.where}" if row is not None else words)
-        self._decision.setVisible(row is not None and row.step is not None)
+        self._decision.setVisible(row is not None)
+        self._deciding.say(self._presenter.deciding_words(row) if row is not None else "")
+        self._offer(self._presenter.dispositions if row is not None and row.place else ())
         self._choose("")
         self._why.clear()
+
+    def _offer(self, words: tuple[str, ...]) -> None:
+        """Lay out the ways to decide that are open, and put the others away."""
+        self._ways.setVisible(bool(words))
+        for word, key in self._dispositions.items():
+            self._grid.removeWidget(key)
+            if word in words:
+                place = words.index(word)
+                self._grid.addWidget(key, place // 2, place % 2)
+            key.setVisible(word in words)
 
     def _choose(self, word: str) -> None:
         for disposition, key in self._dispositions.items():

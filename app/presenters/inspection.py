@@ -3,7 +3,7 @@
 from __future__ import annotations
 
 from datetime import date
-from typing import Literal, TypedDict, get_args
+from typing import TypedDict, get_args
 
 from PySide6.QtCore import QObject, Signal
 
@@ -29,16 +29,15 @@ from app.presenters.inspection_rows import (
 from app.presenters.shop import Said, ShopPresenter
 from app.presenters.worked_rows import WorkedRow, worked_rows
 from models.acts import new_id
+from models.acts.beside import dispositions_open_to
 from models.assess import Assessment
 from models.job import Decision, Place, Signature
+from models.job.plan import Disposition
 from models.rules.rule import Verdict
 from reports.job_pictures import verdict_kind
 
 __all__ = ["DISPOSITIONS", "InspectionPresenter"]
 
-Disposition = Literal[
-    "rework", "repair", "use as is under concession", "scrap", "read again", "accept reading"
-]
 DISPOSITIONS: tuple[str, ...] = get_args(Disposition)
 """How a finding may be decided."""
 
@@ -125,6 +124,36 @@ class InspectionPresenter(QObject):
         waiting.sort(key=lambda one: -one.finding.verdict.severity)
         return tuple(finding_row(view.job, one) for one in waiting)
 
+    @property
+    def dispositions(self) -> tuple[str, ...]:
+        """What who is signed in may decide; nothing where that role, or nobody, decides."""
+        person = self._shop.person
+        return dispositions_open_to(person.role) if person is not None else ()
+
+    def deciding_words(self, row: FindingRow) -> str:
+        """Say above the ways to decide a finding whose they are, or why there is none.
+
+        Parameters
+        ----------
+        row : FindingRow
+            The finding.
+
+        Returns
+        -------
+        str
+            A line.
+        """
+        person = self._shop.person
+        if row.place is None:
+            return "Going on with the build answers this finding, not a decision."
+        if person is None:
+            return "Nobody is signed in. Say who is at the window, at the upper right, to decide."
+        if not self.dispositions:
+            return f"{person.name} is signed in as {person.role}; an inspector or engineer decides."
+        if set(self.dispositions) != set(DISPOSITIONS):
+            return "Decide about this finding; the rotor engineer also repairs or concedes"
+        return "Decide about this finding"
+
     def decide(self, row: FindingRow, disposition: str, words: str) -> None:
         """Record a decision about a finding in the name of who is signed in.
 
@@ -142,10 +171,10 @@ class InspectionPresenter(QObject):
                 Said(what="A decision says why.", way_out="Type the reason first.")
             )
             return
-        if row.step is None:
+        if row.place is None:
             self._shop.said.emit(
                 Said(
-                    what="This finding is not about one attempt.",
+                    what="This finding is not decided.",
                     way_out="It is answered by going on with the build, not by a decision.",
                 )
             )
@@ -154,7 +183,7 @@ class InspectionPresenter(QObject):
         if chosen is None:
             self._shop.said.emit(Said(what="A decision names what is to be done."))
             return
-        common = self._common(row.step, row.attempt)
+        common = self._common(row.place)
         if common is None:
             return
         entry = Decision(**common, about=row.key, disposition=chosen, words=words.strip())
@@ -205,7 +234,7 @@ class InspectionPresenter(QObject):
             The signature that is waited for.
         """
         person = self._shop.person
-        common = self._common(row.step, row.attempt)
+        common = self._common(Place(kind="attempt", step=row.step, attempt=row.attempt))
         if common is None or person is None:
             return
         entry = Signature(**common, role=person.role, meaning=row.meaning, covers=row.what)
@@ -214,7 +243,7 @@ class InspectionPresenter(QObject):
             done=lambda _: self.recorded.emit(f"{person.name} has signed {row.where}."),
         )
 
-    def _common(self, step: str, attempt: int | None) -> _Common | None:
+    def _common(self, place: Place) -> _Common | None:
         job, person = self._shop.job, self._shop.person
         if job is None or person is None:
             self._shop.said.emit(
@@ -227,7 +256,7 @@ class InspectionPresenter(QObject):
         now = self._shop.acts.now()
         return {
             "id": new_id(),
-            "place": Place(kind="attempt", step=step, attempt=attempt),
+            "place": place,
             "by": person.key,
             "done_at": now,
             "entered_at": now,

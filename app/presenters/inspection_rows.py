@@ -10,7 +10,8 @@ from typing import Literal
 from app.presenters.reasons import Reason, reasons_of
 from app.presenters.wording import day_and_time, in_words, place_words
 from models.assess import Assessment, Attempt, Standing, finding_key
-from models.job import Entry, Instrument, Job, Role
+from models.job import Entry, Instrument, Job, Place, Role
+from models.rules.rule import Finding, Verdict
 from models.units import unit_set
 from reports.job_pictures import verdict_kind
 from reports.sheet.pictures import VerdictKind
@@ -44,7 +45,10 @@ _MEANING_OF: dict[str, Meaning] = {
 
 @dataclass(frozen=True, kw_only=True)
 class FindingRow:
-    """A finding that is not within its limits and that nothing has answered."""
+    """A finding that is not within its limits and that nothing has answered.
+
+    `place` is where a decision about it belongs; None where only going on with the work answers it.
+    """
 
     key: str
     kind: VerdictKind
@@ -55,6 +59,7 @@ class FindingRow:
     rule: str
     step: str | None = None
     attempt: int | None = None
+    place: Place | None = None
 
 
 @dataclass(frozen=True, kw_only=True)
@@ -124,7 +129,19 @@ def finding_row(job: Job, standing: Standing) -> FindingRow:
         rule=finding.rule.id,
         step=subject.step,
         attempt=subject.attempt,
+        place=_place_of_decision(job, finding),
     )
+
+
+def _place_of_decision(job: Job, finding: Finding) -> Place | None:
+    subject = finding.subject
+    if subject.step is not None:
+        return Place(kind="attempt", step=subject.step, attempt=subject.attempt)
+    # What still lacks an input of the whole build, or a paper, comes by the work and not by a word.
+    if finding.verdict is Verdict.NOT_JUDGED or finding.rule.id == "record-complete":
+        return None
+    entry = next((one for one in job.entries if one.id == subject.entry), None)
+    return Place(kind="final") if entry is None else entry.place
 
 
 def attempt_title(view: Assessment, attempt: Attempt) -> str:

@@ -1,5 +1,7 @@
 """Who may tell what beside the mounting, and what stops a signature."""
 
+from typing import get_args
+
 from models.assess import Assessment
 from models.assess.attempts.on_people import instrument_finding
 from models.assess.attempts.view import finding_key
@@ -15,17 +17,28 @@ from models.job import (
     Signature,
     VisualFinding,
 )
+from models.job.plan import Disposition, Role
 from models.rules.progress import Permission
 from models.rules.record import MAY_CONCEDE
 from models.rules.rule import Subject, Verdict
 
-__all__ = ["NO_WORK", "beside_permission"]
+__all__ = ["MAY_DECIDE", "NO_WORK", "beside_permission", "dispositions_open_to"]
 
 # What an inspector may record of a step and still inspect it.
 NO_WORK = (Attachment, Decision, PointEvent, Signature, VisualFinding)
 
+MAY_DECIDE = ("inspector", "engineer")
+"""Roles that may decide a finding at all."""
 _CONCEDING = ("repair", "use as is under concession")
 _YES = Permission(True)
+
+
+def dispositions_open_to(role: Role) -> tuple[Disposition, ...]:
+    """List what somebody of a role may decide about a finding; nothing for who decides none."""
+    if role not in MAY_DECIDE:
+        return ()
+    every: tuple[Disposition, ...] = get_args(Disposition)
+    return tuple(one for one in every if one not in _CONCEDING or role in MAY_CONCEDE)
 
 
 def beside_permission(view: Assessment, entry: AnyEntry, person: Person) -> Permission:
@@ -98,7 +111,7 @@ def _outside(view: Assessment, entry: OutsideOperation) -> Permission:
 
 
 def _decision(entry: Decision, person: Person) -> Permission:
-    if entry.disposition in _CONCEDING and person.role not in MAY_CONCEDE:
+    if entry.disposition not in dispositions_open_to(person.role):
         return _no(
             "role-may-not-concede",
             f"{person.name} is {person.role}; “{entry.disposition}” is decided by the rotor "

@@ -1,6 +1,6 @@
 """Whether an entry may be made now: by its person's role, then by the order of the work."""
 
-from models.acts.beside import NO_WORK, beside_permission
+from models.acts.beside import MAY_DECIDE, NO_WORK, beside_permission
 from models.assess import Assessment
 from models.job import (
     AnyEntry,
@@ -153,7 +153,7 @@ def _role_permission(view: Assessment, entry: AnyEntry) -> Permission:
     person = next((one for one in view.job.people if one.key == entry.by), None)
     if person is None:
         return _refuse("person-unknown", f"Nobody in this job has the key “{entry.by}”.")
-    if isinstance(entry, Decision) and person.role not in ("inspector", "engineer"):
+    if isinstance(entry, Decision) and person.role not in MAY_DECIDE:
         return _refuse(
             "role-may-not-decide", f"{person.name} is {_a(person.role)}; an inspector decides."
         )

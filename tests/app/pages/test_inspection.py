@@ -74,11 +74,25 @@ def test_a_disposition_and_a_reason_decide_a_finding(doubtful, shop, qtbot):
 
 
 def test_only_one_disposition_is_pressed_at_a_time(doubtful, qtbot):
-    for word in ("scrap", "repair"):
+    for word in ("scrap", "rework"):
         qtbot.mouseClick(named(doubtful, word), Qt.MouseButton.LeftButton)
 
-    assert named(doubtful, "repair").isChecked()
+    assert named(doubtful, "rework").isChecked()
     assert not named(doubtful, "scrap").isChecked()
+
+
+@pytest.mark.parametrize(
+    ("person", "conceding", "reading_again"),
+    [("BQ", False, True), ("DO", True, True), ("AT", False, False)],
+)
+def test_the_ways_follow_who_is_signed_in(doubtful, shop, person, conceding, reading_again):
+    shop.presenter.sign_in(person)
+    doubtful.findings.selectRow(0)
+
+    for word in ("repair", "use as is under concession"):
+        assert named(doubtful, word).isVisible() is conceding
+    assert named(doubtful, "read again").isVisible() is reading_again
+    assert named(doubtful, "Record the decision").isVisible() is reading_again
 
 
 def test_a_finding_about_the_whole_rotor_offers_no_decision(page):

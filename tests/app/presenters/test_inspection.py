@@ -3,10 +3,11 @@ from dataclasses import replace
 import msgspec
 import pytest
 
-from app.presenters.inspection import InspectionPresenter
+from app.presenters.inspection import DISPOSITIONS, InspectionPresenter
 from app.presenters.reasons import reasons_of
+from models.acts import new_id
 from models.assess import assess
-from models.job import Decision, Signature
+from models.job import Decision, Place, Signature, VisualFinding
 from models.units import unit_set
 from reports.sheet.pictures import VerdictKind
 from sample_data.load import compressor
@@ -120,7 +121,61 @@ def test_half_a_decision_is_not_recorded(inspection, shop, disposition, words, s
 def test_a_finding_about_the_whole_rotor_is_not_decided(inspection, shop):
     inspection.decide(inspection.findings[0], "accept reading", "Because.")
 
-    assert shop.said[-1].what == "This finding is not about one attempt."
+    assert shop.said[-1].what == "This finding is not decided."
+    assert inspection.deciding_words(inspection.findings[0]).startswith("Going on with the build")
+
+
+def test_a_finding_of_no_step_is_decided_where_it_belongs(inspection, shop):
+    seen = VisualFinding(
+        id=new_id(),
+        place=Place(kind="as received"),
+        by="BQ",
+        done_at=shop.acts.now(),
+        entered_at=shop.acts.now(),
+        plan=compressor().plan.revision,
+        subject="crate",
+        seen_at="lid",
+        words="stove in",
+        weight="does not conform",
+    )
+    shop.presenter.record(seen, done=lambda _: None)
+    shop.settle()
+    row = next(one for one in inspection.findings if one.rule == "seen-conforms")
+    assert row.step is None
+    inspection.decide(row, "accept reading", "The rotor was not touched.")
+    shop.settle()
+
+    entry = shop.acts.read(COMPRESSOR).entries[-1]
+    assert isinstance(entry, Decision)
+    assert (entry.about, entry.place) == (row.key, Place(kind="as received"))
+    assert "seen-conforms" not in [one.rule for one in inspection.findings]
+
+
+# The trade's way: whoever answers for the design lets a part stay that does not conform.
+@pytest.mark.parametrize(
+    ("person", "open_ways"),
+    [
+        ("BQ", {"rework", "scrap", "read again", "accept reading"}),
+        ("DO", set(DISPOSITIONS)),
+        ("AT", set()),
+        ("", set()),
+    ],
+)
+def test_only_what_a_role_may_decide_is_offered_and_the_acts_agree(
+    inspection, shop, person, open_ways
+):
+    shown(shop, without_decisions_and_removals(compressor()))
+    shop.presenter.sign_in(person)
+    assert set(inspection.dispositions) == open_ways
+
+    for way in DISPOSITIONS:
+        before = len(shop.acts.read(COMPRESSOR).entries)
+        shown(shop, without_decisions_and_removals(compressor()))
+        row = inspection.findings[0]
+        inspection.decide(row, way, "Because.")
+        shop.settle()
+        taken = len(shop.acts.read(COMPRESSOR).entries) - before
+        assert taken == (way in open_ways), way
 
 
 def test_nobody_signed_in_decides_nothing(inspection, shop):
