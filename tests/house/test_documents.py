@@ -5,7 +5,7 @@ from pathlib import Path
 
 import pytest
 
-from app.commands import _parser
+from app.commands.parsing import parser as parser_of
 
 ROOT = Path(__file__).resolve().parents[2]
 README = (ROOT / "README.md").read_text(encoding="utf-8")
@@ -42,7 +42,7 @@ def test_the_first_two_blocks_do_all_the_set_up() -> None:
 
 
 def test_every_command_of_the_readme_is_one_the_program_takes() -> None:
-    parser = _parser()
+    parser = parser_of()
     lines = re.findall(r"^thirdjournal ?(.*?)(?:  +.*)?$", README, flags=re.MULTILINE)
     assert len(lines) >= 5
     for line in lines:
